@@ -1,0 +1,68 @@
+// The folder of a study as the stages see it: files by relative path, read once, never followed out of the folder.
+// Every refusal is a sentence, since the user's disk is the user's input too.
+import { existsSync, readdirSync, readFileSync, realpathSync, statSync } from 'node:fs'
+import { dirname, isAbsolute, relative, resolve, sep } from 'node:path'
+import { fileURLToPath } from 'node:url'
+import type { ReadFile, World } from '../pipeline.ts'
+
+declare const programVersion: string
+
+const largestFile = 512 * 1024 * 1024 // bytes; a raw file above this is a mistake or an attack, and would not fit a dossier
+
+type Refusal = { readonly problem: string; readonly mend: string }
+
+/** The study file itself, named as the user typed it. */
+export function readStudyFile(path: string): ReadFile | Refusal {
+  const read = readBytes(resolve(path))
+  return 'problem' in read ? read : { path: path.split(/[\\/]/).at(-1) ?? path, bytes: read.bytes }
+}
+
+export function studyFolder(studyPath: string): World {
+  const folder = dirname(resolve(studyPath))
+  const shipped = fileURLToPath(new URL('../templates/', import.meta.url))
+  const templates = existsSync(shipped) ? readdirSync(shipped).filter((name) => name.endsWith('.md')).map((name) => name.slice(0, -3)).sort() : []
+  return {
+    program: { name: 'Assaywrit', version: programVersion },
+    templates,
+    template(name) {
+      return templates.includes(name) ? readFileSync(resolve(shipped, `${name}.md`)) : undefined
+    },
+    read(path) {
+      const absolute = resolve(folder, path)
+      if (isAbsolute(path)) return { problem: 'the path is absolute', mend: 'Write a path relative to the folder of the study' }
+      const read = readBytes(absolute)
+      if ('problem' in read) return read
+      const real = relative(realpathSync(folder), realpathSync(absolute))
+      const leaves = real.startsWith(`..${sep}`) || isAbsolute(real)
+      // An earlier record stands beside the study's own dossier, which may well be outside; only raw files and templates must be inside.
+      if (leaves && !path.endsWith('record.json')) return { problem: 'it lies outside the folder of the study', mend: 'Copy the file into the folder of the study' }
+      return { path, bytes: read.bytes }
+    },
+  }
+}
+
+function readBytes(absolute: string): { readonly bytes: Uint8Array } | Refusal {
+  try {
+    const about = statSync(absolute)
+    if (about.isDirectory()) return { problem: 'it is a folder, not a file', mend: 'Name a file in that folder' }
+    if (!about.isFile()) return { problem: 'it is no ordinary file', mend: 'Copy its content into an ordinary file' }
+    if (about.size > largestFile) return { problem: `it is larger than ${largestFile / 1024 / 1024} MiB`, mend: 'Split the file, or leave out what the study does not need' }
+    return { bytes: readFileSync(absolute) }
+  } catch (error) {
+    return refusal(error)
+  }
+}
+
+function refusal(error: unknown): Refusal {
+  const code = error instanceof Error && 'code' in error ? String(error.code) : ''
+  switch (code) {
+    case 'ENOENT': case 'ENOTDIR': return { problem: 'no such file', mend: 'Correct the path, or put the file there' }
+    case 'EACCES': case 'EPERM': return { problem: 'it may not be read', mend: 'Give yourself the right to read it' }
+    case 'ELOOP': return { problem: 'its links go in a circle', mend: 'Replace the link by the file' }
+    case 'EBUSY': return { problem: 'another program holds it', mend: 'Close it there and try again' }
+    case 'ENAMETOOLONG': return { problem: 'its name is too long', mend: 'Shorten the name' }
+    default:
+      if (error instanceof Error && code !== '') return { problem: `the system says ${code}`, mend: 'Mend the file and try again' }
+      throw error
+  }
+}

@@ -1,0 +1,94 @@
+// One section per block and, inside it, per measurand: what the characteristic presents, then its criteria with every decision, then
+// what could not be evaluated and why. Sections know no characteristic by name.
+import type { RecordedAssessment } from '../../assess/record.ts'
+import type { Finding, Verdict } from '../../assess/finding.ts'
+import { column, joined, paragraph, row, sentence, table, textOf } from '../build.ts'
+import type { Inline, ReportBlock } from '../document.ts'
+import { columnDecimals, count, degreesOfFreedom, printed } from '../numbers.ts'
+import { resultWords, unitWords } from '../verdict-rows.ts'
+import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
+
+export function assessmentSectionId(block: string, measurand: string): string {
+  return `section-${slug(block)}-${slug(measurand)}`
+}
+
+export function assessments(section: Section): readonly ReportBlock[] {
+  return section.record.study.blocks.flatMap((block): readonly ReportBlock[] => {
+    const own = section.record.assessments.filter((each) => each.block === block.id)
+    return [
+      { type: 'sectionHeading', id: `section-${slug(block.id)}`, depth: 1, children: textOf(blockTitle(section, block.id)) },
+      ...own.flatMap((assessment) => oneAssessment(section, assessment)),
+    ]
+  })
+}
+
+function oneAssessment(section: Section, assessment: RecordedAssessment): readonly ReportBlock[] {
+  const measurand = measurandOf(section, assessment.measurand)
+  const part = section.catalogue.find((each) => each.id === assessment.characteristic)
+  if (part === undefined) throw new Error(`the catalogue holds no ${assessment.characteristic}`)
+  const prefix = `${slug(assessment.block)}-${slug(assessment.measurand)}`
+  const findings = section.record.findings.filter((each) => each.block === assessment.block && each.measurand === assessment.measurand)
+  const verdicts = section.record.verdicts.filter((each) => each.block === assessment.block && each.measurand === assessment.measurand)
+  const told = assessment.detail === null ? [] : part.present({
+    title: part.title, block: assessment.block, measurand, prefix, detail: assessment.detail, findings, verdicts,
+    notEvaluable: assessment.notEvaluable, metrics: part.metrics, confidence: section.record.study.rules.confidence,
+  })
+  return [
+    { type: 'sectionHeading', id: assessmentSectionId(assessment.block, assessment.measurand), depth: 2, children: textOf(measurand.name) },
+    ...decisions(section, verdicts, prefix, measurand.unit),
+    ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
+    ...notEvaluable(section, assessment),
+    ...told,
+    ...findingsTable(section, findings, prefix, measurand.unit),
+  ]
+}
+
+function decisions(section: Section, verdicts: readonly Verdict[], prefix: string, levelUnit: string): readonly ReportBlock[] {
+  if (verdicts.length === 0) return [paragraph(textOf('The study states no criterion here; what follows is information only.'))]
+  return [table({
+    id: `${prefix}-decisions`, caption: 'Acceptance criteria and decisions',
+    columns: [column('Criterion', { align: 'text', rowHeader: true }), column('Limit', { align: 'text' }), column('Source of the limit', { align: 'text' }), column('Decided on', { align: 'text' }), column('Result', { align: 'text' }), column('Verdict', { align: 'text' })],
+    rows: verdicts.map((verdict) => row(
+      metricLabel(section, verdict.characteristic, verdict.metric), verdict.criterion, verdict.source ?? 'not stated', verdict.decideBy,
+      verdict.unrounded === undefined ? (verdict.because ?? '') : resultWords(verdict, section.findings.get(verdict.finding), levelUnit), { type: 'verdict', word: verdict.verdict },
+    )),
+  })]
+}
+
+function notEvaluable(section: Section, assessment: RecordedAssessment): readonly ReportBlock[] {
+  if (assessment.notEvaluable.length === 0) return []
+  const items = assessment.notEvaluable.map((each) => `${metricLabel(section, assessment.characteristic, each.metric)}${each.level === undefined ? '' : ` at ${each.level}`}${each.condition === undefined ? '' : ` (${each.condition})`}: ${each.because}`)
+  return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [{ type: 'text', value: item }] }] })) }]
+}
+
+/** Every finding with interval, n, df and method: the register from which everything above is told. */
+function findingsTable(section: Section, findings: readonly Finding[], prefix: string, levelUnit: string): readonly ReportBlock[] {
+  if (findings.length === 0) return []
+  return [table({
+    id: `${prefix}-findings`, caption: sentence`Findings with interval, number of values and method`,
+    columns: [
+      column('Finding', { align: 'text', rowHeader: true }), column('Value', { align: 'text' }), column('Interval', { align: 'text' }),
+      column('n'), column('df'), column('Method', { align: 'text' }),
+    ],
+    rows: findings.map((finding) => row(
+      [...textOf(metricLabel(section, finding.characteristic, finding.metric)), ...where(finding, levelUnit)],
+      [printed(finding.value), ...unitWords(finding.unit)],
+      finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}`,
+      finding.n === undefined ? '' : count(finding.n), finding.df === undefined ? '' : degreesOfFreedom(finding.df),
+      finding.interval === undefined ? finding.method : `${finding.method}; interval: ${finding.interval.method}`,
+    )),
+    notes: intervalNotes(findings),
+  })]
+}
+
+function where(finding: Finding, levelUnit: string): readonly Inline[] {
+  return joined([
+    finding.level === undefined ? [] : sentence`, ${printed(finding.level, { decimals: columnDecimals([finding.level], 3) })}${unitWords(levelUnit)}`,
+    finding.condition === undefined ? [] : textOf(`, ${finding.condition}`),
+  ], '')
+}
+
+function intervalNotes(findings: readonly Finding[]): readonly (readonly Inline[])[] {
+  const confidences = [...new Set(findings.flatMap((finding) => finding.interval?.confidence ?? []))].sort((left, right) => left - right)
+  return confidences.length === 0 ? [] : [[...textOf('Intervals are two-sided at a confidence of '), ...joined(confidences.map((each): readonly Inline[] => [{ type: 'number', value: each, text: String(Number((each * 100).toPrecision(6))) }, ...unitWords('%')]), ' or '), ...textOf('.')]]
+}
