@@ -1,0 +1,91 @@
+// Spikes and blanks → method detection limit of 40 CFR 136, Appendix B, revision 2: the larger of a limit from spikes and one from blanks.
+// A blank that was not detected is no zero, a negative blank stays negative, and Student's t is one-sided at 99 % with n - 1.
+import type { FindingDraft, NotEvaluable } from '../../assess/finding.ts'
+import { evidenceOf } from '../../assess/measurements.ts'
+import { diagnostic } from '../../diagnostics/diagnostic.ts'
+import { mean, standardDeviation, standardDeviationInterval } from '../../statistics/describe.ts'
+import { mdl as methodDetectionLimit } from '../../statistics/detection.ts'
+import { studentQuantile } from '../../statistics/distributions.ts'
+import type { MdlDetail } from './detail.ts'
+import { mdlChecks, mdlSchedule } from './mdl-design.ts'
+import { limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
+
+export interface MdlOutcome extends Outcome {
+  readonly mdl?: MdlDetail | undefined
+}
+
+const about = { definition: 'MDL', method: 'larger of t × s of spikes (one-sided 99 %, n - 1) and the limit from method blanks', source: '40 CFR 136, Appendix B, revision 2' } as const
+const leastOfEach = 7
+
+export function mdlLimits(setting: Setting): MdlOutcome {
+  const { spikes, blanks, options } = setting
+  if (spikes === undefined || blanks === undefined) return nothing(setting, `dataset ${spikes === undefined ? options.spikes : options.blanks} gave no values`)
+  const spiked = spikes.concentrations
+  const numericBlanks = blanks.concentrations
+  if (spiked === undefined || numericBlanks === undefined) return nothing(setting, setting.calibration.because ?? 'spikes or blanks are responses, and no calibration turns them into concentrations')
+  const unidentified = spikes.measurements.censored
+  if (unidentified.length > 0) return nothing(setting, `${unidentified.length} spikes hold no number (${unidentified[0]?.cell.text ?? ''}): the procedure asks for a higher spike`)
+  if (spiked.some((value) => value <= 0)) return nothing(setting, 'a spike result is zero or negative: the procedure asks for a higher spike')
+  if (spiked.length < 2) return nothing(setting, `${spiked.length} spikes are too few for a standard deviation`)
+  const blankCount = numericBlanks.length + blanks.measurements.censored.length
+  const s = standardDeviation(spiked)
+  if (s === 0) return nothing(setting, 'the spikes have no scatter')
+  const limits = methodDetectionLimit({ spikes: spiked, blanks: [...numericBlanks, ...blanks.measurements.censored.map(() => undefined)] })
+  const short = shortage(spiked.length, blankCount)
+  const levels = [...new Set(spikes.measurements.values.flatMap((each) => each.level ?? []))].sort((left, right) => left - right)
+  const detail: MdlDetail = {
+    spikes: { n: spiked.length, mean: mean(spiked), standardDeviation: s, studentQuantile: studentQuantile(0.99, spiked.length - 1), mdl: limits.spikesMdl, levels },
+    blanks: {
+      n: blankCount, numeric: numericBlanks.length, rule: limits.rule, ...(limits.blanksMdl === undefined ? {} : { mdl: limits.blanksMdl }),
+      ...(numericBlanks.length < 2 ? {} : { mean: mean(numericBlanks), standardDeviation: standardDeviation(numericBlanks) }),
+      ...(limits.rule === 'mean plus t s' ? { studentQuantile: studentQuantile(0.99, numericBlanks.length - 1) } : {}),
+    },
+    ...(short === undefined ? { mdl: limits.mdl } : {}),
+    ...(levels[0] === undefined ? {} : { spikeRatio: { lowest: levels[0] / limits.mdl, highest: (levels.at(-1) ?? levels[0]) / limits.mdl } }),
+    checks: mdlChecks(spikes, blanks, levels, limits.mdl), schedule: mdlSchedule(spikes, blanks),
+  }
+  warnOfDesign(setting, detail)
+  const evidence = [...evidenceOf(spikes.measurements), ...evidenceOf(blanks.measurements, [...blanks.measurements.values, ...blanks.measurements.censored])]
+  const parts = partFindings(setting, detail, evidence)
+  if (short !== undefined) return { ...nothing(setting, short), findings: parts, mdl: detail }
+  const whole: FindingDraft = { metric: 'method-detection-limit', value: limits.mdl, n: spiked.length, df: spiked.length - 1, method: about.method, source: about.source, evidence }
+  return {
+    ...limitsFound({ ...about, scatter: { kind: 'standard deviation of spikes', value: s, unit: 'measurand' }, detectionFactor: detail.spikes.studentQuantile, detectionLimit: limits.mdl, n: spiked.length, df: spiked.length - 1 }, evidence, [whole, ...parts]),
+    notEvaluable: limits.blanksMdl === undefined ? [{ metric: 'mdl-blanks', because: 'no method blank gave a numeric result' }] : [],
+    mdl: detail,
+  }
+}
+
+function partFindings(setting: Setting, detail: MdlDetail, evidence: Outcome['evidence']): readonly FindingDraft[] {
+  const { spikes, blanks } = detail
+  const [spikeEvidence, blankEvidence] = [evidence.slice(0, 1), evidence.slice(1)]
+  const spread = standardDeviationInterval(spikes.standardDeviation, spikes.n - 1, setting.input.confidence)
+  const fromSpikes: FindingDraft = {
+    metric: 'mdl-spikes', value: spikes.mdl, n: spikes.n, df: spikes.n - 1, method: 't × s of spikes, one-sided 99 %', source: about.source, evidence: spikeEvidence,
+    interval: { low: spikes.studentQuantile * spread.low, high: spikes.studentQuantile * spread.high, confidence: setting.input.confidence, method: 'chi-square interval of the standard deviation' },
+  }
+  if (blanks.mdl === undefined) return [fromSpikes]
+  return [fromSpikes, { metric: 'mdl-blanks', value: blanks.mdl, n: blanks.n, ...(blanks.rule === 'mean plus t s' ? { df: blanks.numeric - 1 } : {}), method: blanks.rule, source: about.source, evidence: blankEvidence }]
+}
+
+function shortage(spikes: number, blanks: number): string | undefined {
+  const short = [spikes < leastOfEach ? `${spikes} spikes` : '', blanks < leastOfEach ? `${blanks} blanks` : ''].filter((each) => each !== '')
+  return short.length === 0 ? undefined : `${short.join(' and ')} are too few: the procedure asks for at least seven of each`
+}
+
+function warnOfDesign(setting: Setting, detail: MdlDetail): void {
+  for (const check of detail.checks.filter((each) => each.met !== true && !each.rule.startsWith('number of'))) {
+    setting.notice(diagnostic('assess/design-gap', `MDL of \`${setting.input.measurand.id}\`: ${check.rule} ${check.met === undefined ? 'cannot be shown' : 'falls short'}`, {
+      place: setting.input.block.place, actual: check.found === undefined ? 'no such column mapped' : String(Number(check.found.toPrecision(4))), expected: check.needed,
+      mend: check.met === undefined ? 'Map the column that shows it' : 'Complete the design, or justify the deviation in the study',
+    }))
+  }
+}
+
+function nothing(setting: Setting, because: string): MdlOutcome {
+  setting.notice(diagnostic('assess/too-few-values', `No MDL for \`${setting.input.measurand.id}\`: ${because}`, {
+    place: setting.input.block.place, actual: because, expected: 'at least seven numeric spikes and seven method blanks', mend: 'Complete the data, or take `MDL` out of `by` for this measurand',
+  }))
+  const falls: readonly NotEvaluable[] = [{ metric: 'method-detection-limit', because }]
+  return nothingFound({ ...about, because }, falls)
+}
