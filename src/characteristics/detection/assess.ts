@@ -104,7 +104,7 @@ function reportedLimits(setting: Setting, computed: readonly Computed[], confirm
   const quantitation = options['govern-quantitation'] ?? detection
   const named = { ...(detection === undefined ? {} : { detection }), ...(quantitation === undefined ? {} : { quantitation }), named: options.govern !== undefined }
   const detected = detectionFinding(computed.find((each) => each.detail.definition === detection), detection)
-  const quantified = quantitation === confirmedLevel ? confirmedFinding(setting, confirmed) : quantitationFinding(setting, computed.find((each) => each.detail.definition === quantitation), quantitation, confirmed, tested)
+  const quantified = quantitation === confirmedLevel ? confirmedFinding(setting, computed.find((each) => each.detail.definition === detection), confirmed) : quantitationFinding(setting, computed.find((each) => each.detail.definition === quantitation), quantitation, confirmed, tested)
   const both = [detected, quantified]
   return {
     governing: named,
@@ -140,11 +140,17 @@ function quantitationFinding(setting: Setting, governs: Computed | undefined, na
 }
 
 /** The lowest level at which enough results were obtained; their recovery and scatter are judged by their own criteria. */
-function confirmedFinding({ options }: Setting, { confirmed, findings }: ConfirmationOutcome): FindingDraft | NotEvaluable {
+function confirmedFinding({ options, input, notice }: Setting, governs: Computed | undefined, { confirmed, findings }: ConfirmationOutcome): FindingDraft | NotEvaluable {
   const metric = 'quantitation-limit'
   const [level] = confirmed
   const results = findings.find((each) => each.level === level)
   if (level === undefined || results === undefined) return { metric, because: `no level of dataset ${options.confirmation ?? ''} is confirmed` }
+  const calculated = governs?.detail.quantitationLimit
+  if (calculated !== undefined && calculated > level) {
+    notice(diagnostic('assess/method-note', `The confirmed quantitation limit of \`${input.measurand.id}\` lies below the one computed by ${governs?.detail.definition ?? ''}`, {
+      place: input.block.place, actual: `${level} ${input.measurand.unit} confirmed, ${Number(calculated.toPrecision(4))} ${input.measurand.unit} computed`, expected: 'a confirmed level at or above the computed limit, or a reason', mend: 'Discuss the difference under `texts:`',
+    }))
+  }
   return { metric, value: level, n: results.n ?? 0, method: 'lowest level with confirming results', source: results.source, evidence: results.evidence }
 }
 
@@ -162,6 +168,6 @@ function designFound({ blanks, spikes, calibration }: Setting, mdl: MdlDetail | 
   const smallest = Math.min(...(confirmed.detail?.levels.map((each) => each.n) ?? []))
   return {
     ...(calibration.line === undefined ? {} : { levels: calibration.line.levels.length }), ...(blanks === undefined ? {} : { blanks: count(blanks) }), ...(spikes === undefined ? {} : { spikes: count(spikes) }),
-    ...(mdl === undefined ? {} : { batches: mdl.schedule.batches.length, dates: mdl.schedule.dates.length }), ...(Number.isFinite(smallest) ? { replicates: smallest } : {}),
+    ...(mdl === undefined ? {} : { batches: mdl.schedule.batches.filter((each) => each !== '').length, dates: mdl.schedule.dates.filter((each) => each !== '').length }), ...(Number.isFinite(smallest) ? { replicates: smallest } : {}),
   }
 }

@@ -16,6 +16,8 @@ export interface CalibrationLine {
   readonly measurements: Measurements
   readonly used: readonly Measurement[]
   readonly evidence: readonly Evidence[]
+  /** The points lie on a line but for the noise of binary arithmetic. */
+  readonly isExact: boolean
   /** All levels of the dataset, also those above `levels-up-to`. */
   readonly levels: readonly number[]
 }
@@ -66,7 +68,12 @@ export function calibrationLine(input: AssessInput<DetectionOptions>, notice: (f
       lowest: Math.min(...x), highest: Math.max(...x),
     },
   }
-  return { line: { detail, own, points: { x, y }, measurements, used, evidence, levels: [...new Set(measurements.values.map((each) => each.level ?? 0))] } }
+  return { line: { detail, own, points: { x, y }, measurements, used, evidence, isExact: isNoiseOfArithmetic(own.residualStandardDeviation, y), levels: [...new Set(measurements.values.map((each) => each.level ?? 0))] } }
+}
+
+/** Binary arithmetic leaves residuals of some 1e-16 of the values where points lie exactly on a line. */
+export function isNoiseOfArithmetic(scatter: number, values: readonly number[]): boolean {
+  return scatter <= 1e-13 * Math.max(...values.map(Math.abs))
 }
 
 /** Slope and intercept of the straight line that an earlier linearity block found on the same dataset. */

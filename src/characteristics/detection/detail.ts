@@ -1,5 +1,6 @@
 // What the detection assessment hands to its exhibits: every definition side by side, and the raw points each rests on. Plain data only.
 import type { FindingInterval } from '../../assess/finding.ts'
+import type { MethodDetectionLimit } from '../../statistics/detection.ts'
 import type { DefinitionName, QuantitationName } from './definitions.ts'
 
 export interface DetectionDetail {
@@ -76,8 +77,9 @@ export interface SeriesPoint {
 }
 
 export interface MdlDetail {
-  readonly spikes: { readonly n: number; readonly mean: number; readonly standardDeviation: number; readonly studentQuantile: number; readonly mdl: number; readonly levels: readonly number[] }
-  readonly blanks: { readonly n: number; readonly numeric: number; readonly mean?: number | undefined; readonly standardDeviation?: number | undefined; readonly studentQuantile?: number | undefined; readonly mdl?: number | undefined; readonly rule: string }
+  readonly spikes: MethodDetectionLimit['spikes'] & { readonly levels: readonly number[] }
+  /** Mean and standard deviation are those of the numeric blanks, also under the rules that do not use them. */
+  readonly blanks: MethodDetectionLimit['blanks']
   readonly mdl?: number | undefined
   /** Lowest spike level divided by the limit, and the highest. */
   readonly spikeRatio?: { readonly lowest: number; readonly highest: number } | undefined

@@ -4,8 +4,7 @@ import type { FindingDraft, NotEvaluable } from '../../assess/finding.ts'
 import { evidenceOf } from '../../assess/measurements.ts'
 import { diagnostic } from '../../diagnostics/diagnostic.ts'
 import { standardDeviation } from '../../statistics/describe.ts'
-import { currieCriticalValue, iso11843 } from '../../statistics/detection.ts'
-import { noncentralStudentDelta } from '../../statistics/noncentral-student.ts'
+import { currieCriticalValue, currieMinimumDetectable, iso11843 } from '../../statistics/detection.ts'
 import type { DefinitionDetail, DistributionDetail } from './detail.ts'
 import { blankProblem, limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
 import { blankFindings, netFactorOf } from './scatter-limits.ts'
@@ -26,7 +25,7 @@ export function criticalValue(setting: Setting): ErrorRateOutcome {
   const df = blanks.values.length - 1
   const netFactor = netFactorOf(setting)
   const critical = currieCriticalValue(concentration, df, options.alpha, netFactor)
-  const detectionLimit = noncentralStudentDelta(df, options.alpha, options.beta) * concentration * netFactor
+  const detectionLimit = currieMinimumDetectable(concentration, df, options.alpha, options.beta, netFactor)
   const slope = blanks.quantity === 'response' ? calibration.line?.detail.slope : undefined
   const evidence = [...evidenceOf(blanks.measurements), ...(slope === undefined ? [] : calibration.line?.evidence ?? [])]
   const detail: DefinitionDetail = {
@@ -43,7 +42,7 @@ export function isoLimits(setting: Setting): ErrorRateOutcome {
   const { line, because } = setting.calibration
   const { options } = setting
   if (line === undefined) return nothing(setting, iso, because ?? 'no calibration')
-  if (line.own.residualStandardDeviation === 0) return nothing(setting, iso, 'the calibration line has no scatter')
+  if (line.isExact) return nothing(setting, iso, 'the calibration line has no scatter')
   const limits = iso11843(line.points, options.replicates, options.alpha, options.beta)
   const scatter = line.own.residualStandardDeviation
   const slope = line.detail.own.slope

@@ -5,7 +5,6 @@ import { evidenceOf } from '../../assess/measurements.ts'
 import { diagnostic } from '../../diagnostics/diagnostic.ts'
 import { mean, standardDeviation, standardDeviationInterval } from '../../statistics/describe.ts'
 import { mdl as methodDetectionLimit } from '../../statistics/detection.ts'
-import { studentQuantile } from '../../statistics/distributions.ts'
 import type { MdlDetail } from './detail.ts'
 import { mdlChecks, mdlSchedule } from './mdl-design.ts'
 import { limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
@@ -28,30 +27,25 @@ export function mdlLimits(setting: Setting): MdlOutcome {
   if (spiked.some((value) => value <= 0)) return nothing(setting, 'a spike result is zero or negative: the procedure asks for a higher spike')
   if (spiked.length < 2) return nothing(setting, `${spiked.length} spikes are too few for a standard deviation`)
   const blankCount = numericBlanks.length + blanks.measurements.censored.length
-  const s = standardDeviation(spiked)
-  if (s === 0) return nothing(setting, 'the spikes have no scatter')
+  if (standardDeviation(spiked) === 0) return nothing(setting, 'the spikes have no scatter')
   const limits = methodDetectionLimit({ spikes: spiked, blanks: [...numericBlanks, ...blanks.measurements.censored.map(() => undefined)] })
   const short = shortage(spiked.length, blankCount)
   const levels = [...new Set(spikes.measurements.values.flatMap((each) => each.level ?? []))].sort((left, right) => left - right)
   const detail: MdlDetail = {
-    spikes: { n: spiked.length, mean: mean(spiked), standardDeviation: s, studentQuantile: studentQuantile(0.99, spiked.length - 1), mdl: limits.spikesMdl, levels },
-    blanks: {
-      n: blankCount, numeric: numericBlanks.length, rule: limits.rule, ...(limits.blanksMdl === undefined ? {} : { mdl: limits.blanksMdl }),
-      ...(numericBlanks.length < 2 ? {} : { mean: mean(numericBlanks), standardDeviation: standardDeviation(numericBlanks) }),
-      ...(limits.rule === 'mean plus t s' ? { studentQuantile: studentQuantile(0.99, numericBlanks.length - 1) } : {}),
-    },
-    ...(short === undefined ? { mdl: limits.mdl } : {}),
-    ...(levels[0] === undefined ? {} : { spikeRatio: { lowest: levels[0] / limits.mdl, highest: (levels.at(-1) ?? levels[0]) / limits.mdl } }),
-    checks: mdlChecks(spikes, blanks, levels, limits.mdl), schedule: mdlSchedule(spikes, blanks),
+    spikes: { ...limits.spikes, levels },
+    blanks: { ...limits.blanks, ...(numericBlanks.length < 2 ? {} : { mean: mean(numericBlanks), standardDeviation: standardDeviation(numericBlanks) }) },
+    ...(short === undefined ? { mdl: limits.limit } : {}),
+    ...(levels[0] === undefined ? {} : { spikeRatio: { lowest: levels[0] / limits.limit, highest: (levels.at(-1) ?? levels[0]) / limits.limit } }),
+    checks: mdlChecks(spikes, blanks, levels, limits.limit), schedule: mdlSchedule(spikes, blanks),
   }
   warnOfDesign(setting, detail)
   const evidence = [...evidenceOf(spikes.measurements), ...evidenceOf(blanks.measurements, [...blanks.measurements.values, ...blanks.measurements.censored])]
   const parts = partFindings(setting, detail, evidence)
   if (short !== undefined) return { ...nothing(setting, short), findings: parts, mdl: detail }
-  const whole: FindingDraft = { metric: 'method-detection-limit', value: limits.mdl, n: spiked.length, df: spiked.length - 1, method: about.method, source: about.source, evidence }
+  const whole: FindingDraft = { metric: 'method-detection-limit', value: limits.limit, n: spiked.length, df: spiked.length - 1, method: about.method, source: about.source, evidence }
   return {
-    ...limitsFound({ ...about, scatter: { kind: 'standard deviation of spikes', value: s, unit: 'measurand' }, detectionFactor: detail.spikes.studentQuantile, detectionLimit: limits.mdl, n: spiked.length, df: spiked.length - 1 }, evidence, [whole, ...parts]),
-    notEvaluable: limits.blanksMdl === undefined ? [{ metric: 'mdl-blanks', because: 'no method blank gave a numeric result' }] : [],
+    ...limitsFound({ ...about, scatter: { kind: 'standard deviation of spikes', value: limits.spikes.standardDeviation, unit: 'measurand' }, detectionFactor: limits.spikes.t, detectionLimit: limits.limit, n: spiked.length, df: spiked.length - 1 }, evidence, [whole, ...parts]),
+    notEvaluable: limits.blanks.limit === undefined ? [{ metric: 'mdl-blanks', because: 'no method blank gave a numeric result' }] : [],
     mdl: detail,
   }
 }
@@ -61,11 +55,11 @@ function partFindings(setting: Setting, detail: MdlDetail, evidence: Outcome['ev
   const [spikeEvidence, blankEvidence] = [evidence.slice(0, 1), evidence.slice(1)]
   const spread = standardDeviationInterval(spikes.standardDeviation, spikes.n - 1, setting.input.confidence)
   const fromSpikes: FindingDraft = {
-    metric: 'mdl-spikes', value: spikes.mdl, n: spikes.n, df: spikes.n - 1, method: 't × s of spikes, one-sided 99 %', source: about.source, evidence: spikeEvidence,
-    interval: { low: spikes.studentQuantile * spread.low, high: spikes.studentQuantile * spread.high, confidence: setting.input.confidence, method: 'chi-square interval of the standard deviation' },
+    metric: 'mdl-spikes', value: spikes.limit, n: spikes.n, df: spikes.n - 1, method: 't × s of spikes, one-sided 99 %', source: about.source, evidence: spikeEvidence,
+    interval: { low: spikes.t * spread.low, high: spikes.t * spread.high, confidence: setting.input.confidence, method: 'chi-square interval of the standard deviation' },
   }
-  if (blanks.mdl === undefined) return [fromSpikes]
-  return [fromSpikes, { metric: 'mdl-blanks', value: blanks.mdl, n: blanks.n, ...(blanks.rule === 'mean plus t s' ? { df: blanks.numeric - 1 } : {}), method: blanks.rule, source: about.source, evidence: blankEvidence }]
+  if (blanks.limit === undefined) return [fromSpikes]
+  return [fromSpikes, { metric: 'mdl-blanks', value: blanks.limit, n: blanks.n, ...(blanks.rule === 'mean plus t s' ? { df: blanks.numeric - 1 } : {}), method: blanks.rule, source: about.source, evidence: blankEvidence }]
 }
 
 function shortage(spikes: number, blanks: number): string | undefined {

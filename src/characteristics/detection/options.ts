@@ -80,6 +80,14 @@ function isConsistent(options: DetectionOptions, place: Place, reading: Reading)
     need('noise', options.noise !== undefined, 'the two ways to express noise differ several-fold')
     if (options.trace === undefined) need('trace', options.blanks !== undefined && options.spikes !== undefined, '`signal to noise` rests on a trace, or on both `blanks` and `spikes`')
   }
+  const windows = options.trace === undefined ? [] : [options.trace.peak, ...options.trace.baseline]
+  for (const each of windows.filter(({ from, to }) => from >= to)) {
+    problems.push({ message: `A window of \`${reading.path}.trace\` ends where it starts or before: ${each.from} to ${each.to}`, expected: '`from` before `to`', mend: 'Swap the two, or correct one' })
+  }
+  const [peak, ...baselines] = windows
+  for (const each of baselines.filter(({ from, to }) => peak !== undefined && from < peak.to && to > peak.from)) {
+    problems.push({ message: `A baseline window of \`${reading.path}.trace\` overlaps the peak: ${each.from} to ${each.to}`, expected: 'windows apart', mend: 'Move the baseline window off the peak' })
+  }
   const told = problems.filter((each, index) => problems.findIndex((other) => other.message === each.message) === index)
   for (const each of told) reading.report(diagnostic('definition/missing-key', each.message, { place, expected: each.expected, mend: each.mend }))
   return told.length === 0

@@ -154,14 +154,17 @@ function distributionFigures({ detail, measurand, prefix }: Detection): readonly
 function mdlExhibits({ measurand, prefix }: Detection, mdl: MdlDetail): readonly ReportBlock[] {
   const { spikes, blanks, schedule } = mdl
   const side = (value: number | undefined): Words => (value === undefined ? '' : printed(value))
-  const rules: Readonly<Record<string, string>> = { 'none numeric': 'no blank gave a number: blanks set no limit', 'highest blank': 'some blanks gave a number: the highest of them', 'mean plus t s': 'all blanks gave a number: mean (not below zero) plus t × s', '99th percentile': 'a hundred blanks or more: the value at the upper percentile' }
+  const rules: Readonly<Record<typeof blanks.rule, string>> = {
+    'no blank gives a number': 'no blank gives a number: blanks set no limit', 'highest blank': 'some blanks give a number: the highest of them',
+    'mean plus t s': 'all blanks give a number: mean (not below zero) plus t × s', '99th percentile': 'a hundred blanks or more: the value at the upper percentile',
+  }
   return [
     table({
       id: `${prefix}-mdl`, caption: `Method detection limit of ${measurand.name}`,
       columns: [column('From', { align: 'text', rowHeader: true }), column('n'), column('With a number'), column('Mean', { unit: measurand.unit }), column('s', { unit: measurand.unit }), column('t'), column('Limit', { unit: measurand.unit }), column('Rule', { align: 'text' })],
       rows: [
-        row('spikes', count(spikes.n), count(spikes.n), printed(spikes.mean), printed(spikes.standardDeviation), printed(spikes.studentQuantile), printed(spikes.mdl), 't × s'),
-        row('blanks', count(blanks.n), count(blanks.numeric), side(blanks.mean), side(blanks.standardDeviation), side(blanks.studentQuantile), side(blanks.mdl), rules[blanks.rule] ?? blanks.rule),
+        row('spikes', count(spikes.n), count(spikes.n), printed(spikes.mean), printed(spikes.standardDeviation), printed(spikes.t), printed(spikes.limit), 't × s'),
+        row('blanks', count(blanks.n), count(blanks.numeric), side(blanks.mean), side(blanks.standardDeviation), side(blanks.t), side(blanks.limit), rules[blanks.rule]),
         ...(mdl.mdl === undefined ? [] : [{ ...row('method detection limit', '', '', '', '', '', printed(mdl.mdl), 'the larger one'), tone: 'total' as const }]),
       ],
       notes: ['t is one-sided at the 99 % level with n - 1 degrees of freedom. A blank without a number counts as no zero.'],

@@ -53,6 +53,7 @@ export function blankScatter(setting: Setting): Outcome {
 export function calibrationScatter(setting: Setting, definition: 'calibration scatter' | 'intercept standard error'): Outcome {
   const { line, because } = setting.calibration
   if (line === undefined) return nothing(setting, definition, because ?? 'no calibration')
+  if (line.isExact) return nothing(setting, definition, 'the calibration line has no scatter', 'degenerate')
   const { own } = line.detail
   const value = definition === 'calibration scatter' ? own.residualStandardDeviation : own.interceptStandardError
   noteWideRange(setting, line)

@@ -6,6 +6,7 @@ import type { Observation } from '../../data/dataset.ts'
 import { diagnostic } from '../../diagnostics/diagnostic.ts'
 import { mean, standardDeviation } from '../../statistics/describe.ts'
 import { fitPolynomial } from '../../statistics/regression.ts'
+import { isNoiseOfArithmetic } from './calibration-line.ts'
 import type { DefinitionDetail, TraceDetail } from './detail.ts'
 import { blankProblem, limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
 
@@ -41,7 +42,8 @@ function fromTrace(setting: Setting, trace: NonNullable<Setting['options']['trac
   const height = apex.y - at(apex.x)
   const convention: Convention = setting.options.noise ?? 'peak-to-peak'
   const noise = convention === 'rms' ? line.residualStandardDeviation : Math.max(...line.residuals) - Math.min(...line.residuals)
-  if (noise === 0 || height <= 0) return nothing(setting, noise === 0 ? 'the baseline has no noise' : 'the peak window holds no peak above the baseline')
+  const noiseless = isNoiseOfArithmetic(noise, baseline.map((point) => point.y))
+  if (noiseless || height <= 0) return nothing(setting, noiseless ? 'the baseline has no noise' : 'the peak window holds no peak above the baseline')
   const ratio = (convention === 'rms' ? height : 2 * height) / noise
   const halfWidth = widthAtHalfHeight(peak.map((point) => ({ x: point.x, y: point.y - at(point.x) })), apex.x, height)
   const detail: TraceDetail = {
