@@ -3,6 +3,7 @@
 import type { AssessInput, AssessOutput } from '../../assess/assessment-part.ts'
 import type { FindingDraft, NotEvaluable } from '../../assess/finding.ts'
 import { diagnostic, type Diagnostic } from '../../diagnostics/diagnostic.ts'
+import { grubbs } from '../../statistics/outliers.ts'
 import { calibrationLine } from './calibration-line.ts'
 import { confirmation, type ConfirmationOutcome } from './confirmation.ts'
 import { confirmedLevel, type DefinitionName, detectionOnly, type QuantitationName } from './definitions.ts'
@@ -37,6 +38,7 @@ export function assessDetection(input: AssessInput<DetectionOptions>): AssessOut
   const blanks = readSeries(input, options.blanks, calibration.line)
   const spikes = readSeries(input, options.spikes, calibration.line)
   const setting: Setting = { input, options, calibration, blanks, spikes, notice }
+  flagOutliers(setting)
   const confirmed = confirmation(setting)
   const asked = [...new Set<DefinitionName>(options.by.flatMap((name): readonly DefinitionName[] => (name === 'calibration scatter' ? [name, 'intercept standard error'] : [name])))]
   const computed = asked.map((name) => compute(name, setting))
@@ -131,7 +133,7 @@ function quantitationFinding(setting: Setting, governs: Computed | undefined, na
   if (!inside && !confirmed.confirmed.some((level) => level <= limit)) {
     const because = `the computed value ${Number(limit.toPrecision(4))} ${setting.input.measurand.unit} lies ${tested === undefined || limit < tested.lowest ? 'below' : 'above'} every tested level and no results confirm it`
     setting.notice(diagnostic('assess/too-few-values', `The quantitation limit of \`${setting.input.measurand.id}\` is computed and not tested`, {
-      place: setting.input.block.place, actual: because, expected: `levels that reach it${tested === undefined ? '' : ` (tested: ${tested.lowest} to ${tested.highest} ${setting.input.measurand.unit})`}`,
+      place: setting.input.block.place, actual: because, expected: `levels that reach it${tested === undefined ? '' : ` (tested: ${[...new Set([tested.lowest, tested.highest])].join(' to ')} ${setting.input.measurand.unit})`}`,
       mend: `Measure at or near it (\`confirmation:\`), or write \`govern-quantitation: ${confirmedLevel}\``,
     }))
     return { metric, because }
@@ -161,6 +163,22 @@ function governingParts({ detail, evidence }: Computed): Pick<FindingDraft, 'met
 function withoutRepeats(findings: readonly FindingDraft[]): readonly FindingDraft[] {
   const same = (one: FindingDraft, other: FindingDraft): boolean => one.metric === other.metric && one.level === other.level && one.condition === other.condition
   return findings.filter((each, index) => findings.findIndex((other) => same(each, other)) === index)
+}
+
+/** A flag is a note: nothing is removed. */
+function flagOutliers({ input, blanks, spikes, notice }: Setting): void {
+  for (const series of [blanks, spikes]) {
+    const levels = [...new Set(series?.measurements.values.map((each) => each.level))]
+    for (const level of levels) {
+      const values = series?.values.filter((_, index) => series.measurements.values[index]?.level === level) ?? []
+      if (values.length < 3 || Math.max(...values) === Math.min(...values)) continue
+      const { G, index, critical05, critical01 } = grubbs(values)
+      if (G <= critical05) continue
+      notice(diagnostic('assess/outlier-flag', `Grubbs' test flags \`${values[index]}\` among ${values.length} values of \`${input.measurand.id}\` in dataset \`${series?.detail.dataset ?? ''}\``, {
+        place: input.block.place, actual: `G = ${Number(G.toPrecision(4))}`, expected: `at most ${Number((G > critical01 ? critical01 : critical05).toPrecision(4))} (two-sided, ${G > critical01 ? '1 %' : '5 %'})`, mend: 'Look for a cause; nothing is removed',
+      }))
+    }
+  }
 }
 
 function designFound({ blanks, spikes, calibration }: Setting, mdl: MdlDetail | undefined, confirmed: ConfirmationOutcome): Readonly<Record<string, number>> {

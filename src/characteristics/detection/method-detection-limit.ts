@@ -4,8 +4,8 @@ import type { FindingDraft, NotEvaluable } from '../../assess/finding.ts'
 import { evidenceOf } from '../../assess/measurements.ts'
 import { diagnostic } from '../../diagnostics/diagnostic.ts'
 import { mean, standardDeviation, standardDeviationInterval } from '../../statistics/describe.ts'
-import { mdl as methodDetectionLimit } from '../../statistics/detection.ts'
-import type { MdlDetail } from './detail.ts'
+import { mdl as methodDetectionLimit, type MethodDetectionLimit } from '../../statistics/detection.ts'
+import type { DefinitionDetail, MdlDetail } from './detail.ts'
 import { mdlChecks, mdlSchedule } from './mdl-design.ts'
 import { limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
 
@@ -42,9 +42,10 @@ export function mdlLimits(setting: Setting): MdlOutcome {
   const evidence = [...evidenceOf(spikes.measurements), ...evidenceOf(blanks.measurements, [...blanks.measurements.values, ...blanks.measurements.censored])]
   const parts = partFindings(setting, detail, evidence)
   if (short !== undefined) return { ...nothing(setting, short), findings: parts, mdl: detail }
-  const whole: FindingDraft = { metric: 'method-detection-limit', value: limits.limit, n: spiked.length, df: spiked.length - 1, method: about.method, source: about.source, evidence }
+  const governs = governingSide(limits)
+  const whole: FindingDraft = { metric: 'method-detection-limit', value: limits.limit, n: governs.n, ...(governs.df === undefined ? {} : { df: governs.df }), method: `${about.method}; here ${governs.from}`, source: about.source, evidence }
   return {
-    ...limitsFound({ ...about, scatter: { kind: 'standard deviation of spikes', value: limits.spikes.standardDeviation, unit: 'measurand' }, detectionFactor: limits.spikes.t, detectionLimit: limits.limit, n: spiked.length, df: spiked.length - 1 }, evidence, [whole, ...parts]),
+    ...limitsFound({ ...about, ...governs.detail, detectionLimit: limits.limit, n: governs.n, ...(governs.df === undefined ? {} : { df: governs.df }) }, evidence, [whole, ...parts]),
     notEvaluable: limits.blanks.limit === undefined ? [{ metric: 'mdl-blanks', because: 'no method blank gave a numeric result' }] : [],
     mdl: detail,
   }
@@ -62,16 +63,33 @@ function partFindings(setting: Setting, detail: MdlDetail, evidence: Outcome['ev
   return [fromSpikes, { metric: 'mdl-blanks', value: blanks.limit, n: blanks.n, ...(blanks.rule === 'mean plus t s' ? { df: blanks.numeric - 1 } : {}), method: blanks.rule, source: about.source, evidence: blankEvidence }]
 }
 
+/** Which of the two limits is the larger one, and the scatter it rests on. */
+function governingSide({ spikes, blanks, limit }: MethodDetectionLimit): { readonly from: string; readonly n: number; readonly df?: number; readonly detail: Pick<DefinitionDetail, 'scatter' | 'detectionFactor'> } {
+  if (limit === spikes.limit) {
+    return { from: 'from spikes', n: spikes.n, df: spikes.n - 1, detail: { scatter: { kind: 'standard deviation of spikes', value: spikes.standardDeviation, unit: 'measurand' }, detectionFactor: spikes.t } }
+  }
+  if (blanks.standardDeviation === undefined) return { from: `from blanks, ${blanks.rule}`, n: blanks.n, detail: {} }
+  return { from: `from blanks, ${blanks.rule}`, n: blanks.n, df: blanks.n - 1, detail: { scatter: { kind: 'standard deviation of blanks', value: blanks.standardDeviation, unit: 'measurand' } } }
+}
+
 function shortage(spikes: number, blanks: number): string | undefined {
   const short = [spikes < leastOfEach ? `${spikes} spikes` : '', blanks < leastOfEach ? `${blanks} blanks` : ''].filter((each) => each !== '')
   return short.length === 0 ? undefined : `${short.join(' and ')} are too few: the procedure asks for at least seven of each`
 }
 
-function warnOfDesign(setting: Setting, detail: MdlDetail): void {
-  for (const check of detail.checks.filter((each) => each.met !== true && !each.rule.startsWith('number of'))) {
-    setting.notice(diagnostic('assess/design-gap', `MDL of \`${setting.input.measurand.id}\`: ${check.rule} ${check.met === undefined ? 'cannot be shown' : 'falls short'}`, {
-      place: setting.input.block.place, actual: check.found === undefined ? 'no such column mapped' : String(Number(check.found.toPrecision(4))), expected: check.needed,
-      mend: check.met === undefined ? 'Map the column that shows it' : 'Complete the design, or justify the deviation in the study',
+function warnOfDesign(setting: Setting, { checks }: MdlDetail): void {
+  const { place } = setting.input.block
+  const missed = checks.filter((each) => each.met === false && !each.rule.startsWith('number of'))
+  const unshown = checks.filter((each) => each.met === undefined)
+  if (missed.length > 0) {
+    setting.notice(diagnostic('assess/design-gap', `The design behind the MDL of \`${setting.input.measurand.id}\` falls short`, {
+      place, actual: missed.map((each) => `${each.rule}: ${each.found === undefined ? 'none' : Number(each.found.toPrecision(3))}`).join('; '), expected: [...new Set(missed.map((each) => `${each.rule}: ${each.needed}`))].join('; '),
+      mend: 'Complete the design, or justify the deviation in the study',
+    }))
+  }
+  if (unshown.length > 0) {
+    setting.notice(diagnostic('assess/design-gap', `Part of the design behind the MDL of \`${setting.input.measurand.id}\` cannot be shown`, {
+      place, actual: `no column for: ${unshown.map((each) => each.rule).join(', ')}`, expected: 'columns for `batch`, `prepared`, `analysed`, and a `level` for spikes', mend: 'Map the columns that show it',
     }))
   }
 }

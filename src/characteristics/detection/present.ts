@@ -6,7 +6,7 @@ import { definitionsChart } from '../../present/charts/definitions-chart.ts'
 import { distributionsChart } from '../../present/charts/distributions-chart.ts'
 import { dotPlotChart } from '../../present/charts/dot-plot-chart.ts'
 import { traceChart } from '../../present/charts/trace-chart.ts'
-import type { ExhibitRow, Inline, ReportBlock } from '../../present/document.ts'
+import type { ExhibitRow, Inline, NumberNode, ReportBlock } from '../../present/document.ts'
 import { asTyped, columnDecimals, count, degreesOfFreedom, numberText, printed } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { DefinitionDetail, DetectionDetail, MdlDetail, SeriesDetail, SeriesPoint, TraceDetail } from './detail.ts'
@@ -35,7 +35,7 @@ function summary({ detail, measurand }: Detection): ReportBlock {
   return paragraph(
     reported.detection === undefined ? textOf('No detection limit can be reported.') : sentence`The detection limit is ${printed(reported.detection, three)} ${measurand.unit} by ${governing.detection ?? ''}, ${because}.`,
     reported.quantitation === undefined ? textOf('No quantitation limit can be reported.') : sentence`The quantitation limit is ${printed(reported.quantitation, three)} ${measurand.unit} by ${governing.quantitation ?? ''}.`,
-    untested && tested !== undefined ? sentence`It lies within the tested levels, ${printed(tested.lowest)} to ${printed(tested.highest)} ${measurand.unit}; no dataset of results at this limit was given to confirm it.` : [],
+    untested && tested !== undefined ? sentence`It lies within the tested levels, ${asTyped(tested.lowest)} to ${asTyped(tested.highest)} ${measurand.unit}; no dataset of results at this limit was given to confirm it.` : [],
     spread === undefined ? [] : sentence`The definitions give detection limits from ${printed(spread.lowest, three)} to ${printed(spread.highest, three)} ${measurand.unit}, a factor of ${printed(spread.ratio, { significant: 2 })} apart, because they multiply different measures of scatter.`,
   )
 }
@@ -56,12 +56,13 @@ function definitionExhibits(presented: Detection): readonly ReportBlock[] {
     ],
     rows: definitions.map((each) => definitionRow(presented, each)),
     notes: [
-      ...definitions.map((each) => `${each.definition}: ${each.method} (${each.source})${each.interval === undefined ? '' : `; interval: ${each.interval.method}`}.`),
+      ...definitions.map((each) => `${each.definition}: ${each.method} (${each.source}).`),
+      ...[...new Set(definitions.flatMap((each) => each.interval?.method ?? []))].map((method) => `Interval of the detection limit: ${method}.`),
       ...(definitions.some((each) => each.criticalValue !== undefined) ? [sentence`Risk of a false detection ${asTyped(settings.alpha)}, of a missed one ${asTyped(settings.beta)}; the other definitions state no risk.`] : []),
       ...netNote(detail),
     ],
   })
-  if (items.length === 0) return [exhibit]
+  if (items.length < 2) return [exhibit]
   return [exhibit, figure({
     id: `${prefix}-definitions-chart`, caption: `Lower limits of ${measurand.name} by each definition; filled marks govern`,
     alternative: `Limits in ${measurand.unit}. ${items.map((each) => `${each.label}, ${each.kind}: ${numberText(each.value, three)}${each.governing ? ', governing' : ''}`).join('; ')}.`,
@@ -80,8 +81,9 @@ function definitionRow({ detail, measurand }: Detection, each: DefinitionDetail)
 function netNote({ definitions, settings }: DetectionDetail): readonly Words[] {
   const factor = definitions.find((each) => each.netFactor !== undefined)?.netFactor
   if (factor === undefined) return []
-  const subtracted = settings.blankReplicates === undefined ? [] : sentence` and a mean of ${count(settings.blankReplicates)} blanks is subtracted`
-  return [joined([sentence`A result is the mean of ${count(settings.sampleReplicates)} measurements`, subtracted, sentence`, so the scatter of blanks is multiplied by ${printed(factor)}.`], '')]
+  const measured = settings.sampleReplicates === 1 ? textOf('A result is one measurement') : sentence`A result is the mean of ${count(settings.sampleReplicates)} measurements`
+  const subtracted = settings.blankReplicates === undefined ? [] : sentence`, from which a mean of ${count(settings.blankReplicates)} blanks is subtracted`
+  return [joined([measured, subtracted, sentence`: the scatter of blanks is multiplied by ${printed(factor)}.`], '')]
 }
 
 function lineExhibits({ detail, measurand, prefix }: Detection): readonly ReportBlock[] {
@@ -110,7 +112,7 @@ function seriesTable({ measurand, prefix }: Detection, series: SeriesDetail | un
   const read = quantity === 'response' && points.some((each) => each.concentration !== undefined)
   const decimals = columnDecimals([...points, ...excluded].flatMap((each) => each.concentration ?? []))
   const cells = (each: SeriesPoint): readonly Words[] => [
-    asTyped(each.value), ...(read ? [each.concentration === undefined ? '' : printed(each.concentration, { decimals })] : []), ...(levels ? [each.level === undefined ? '' : asTyped(each.level)] : []), ...fields.map((field) => each.factors[field] ?? ''),
+    short(each.value), ...(read ? [each.concentration === undefined ? '' : printed(each.concentration, { decimals })] : []), ...(levels ? [each.level === undefined ? '' : asTyped(each.level)] : []), ...fields.map((field) => each.factors[field] ?? ''),
   ]
   const gap: readonly Words[] = [...(read ? [''] : []), ...(levels ? [''] : [])]
   return [table({
@@ -135,10 +137,11 @@ function dotPlot(presented: Detection): readonly ReportBlock[] {
   if (dots.length === 0) return []
   const censored = groups.flatMap(([group, series]) => (series?.censored ?? []).flatMap((each) => (each.bound === undefined || each.direction === undefined ? [] : [{ group, bound: each.bound, direction: each.direction }])))
   const lines = limitLines(detail)
+  const shown = groups.flatMap(([name, series]) => (series?.concentrations === undefined ? [] : [[name, { concentrations: series.concentrations }] as const]))
   const silent = groups.reduce((sum, [, series]) => sum + (series?.censored.filter((each) => each.bound === undefined).length ?? 0), 0)
   return [figure({
-    id: `${prefix}-dots`, caption: `Blanks and spikes of ${measurand.name} with the lower limits${silent === 0 ? '' : '; values that were not detected have no place on the axis and stand in the table'}`,
-    alternative: `Single values in ${measurand.unit}. ${groups.flatMap(([name, series]) => (series?.concentrations === undefined ? [] : [`${name}: ${numberText(series.concentrations.lowest, three)} to ${numberText(series.concentrations.highest, three)}`])).join('; ')}. ${lines.map((line) => `${line.label}: ${numberText(line.value, three)}`).join('; ')}.`,
+    id: `${prefix}-dots`, caption: `${detail.spikes === undefined ? 'Blanks' : detail.blanks === undefined ? 'Spikes' : 'Blanks and spikes'} of ${measurand.name} with the lower limits${silent === 0 ? '' : '; values that were not detected have no place on the axis and stand in the table'}`,
+    alternative: `Single values in ${measurand.unit}. ${[...shown.map(([name, { concentrations }]) => `${name}: ${numberText(concentrations.lowest, three)} to ${numberText(concentrations.highest, three)}`), ...lines.map((line) => `${line.label}: ${numberText(line.value, three)}`)].join('; ')}.`,
     chart: dotPlotChart({ xTitle: axis(measurand), dots, censored, lines }),
   })]
 }
@@ -172,7 +175,7 @@ function mdlExhibits({ measurand, prefix }: Detection, mdl: MdlDetail): readonly
     table({
       id: `${prefix}-mdl-design`, caption: `Design of the method detection limit of ${measurand.name}`,
       columns: [column('Rule', { align: 'text', rowHeader: true }), column('Found'), column('Needed', { align: 'text' }), column('Met', { align: 'text' })],
-      rows: mdl.checks.map((check) => row(check.rule, check.found === undefined ? '' : printed(check.found, { significant: 3 }), check.needed, check.met === undefined ? 'cannot be shown' : check.met ? 'yes' : 'no')),
+      rows: mdl.checks.map((check) => row(check.rule, check.found === undefined ? '' : whole(check.found), check.needed, check.met === undefined ? 'cannot be shown' : check.met ? 'yes' : 'no')),
     }),
     table({
       id: `${prefix}-mdl-schedule`, caption: `Spikes + blanks by date (${schedule.dateField}) and batch`,
@@ -217,7 +220,7 @@ function confirmationTable({ detail, measurand, prefix, confidence }: Detection)
       column('Recovery', { unit: '%' }), column(`${asPercent(confidence)} interval of the recovery`, { unit: '%', align: 'text' }), column('Note', { align: 'text' }),
     ],
     rows: confirmation.levels.map((each) => row(
-      asTyped(each.level), joined(each.values.map((value) => [printed(value)]), '; '), count(each.n), number(each.mean), each.relativeStandardDeviation === undefined ? '' : printed(each.relativeStandardDeviation, { decimals: 1 }),
+      asTyped(each.level), joined(each.values.map((value) => [short(value)]), '; '), count(each.n), number(each.mean), each.relativeStandardDeviation === undefined ? '' : printed(each.relativeStandardDeviation, { decimals: 1 }),
       each.recovery === undefined ? '' : printed(each.recovery, { decimals: 1 }), interval(each.recoveryInterval), each.because === undefined ? '' : `not evaluable: ${each.because}`,
     )),
     notes: ['Recovery: mean result over the level, with the Student t interval of the mean. RSD: standard deviation over the mean.', ...(confirmation.excluded.length === 0 ? [] : [sentence`Excluded and not counted: ${joined(confirmation.excluded.map((each) => [asTyped(each.value)]), '; ')}.`])],
@@ -228,6 +231,16 @@ const three = { significant: 3 } as const
 
 function number(value: number | undefined): Words {
   return value === undefined ? '' : printed(value, three)
+}
+
+/** Counts plain, ratios with three digits. */
+function whole(value: number): Words {
+  return Number.isInteger(value) ? count(value) : printed(value, three)
+}
+
+/** As typed, unless a computation left many digits. */
+function short(value: number): NumberNode {
+  return String(value).length <= 9 ? asTyped(value) : printed(value)
 }
 
 function axis(measurand: Detection['measurand']): string {

@@ -135,7 +135,7 @@ function about(setting: Setting, definition: ScatterDefinition): { readonly meth
   const { convention } = setting.options
   const net = definition === 'blank scatter' && netFactorOf(setting) !== 1
   return {
-    method: `${convention === '3 s' ? '3' : '3.3'} × ${scatterKinds[definition]}${net ? ' × net factor' : ''}, over the slope; quantitation 10 ×`,
+    method: `${convention === '3 s' ? '3' : '3.3'} × ${scatterKinds[definition]}${net ? ' × net factor' : ''} / slope; quantitation 10 ×`,
     source: convention === '3 s' ? 'IUPAC convention of 3 s, quantitation 10 s' : 'ICH Q2(R2), standard deviation of the response and slope',
   }
 }
