@@ -1,6 +1,6 @@
 // What case folders cannot show of lower limits: options that contradict each other, order of rows, and data too poor for any answer.
 import { describe, expect, test } from 'vitest'
-import type { AssessInput, AssessOutput } from '../../src/assess/assessment-part.ts'
+import type { AssessInput, AssessOutput, PriorAssessment } from '../../src/assess/assessment-part.ts'
 import type { CensoredMeasurement, Measurement, Measurements } from '../../src/assess/measurements.ts'
 import { detection } from '../../src/characteristics/detection/index.ts'
 import type { DetectionDetail } from '../../src/characteristics/detection/detail.ts'
@@ -48,13 +48,13 @@ function measurementsOf(dataset: string, data: Data): Measurements {
   }
 }
 
-function assess(plain: Plain, data: Data): AssessOutput<DetectionDetail> {
+function assess(plain: Plain, data: Data, prior: readonly PriorAssessment[] = []): AssessOutput<DetectionDetail> {
   const { options, diagnostics } = read(plain)
   if (options === undefined) throw new Error(diagnostics.map((each) => each.message).join('; '))
   const input: AssessInput<DetectionOptions> = {
     block: { id: 'detection', characteristic: 'detection', measurands: ['m'], options, decideBy: 'estimate', criteria: [], place },
     measurand: { id: 'm', name: 'm', unit: 'mg/L', responseUnit: 'mAU', place }, confidence: 0.95,
-    responses: (dataset) => measurementsOf(dataset, data), results: (dataset) => measurementsOf(dataset, data), prior: () => [],
+    responses: (dataset) => measurementsOf(dataset, data), results: (dataset) => measurementsOf(dataset, data), prior: () => prior,
     observations: (dataset) => (data[dataset]?.rows ?? []).map((each, row): Observation => ({ row, measurand: 'm', fields: { [data[dataset]?.field ?? 'result']: { ...cellOf(each.value), text: String(each.value), column: 'Found', place } } })),
   }
   return detection.assess(input) as AssessOutput<DetectionDetail>
@@ -113,6 +113,14 @@ describe('findings', () => {
     const net = assess({ by: 'blank scatter', blanks: 'b', 'sample-replicates': 2, 'blank-replicates': 4 }, { b: blanks })
     const value = (found: AssessOutput<DetectionDetail>): number => found.findings.find((each) => each.metric === 'detection-limit')?.value ?? NaN
     expect(value(net) / value(plain)).toBeCloseTo(Math.sqrt(1 / 2 + 1 / 4), 12)
+  })
+
+  test.each([['straight line', 2], ['quadratic', 1.003]])('blank responses take the slope of a linearity block with a %s when it is one number', (fit, slope) => {
+    const finding = (metric: string, value: number): PriorAssessment['findings'][number] => ({ id: `linearity/m/${metric}`, metric, value, unit: '', measurand: 'm', characteristic: 'linearity', block: 'linearity', method: 'fit', source: 'fit', evidence: [{ dataset: 'c', field: 'response', rows: [0] }] })
+    const coefficients = [finding('slope', 2), finding('intercept', 0.1), ...(fit === 'quadratic' ? [finding('quadratic-coefficient', 0.1)] : [])]
+    const found = assess({ by: 'blank scatter', calibration: 'c', blanks: 'b' }, { c: line, b: { field: 'response', rows: blanks.rows } }, [{ block: 'linearity', detail: { fit }, findings: coefficients, verdicts: [] }])
+    expect(found.detail?.line?.slope).toBeCloseTo(slope, 10)
+    expect(found.detail?.line?.block).toBe(fit === 'quadratic' ? undefined : 'linearity')
   })
 
   test('a slope that falls gives positive limits', () => {

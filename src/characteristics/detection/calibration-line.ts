@@ -78,10 +78,15 @@ export function isNoiseOfArithmetic(scatter: number, values: readonly number[]):
 
 /** Slope and intercept of the straight line that an earlier linearity block found on the same dataset. */
 function priorLine(input: AssessInput<DetectionOptions>, dataset: string): { readonly block: string; readonly slope: number; readonly intercept: number } | undefined {
-  for (const prior of input.prior('linearity')) {
+  for (const prior of input.prior('linearity').filter((each) => !isCurved(each.detail))) {
     const find = (metric: string): number | undefined => prior.findings.find((each) => each.metric === metric && each.level === undefined && each.condition === undefined && each.evidence.some((evidence) => evidence.dataset === dataset))?.value
     const [slope, intercept] = [find('slope'), find('intercept')]
     if (slope !== undefined && slope !== 0 && intercept !== undefined) return { block: prior.block, slope, intercept }
   }
   return undefined
+}
+
+/** The slope of a curve changes along it, so a curve gives no slope here. */
+function isCurved(detail: unknown): boolean {
+  return typeof detail === 'object' && detail !== null && 'fit' in detail && detail.fit === 'quadratic'
 }
