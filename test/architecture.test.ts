@@ -38,7 +38,7 @@ const rules: readonly { readonly from: RegExp; readonly may: readonly RegExp[]; 
   { from: /^statistics\//, may: [/^statistics\//] },
   { from: /^definition\//, may: [/^definition\//, /^diagnostics\//] },
   { from: /^data\//, may: [/^data\//, /^diagnostics\//], types: [/^definition\//] },
-  { from: /^assess\//, may: [/^assess\//, /^data\//, /^statistics\//, /^diagnostics\//], types: [/^definition\//] },
+  { from: /^assess\//, may: [/^assess\//, /^data\//, /^statistics\//, /^diagnostics\//, /^definition\/metric-unit\.ts$/], types: [/^definition\//] },
   { from: /^characteristics\/[^/]+\/index\.ts$/, may: [/^characteristics\/[^/]+\//, /^definition\//, /^diagnostics\//], types: [/^characteristics\/characteristic\.ts$/, /^assess\//] },
   { from: /^characteristics\/[^/]+\/present\.ts$/, may: [/^present\//], types: [/^assess\//, /^definition\//, /^characteristics\//] },
   { from: /^characteristics\/[^/]+\/[^/]+\.ts$/, may: [/^statistics\//, /^diagnostics\//, /^assess\/(measurements|assessment-part)\.ts$/, /^characteristics\/[^/]+\//, /^present\//, /^definition\//], types: [/^assess\//, /^data\//, /^definition\//] },

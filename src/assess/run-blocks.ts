@@ -2,6 +2,7 @@
 // verdicts. It knows no characteristic by name; blocks that can turn responses into results go first.
 import type { Dataset } from '../data/dataset.ts'
 import type { DefinitionPart } from '../definition/definition-part.ts'
+import { unitOfMetric } from '../definition/metric-unit.ts'
 import type { Block, DatasetSource, Measurand, StudyDefinition } from '../definition/study.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import type { AssessInput, AssessmentPart, PriorAssessment } from './assessment-part.ts'
@@ -79,7 +80,7 @@ function runBlock(request: RunRequest, measurand: Measurand, block: Block, part:
     if (![draft.value, draft.interval?.low ?? 0, draft.interval?.high ?? 0, draft.df ?? 0].every(Number.isFinite)) throw new Error(`${part.id} reported a ${draft.metric} that is not finite`)
     return {
       ...draft, id: findingId({ block: block.id, measurand: measurand.id, metric: draft.metric, level: draft.level, condition: draft.condition }),
-      measurand: measurand.id, characteristic: part.id, block: block.id, unit: unitOf(metric.unit, measurand),
+      measurand: measurand.id, characteristic: part.id, block: block.id, unit: unitOfMetric(metric.unit, measurand),
     }
   })
   const verdicts = judgeAll(request.study, block, measurand, part, findings, output.notEvaluable, output.detail === undefined)
@@ -87,21 +88,6 @@ function runBlock(request: RunRequest, measurand: Measurand, block: Block, part:
     block, measurand: measurand.id, title: part.title, detail: output.detail, findings, verdicts, notEvaluable: output.notEvaluable,
     design: output.design, diagnostics: [...noticed, ...output.diagnostics],
   }
-}
-
-export function unitOf(kind: DefinitionPart['metrics'][string]['unit'], measurand: Measurand): string {
-  switch (kind) {
-    case 'measurand': return measurand.unit
-    case 'response': return measurand.responseUnit ?? ''
-    case 'response per measurand': return responsePerMeasurand(measurand)
-    case 'percent': return '%'
-    case 'none': return ''
-  }
-}
-
-function responsePerMeasurand(measurand: Measurand): string {
-  const bracketed = /[/·]/.test(measurand.unit) ? `(${measurand.unit})` : measurand.unit
-  return `${measurand.responseUnit ?? '1'}/${bracketed}`
 }
 
 function judgeAll(

@@ -2,7 +2,7 @@
 // knows its own JSON Schema, so that the published schema and the program can never disagree.
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import { nearest } from '../diagnostics/nearest.ts'
-import type { Located } from '../diagnostics/place.ts'
+import type { Located, Place } from '../diagnostics/place.ts'
 import { parseQuantity } from './quantity.ts'
 import type { Quantity } from './study.ts'
 import type { MapEntry, MapNode, StudyNode } from './study-node.ts'
@@ -15,6 +15,14 @@ export interface Reading {
   report(found: Diagnostic): void
   /** A default was taken for `path`. */
   took(path: string, value: string): void
+  /** A name is used that something else of the study must declare. */
+  refersTo?(reference: Reference): void
+}
+
+export interface Reference {
+  readonly kind: 'dataset'
+  readonly name: string
+  readonly place: Place
 }
 
 /** Returns undefined after reporting at least one error. */
@@ -90,6 +98,7 @@ export function number(about: Described & { readonly minimum?: number; readonly 
       ...(about.minimum === undefined ? {} : { minimum: about.minimum }), ...(about.maximum === undefined ? {} : { maximum: about.maximum }),
     }, about),
     read(node, reading) {
+      if (node.kind === 'scalar' && /^[+-]?\d+,\d+$/.test(node.text)) return unexpected(node, reading, expected, `Write the number with a point: \`${node.text.replace(',', '.')}\``)
       if (node.kind !== 'scalar' || node.quoted || typeof node.value !== 'number' || !Number.isFinite(node.value)) return unexpected(node, reading, expected)
       if ((about.integer && !Number.isInteger(node.value)) || node.value < (about.minimum ?? -Infinity) || node.value > (about.maximum ?? Infinity)) return unexpected(node, reading, expected)
       return node.value
@@ -111,6 +120,7 @@ export function quantity(about: Described & { readonly unit?: string }): Reader<
         }))
         return undefined
       }
+      if (parsed.kind === 'decimal comma') return unexpected(node, reading, expected, `Write the number with a point: \`${node.text.replace(',', '.')}\``)
       if (parsed.kind === 'not a quantity') return unexpected(node, reading, expected)
       if (about.unit !== undefined && parsed.quantity.unit !== about.unit) return unexpected(node, reading, expected)
       return parsed.quantity
@@ -138,8 +148,25 @@ export function flag(about: Described): Reader<boolean> {
   return {
     schema: described({ type: 'boolean' }, about),
     read(node, reading) {
-      if (node.kind !== 'scalar' || node.quoted || typeof node.value !== 'boolean') return unexpected(node, reading, 'true or false')
+      if (node.kind !== 'scalar' || node.quoted || typeof node.value !== 'boolean') {
+        const word = node.kind === 'scalar' ? node.text.toLowerCase() : ''
+        const mend = ['yes', 'on', 'y'].includes(word) ? 'Write `true`: `yes` and `on` are texts here' : ['no', 'off', 'n'].includes(word) ? 'Write `false`: `no` and `off` are texts here' : undefined
+        return unexpected(node, reading, 'true or false', mend)
+      }
       return node.value
+    },
+  }
+}
+
+/** The name of a dataset of the study; that it exists is checked once all are known. */
+export function datasetName(about: Described): Reader<string> {
+  const inner = text(about)
+  return {
+    schema: inner.schema,
+    read(node, reading) {
+      const name = inner.read(node, reading)
+      if (name !== undefined) reading.refersTo?.({ kind: 'dataset', name, place: node.place })
+      return name
     },
   }
 }

@@ -2,9 +2,17 @@
 import type { CodeEntry } from './entry.ts'
 
 export const definitionCodes = {
+  'definition/not-yaml': { severity: 'error', help: 'The study cannot be read as YAML' },
+  'definition/duplicate-key': { severity: 'error', help: 'A key stands twice in one map, so one of the two would be lost' },
   'definition/wrong-type': { severity: 'error', help: 'A key holds another kind of value than the study format asks for' },
   'definition/unknown-unit': { severity: 'error', help: 'A unit is not in the table of units' },
   'definition/unknown-choice': { severity: 'error', help: 'A key holds a word that is not among its choices' },
   'definition/missing-key': { severity: 'error', help: 'A key that the study needs is absent' },
   'definition/unknown-key': { severity: 'error', help: 'A key is not known at this place' },
+  'definition/unknown-name': { severity: 'error', help: 'A name is used that the study does not declare' },
+  'definition/unreadable-criterion': { severity: 'error', help: 'A criterion is no phrase that the program knows' },
+  'definition/unit-mismatch': { severity: 'error', help: 'A limit has another unit than the number it is held against' },
+  'definition/contradiction': { severity: 'error', help: 'Two parts of the study cannot both hold' },
+  'definition/same-person': { severity: 'error', help: 'One person stands where two different ones are needed' },
+  'definition/path-outside': { severity: 'error', help: 'A path leaves the folder of the study' },
 } as const satisfies Record<string, CodeEntry>
