@@ -1,80 +1,87 @@
-// Diagnostics → text for a person, or plain data for a program. What stands in the user's files is never sent to a terminal raw:
-// control and direction-changing characters are shown as escapes, so that a file cannot repaint the screen it is complained about on.
-import { codeFrame } from './code-frame.ts'
-import type { Diagnostic, Severity } from './diagnostic.ts'
-import { foldDiagnostics, type FoldedDiagnostic } from './fold.ts'
+// Diagnostics → lines for a person (place, message, code frame, expected, how to mend) or plain data for a program.
+// What comes from the user's files is never printed raw: control and escape characters are shown by their number.
+import { codes } from './codes.ts'
+import type { Diagnostic } from './diagnostic.ts'
 import type { Place } from './place.ts'
-import { visible } from './visible.ts'
 
-export interface PrintChoice {
-  /** File as named in places → its text; a file that is absent gets no code frame. */
+export interface Printing {
+  /** Text of files by path, for code frames. */
   readonly sources: ReadonlyMap<string, string>
-  readonly colour: boolean
+  readonly colour?: boolean
 }
 
-/** In the order of the files, then of their lines; what has no place comes last. Empty text when there is nothing to say. */
-export function printDiagnostics(diagnostics: readonly Diagnostic[], choice: PrintChoice): string {
-  if (diagnostics.length === 0) return ''
-  const lines = new Map<string, readonly string[]>()
-  const linesOf = (file: string): readonly string[] | undefined => {
-    const text = choice.sources.get(file)
-    if (text === undefined) return undefined
-    const known = lines.get(file) ?? text.replace(/^\uFEFF/, '').split(/\r\n|\r|\n/)
-    lines.set(file, known)
-    return known
+const foldAbove = 5 // equal problems; more than a screen of the same says no more
+const frameWidth = 100 // characters of a line shown around the place
+const order = { error: 0, warning: 1, note: 2 } as const
+
+export function printDiagnostics(diagnostics: readonly Diagnostic[], printing: Printing): string {
+  const groups = folded([...diagnostics].sort((left, right) => order[left.severity] - order[right.severity]))
+  return groups.map((group) => printGroup(group, printing)).join('\n\n')
+}
+
+export function diagnosticsAsJson(diagnostics: readonly Diagnostic[]): readonly Readonly<Record<string, unknown>>[] {
+  return diagnostics.map((each) => ({
+    code: each.code, severity: each.severity, message: each.message, place: each.place ?? null, actual: each.actual ?? null,
+    expected: each.expected ?? null, mend: each.mend ?? null, related: each.related ?? [], help: codes[each.code].help,
+  }))
+}
+
+/** Printable form of text from outside: control characters by number, so that no file can move the cursor or colour the screen. */
+export function harmless(text: string): string {
+  return text.replace(/[\u0000-\u0008\u000b-\u001f\u007f-\u009f\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/g, (sign) => `\\u${sign.charCodeAt(0).toString(16).padStart(4, '0')}`).replace(/\t/g, ' ')
+}
+
+/** Diagnostics that say the same of many places stand together: same code, and same message but for what is quoted or counted. */
+function folded(diagnostics: readonly Diagnostic[]): readonly (readonly Diagnostic[])[] {
+  const groups = new Map<string, Diagnostic[]>()
+  for (const each of diagnostics) {
+    const key = `${each.code}\u0000${each.place?.file ?? ''}\u0000${each.message.replace(/`[^`]*`|\d+/g, '…')}`
+    const group = groups.get(key)
+    if (group === undefined) groups.set(key, [each])
+    else group.push(each)
   }
-  const told = foldDiagnostics(inOrder(diagnostics)).map((each) => oneDiagnostic(each, linesOf, paint(choice.colour)))
-  return [...told, countLine(diagnostics)].join('\n\n')
+  return [...groups.values()].flatMap((group) => (group.length > foldAbove ? [group] : group.map((each) => [each])))
 }
 
-/** For programs: the same data, keys without a value left out, order as given. The whole answer carries its own `format`. */
-export function diagnosticsAsJson(diagnostics: readonly Diagnostic[]): readonly Diagnostic[] {
-  return diagnostics.map((each) => JSON.parse(JSON.stringify(each)) as Diagnostic)
+function printGroup(group: readonly Diagnostic[], { sources, colour }: Printing): string {
+  const first = group[0]
+  if (first === undefined) return ''
+  const paint = (code: number, text: string): string => (colour ? `\u001b[${code}m${text}\u001b[0m` : text)
+  const tone = { error: 31, warning: 33, note: 36 }[first.severity]
+  const lines = [`${placeText(first.place)}${paint(tone, first.severity)} ${harmless(first.message)} [${first.code}]`]
+  if (first.place !== undefined) lines.push(...frame(first.place, sources))
+  if (first.expected !== undefined && first.expected !== '') lines.push(`  expected: ${harmless(first.expected)}`)
+  if (first.mend !== undefined && first.mend !== '') lines.push(`  mend: ${harmless(first.mend)}`)
+  for (const related of first.related ?? []) lines.push(`  ${harmless(related.message)}: ${placeText(related.place).trimEnd().replace(/:$/, '')}`)
+  if (group.length > 1) {
+    lines.push(`  the same at ${group.length - 1} more places: ${group.slice(1, 4).map((each) => placeText(each.place).trimEnd().replace(/:$/, '')).join(', ')}${group.length > 4 ? ', …' : ''}`)
+  }
+  return lines.join('\n')
 }
 
-export function placeText(place: Place): string {
-  const file = visible(place.file)
-  if (place.sheet !== undefined) return `${file}[${visible(place.sheet)}]${place.cell === undefined ? '' : `!${visible(place.cell)}`}`
-  return [file, ...(place.line === undefined ? [] : [place.line, ...(place.column === undefined ? [] : [place.column])])].join(':')
+function placeText(place: Place | undefined): string {
+  if (place === undefined) return ''
+  const file = harmless(place.file)
+  if (place.sheet !== undefined) return `${file}[${harmless(place.sheet)}]${place.cell === undefined ? '' : `!${place.cell}`}: `
+  return `${[file, place.line, place.line === undefined ? undefined : place.column].filter((part) => part !== undefined).join(':')}: `
 }
 
-function inOrder(diagnostics: readonly Diagnostic[]): readonly Diagnostic[] {
-  const files = [...new Set(diagnostics.map((each) => each.place?.file))]
-  const rank = (each: Diagnostic): readonly number[] => [each.place === undefined ? Infinity : files.indexOf(each.place.file), each.place?.line ?? 0, each.place?.column ?? 0]
-  return diagnostics.map((each) => ({ each, rank: rank(each) })).sort((left, right) => {
-    const at = left.rank.findIndex((value, index) => value !== right.rank[index])
-    return at < 0 ? 0 : (left.rank[at] ?? 0) < (right.rank[at] ?? 0) ? -1 : 1
-  }).map(({ each }) => each)
-}
-
-type Paint = (style: Severity | 'faint' | 'strong', text: string) => string
-
-function paint(colour: boolean): Paint {
-  const styles = { error: '31', warning: '33', note: '36', faint: '2', strong: '1' } as const
-  return (style, text) => (colour ? `\u001b[${styles[style]}m${text}\u001b[0m` : text)
-}
-
-function oneDiagnostic({ diagnostic, others }: FoldedDiagnostic, linesOf: (file: string) => readonly string[] | undefined, painted: Paint): string {
-  const { place } = diagnostic
-  const head = [
-    ...(place === undefined ? [] : [painted('strong', placeText(place))]), painted(diagnostic.severity, diagnostic.severity), visible(diagnostic.message), painted('faint', `[${diagnostic.code}]`),
-  ].join(' ')
-  const lines = place === undefined ? undefined : linesOf(place.file)
-  const frame = place === undefined || lines === undefined ? [] : codeFrame(lines, place).map((line) => `  ${painted('faint', line)}`)
-  const said = (label: string, text: string | undefined): readonly string[] => (text === undefined || text === '' ? [] : [`  ${label}: ${visible(text)}`])
-  // What was found is read off the frame or the message; it is told apart only where neither shows it.
-  const isShown = frame.length > 0 || diagnostic.actual === undefined || diagnostic.message.includes(diagnostic.actual)
+function frame(place: Place, sources: ReadonlyMap<string, string>): readonly string[] {
+  const text = sources.get(place.file)
+  if (text === undefined || place.line === undefined) return []
+  const lines = text.split(/\r\n|\r|\n/)
+  const line = lines[place.line - 1]
+  if (line === undefined) return []
+  const column = place.column ?? 1
+  const from = Math.max(0, column - 1 - frameWidth / 2)
+  const window = (given: string): string => harmless(given.slice(from, from + frameWidth))
+  const gutter = String(place.line).length
+  const before = harmless(line.slice(from, column - 1)).length
+  const marked = Math.max(1, harmless(line.slice(column - 1, Math.min(column - 1 + (place.length ?? 1), from + frameWidth))).length)
+  const previous = lines[place.line - 2]
   return [
-    head, ...frame, ...(isShown ? [] : said('found', diagnostic.actual)), ...said('expected', diagnostic.expected), ...said('to mend', diagnostic.mend),
-    ...(diagnostic.related ?? []).map((each) => `  see ${placeText(each.place)} ${visible(each.message)}`),
-    ...(others.length === 0 ? [] : [`  and ${others.length} more like it: ${others.slice(0, 4).map((each) => (each.place === undefined ? visible(each.message) : placeText(each.place))).join(', ')}${others.length > 4 ? ', …' : ''}`]),
-  ].join('\n')
-}
-
-function countLine(diagnostics: readonly Diagnostic[]): string {
-  const parts = (['error', 'warning', 'note'] as const).flatMap((severity) => {
-    const count = diagnostics.filter((each) => each.severity === severity).length
-    return count === 0 ? [] : [`${count} ${severity}${count === 1 ? '' : 's'}`]
-  })
-  return parts.join(', ')
+    ...(previous === undefined || previous.trim() === '' ? [] : [`  ${String(place.line - 1).padStart(gutter)} | ${window(previous)}`]),
+    `> ${place.line} | ${window(line)}`,
+    ...(place.column === undefined ? [] : [`  ${' '.repeat(gutter)} | ${' '.repeat(before)}${'^'.repeat(marked)}`]),
+  ]
 }
