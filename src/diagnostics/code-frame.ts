@@ -1,6 +1,6 @@
 // The line a diagnostic points at, the line before it, and a caret line: what a reader needs to find the place without opening the file.
 import type { Place } from './place.ts'
-import { visible } from './visible.ts'
+import { harmless } from './harmless.ts'
 
 const widest = 100 // characters of source shown; a longer line is cut to a window around the caret
 const lead = 40 // characters kept before the caret in a cut line
@@ -24,7 +24,7 @@ export function codeFrame(lines: readonly string[], place: Place): readonly stri
 
 /** A tab counts as one space here, so that the caret stands where it should. */
 function shown(text: string): string {
-  return visible(text.replaceAll('\t', ' '))
+  return harmless(text.replaceAll('\t', ' '))
 }
 
 /** Columns on a terminal, near enough: combining marks take none, and wide East Asian signs two. */

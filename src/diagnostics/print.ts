@@ -1,22 +1,31 @@
 // Diagnostics → lines for a person (place, message, code frame, expected, how to mend) or plain data for a program.
-// What comes from the user's files is never printed raw: control and escape characters are shown by their number.
+// Errors come first, then warnings and notes; within each, the order of the files and of their lines.
+import { codeFrame } from './code-frame.ts'
 import { codes } from './codes.ts'
-import type { Diagnostic } from './diagnostic.ts'
+import type { Diagnostic, Severity } from './diagnostic.ts'
+import { foldDiagnostics, type FoldedDiagnostic } from './fold.ts'
+import { harmless } from './harmless.ts'
 import type { Place } from './place.ts'
 
 export interface Printing {
-  /** Text of files by path, for code frames. */
+  /** Text of files by path, for code frames; a file that is absent gets none. */
   readonly sources: ReadonlyMap<string, string>
   readonly colour?: boolean
 }
 
-const foldAbove = 5 // equal problems; more than a screen of the same says no more
-const frameWidth = 100 // characters of a line shown around the place
-const order = { error: 0, warning: 1, note: 2 } as const
-
-export function printDiagnostics(diagnostics: readonly Diagnostic[], printing: Printing): string {
-  const groups = folded([...diagnostics].sort((left, right) => order[left.severity] - order[right.severity]))
-  return groups.map((group) => printGroup(group, printing)).join('\n\n')
+/** Empty when there is nothing to say. */
+export function printDiagnostics(diagnostics: readonly Diagnostic[], { sources, colour = false }: Printing): string {
+  if (diagnostics.length === 0) return ''
+  const split = new Map<string, readonly string[]>()
+  const linesOf = (file: string): readonly string[] | undefined => {
+    const text = sources.get(file)
+    if (text === undefined) return undefined
+    const lines = split.get(file) ?? text.replace(/^\uFEFF/, '').split(/\r\n|\r|\n/)
+    split.set(file, lines)
+    return lines
+  }
+  const paint: Paint = (style, text) => (colour ? `\u001b[${styles[style]}m${text}\u001b[0m` : text)
+  return [...foldDiagnostics(inOrder(diagnostics)).map((each) => printOne(each, linesOf, paint)), countLine(diagnostics)].join('\n\n')
 }
 
 export function diagnosticsAsJson(diagnostics: readonly Diagnostic[]): readonly Readonly<Record<string, unknown>>[] {
@@ -26,62 +35,55 @@ export function diagnosticsAsJson(diagnostics: readonly Diagnostic[]): readonly 
   }))
 }
 
-/** Printable form of text from outside: control characters by number, so that no file can move the cursor or colour the screen. */
-export function harmless(text: string): string {
-  return text.replace(/[\u0000-\u0008\u000b-\u001f\u007f-\u009f\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/g, (sign) => `\\u${sign.charCodeAt(0).toString(16).padStart(4, '0')}`).replace(/\t/g, ' ')
-}
-
-/** Diagnostics that say the same of many places stand together: same code, and same message but for what is quoted or counted. */
-function folded(diagnostics: readonly Diagnostic[]): readonly (readonly Diagnostic[])[] {
-  const groups = new Map<string, Diagnostic[]>()
-  for (const each of diagnostics) {
-    const key = `${each.code}\u0000${each.place?.file ?? ''}\u0000${each.message.replace(/`[^`]*`|\d+/g, '…')}`
-    const group = groups.get(key)
-    if (group === undefined) groups.set(key, [each])
-    else group.push(each)
-  }
-  return [...groups.values()].flatMap((group) => (group.length > foldAbove ? [group] : group.map((each) => [each])))
-}
-
-function printGroup(group: readonly Diagnostic[], { sources, colour }: Printing): string {
-  const first = group[0]
-  if (first === undefined) return ''
-  const paint = (code: number, text: string): string => (colour ? `\u001b[${code}m${text}\u001b[0m` : text)
-  const tone = { error: 31, warning: 33, note: 36 }[first.severity]
-  const lines = [`${placeText(first.place)}${paint(tone, first.severity)} ${harmless(first.message)} [${first.code}]`]
-  if (first.place !== undefined) lines.push(...frame(first.place, sources))
-  if (first.expected !== undefined && first.expected !== '') lines.push(`  expected: ${harmless(first.expected)}`)
-  if (first.mend !== undefined && first.mend !== '') lines.push(`  mend: ${harmless(first.mend)}`)
-  for (const related of first.related ?? []) lines.push(`  ${harmless(related.message)}: ${placeText(related.place).trimEnd().replace(/:$/, '')}`)
-  if (group.length > 1) {
-    lines.push(`  the same at ${group.length - 1} more places: ${group.slice(1, 4).map((each) => placeText(each.place).trimEnd().replace(/:$/, '')).join(', ')}${group.length > 4 ? ', …' : ''}`)
-  }
-  return lines.join('\n')
-}
-
-function placeText(place: Place | undefined): string {
-  if (place === undefined) return ''
+/** `study.yaml:6:11`, or `week-1.xlsx[Sheet1]!B7`. */
+export function placeText(place: Place): string {
   const file = harmless(place.file)
-  if (place.sheet !== undefined) return `${file}[${harmless(place.sheet)}]${place.cell === undefined ? '' : `!${place.cell}`}: `
-  return `${[file, place.line, place.line === undefined ? undefined : place.column].filter((part) => part !== undefined).join(':')}: `
+  if (place.sheet !== undefined) return `${file}[${harmless(place.sheet)}]${place.cell === undefined ? '' : `!${harmless(place.cell)}`}`
+  return [file, ...(place.line === undefined ? [] : [place.line, ...(place.column === undefined ? [] : [place.column])])].join(':')
 }
 
-function frame(place: Place, sources: ReadonlyMap<string, string>): readonly string[] {
-  const text = sources.get(place.file)
-  if (text === undefined || place.line === undefined) return []
-  const lines = text.split(/\r\n|\r|\n/)
-  const line = lines[place.line - 1]
-  if (line === undefined) return []
-  const column = place.column ?? 1
-  const from = Math.max(0, column - 1 - frameWidth / 2)
-  const window = (given: string): string => harmless(given.slice(from, from + frameWidth))
-  const gutter = String(place.line).length
-  const before = harmless(line.slice(from, column - 1)).length
-  const marked = Math.max(1, harmless(line.slice(column - 1, Math.min(column - 1 + (place.length ?? 1), from + frameWidth))).length)
-  const previous = lines[place.line - 2]
+const severities = ['error', 'warning', 'note'] as const
+
+function inOrder(diagnostics: readonly Diagnostic[]): readonly Diagnostic[] {
+  const files = [...new Set(diagnostics.map((each) => each.place?.file))]
+  const ranked = diagnostics.map((each) => ({
+    each, rank: [severities.indexOf(each.severity), each.place === undefined ? files.length : files.indexOf(each.place.file), each.place?.line ?? 0, each.place?.column ?? 0],
+  }))
+  ranked.sort((left, right) => {
+    const at = left.rank.findIndex((value, index) => value !== right.rank[index])
+    return at < 0 ? 0 : (left.rank[at] ?? 0) - (right.rank[at] ?? 0)
+  })
+  return ranked.map(({ each }) => each)
+}
+
+type Paint = (style: keyof typeof styles, text: string) => string
+
+const styles = { error: '31', warning: '33', note: '36', faint: '2', strong: '1' } as const satisfies Record<Severity | 'faint' | 'strong', string>
+
+function printOne({ diagnostic, others }: FoldedDiagnostic, linesOf: (file: string) => readonly string[] | undefined, paint: Paint): string {
+  const { place } = diagnostic
+  const lines = place === undefined ? undefined : linesOf(place.file)
+  const frame = place === undefined || lines === undefined ? [] : codeFrame(lines, place)
+  const said = (label: string, text: string | undefined): readonly string[] => (text === undefined || text === '' ? [] : [`  ${label}: ${harmless(text)}`])
+  // What was found is read off the frame or the message; it is told apart only where neither shows it.
+  const isShown = frame.length > 0 || diagnostic.actual === undefined || diagnostic.message.includes(diagnostic.actual)
   return [
-    ...(previous === undefined || previous.trim() === '' ? [] : [`  ${String(place.line - 1).padStart(gutter)} | ${window(previous)}`]),
-    `> ${place.line} | ${window(line)}`,
-    ...(place.column === undefined ? [] : [`  ${' '.repeat(gutter)} | ${' '.repeat(before)}${'^'.repeat(marked)}`]),
-  ]
+    [...(place === undefined ? [] : [paint('strong', placeText(place))]), paint(diagnostic.severity, diagnostic.severity), harmless(diagnostic.message), paint('faint', `[${diagnostic.code}]`)].join(' '),
+    ...frame.map((line) => `  ${paint('faint', line)}`),
+    ...(isShown ? [] : said('found', diagnostic.actual)), ...said('expected', diagnostic.expected), ...said('to mend', diagnostic.mend),
+    ...(diagnostic.related ?? []).map((each) => `  see ${placeText(each.place)}: ${harmless(each.message)}`),
+    ...(others.length === 0 ? [] : [`  and ${others.length} more like it: ${firstPlaces(others)}`]),
+  ].join('\n')
+}
+
+function firstPlaces(others: readonly Diagnostic[]): string {
+  const shown = 4 // enough to see a pattern
+  return [...others.slice(0, shown).map((each) => (each.place === undefined ? harmless(each.message) : placeText(each.place))), ...(others.length > shown ? ['…'] : [])].join(', ')
+}
+
+function countLine(diagnostics: readonly Diagnostic[]): string {
+  return severities.flatMap((severity) => {
+    const count = diagnostics.filter((each) => each.severity === severity).length
+    return count === 0 ? [] : [`${count} ${severity}${count === 1 ? '' : 's'}`]
+  }).join(', ')
 }
