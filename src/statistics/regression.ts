@@ -121,12 +121,13 @@ export function coefficientInterval(fit: Fit, power: number, level: number): Int
 export type InversePrediction = { readonly x: number } | { readonly outside: 'below' | 'above' | 'no root' }
 
 /** The x within the range whose fitted response is y; a quadratic takes the root inside the range. Degrees 1 and 2. */
-export function inversePredict(fit: Fit, y: number, range: { readonly low: number; readonly high: number }): InversePrediction {
+export function inversePredict(fit: Pick<Fit, 'coefficients'>, y: number, range: { readonly low: number; readonly high: number }): InversePrediction {
   const [a = 0, b = 0, c = 0] = fit.coefficients
   const slack = (range.high - range.low) * 1e-12
   const inside = rootsOf(a - y, b, c).filter((x) => x >= range.low - slack && x <= range.high + slack)
   if (inside[0] !== undefined) return { x: Math.min(range.high, Math.max(range.low, inside[0])) }
-  const [low, high] = [predict(fit, range.low).value, predict(fit, range.high).value]
+  const at = (x: number): number => a + b * x + c * x * x
+  const [low, high] = [at(range.low), at(range.high)]
   if ((high > low ? y < low : y > low) && rootsOf(a - y, b, c).length > 0) return { outside: 'below' }
   if (high > low ? y > high : y < high) return { outside: 'above' }
   return { outside: high === low ? 'no root' : (high > low ? y < low : y > low) ? 'below' : 'no root' }
