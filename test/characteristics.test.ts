@@ -11,6 +11,7 @@ import type { ReportBlock, ReportDocument } from '../src/present/document.ts'
 import { publishMarkdown } from '../src/publish/markdown.ts'
 import { expectApproved } from './support/approved.ts'
 import { agreesInDigits, agreesWithPublished } from './support/published-figure.ts'
+import { templatesFolder } from './support/shipped-template.ts'
 
 interface Expected {
   readonly source: string
@@ -28,7 +29,7 @@ describe.each(cases)('$characteristic: $name', ({ characteristic, folder }) => {
   const path = join(folder, 'study.yaml')
   const study = readStudyFile(path)
   if ('problem' in study) throw new Error(`${path}: ${study.problem}`)
-  const checked = check(study, studyFolder(path))
+  const checked = check(study, studyFolder(path, templatesFolder))
   const expected = parse(readFileSync(join(folder, 'expected.yaml'), 'utf8')) as Expected
 
   test('notices what is expected and nothing else', () => {

@@ -17,9 +17,10 @@ export function readStudyFile(path: string): ReadFile | Refusal {
   return 'problem' in read ? read : { path: path.split(/[\\/]/).at(-1) ?? path, bytes: read.bytes }
 }
 
-export function studyFolder(studyPath: string): World {
+/** `templatesFolder` is beside the bundle unless said (tests run the sources). */
+export function studyFolder(studyPath: string, templatesFolder = new URL('../templates/', import.meta.url)): World {
   const folder = dirname(resolve(studyPath))
-  const shipped = fileURLToPath(new URL('../templates/', import.meta.url))
+  const shipped = fileURLToPath(templatesFolder)
   const templates = existsSync(shipped) ? readdirSync(shipped).filter((name) => name.endsWith('.md')).map((name) => name.slice(0, -3)).sort() : []
   return {
     program: { name: 'Assaywrit', version: programVersion },
