@@ -1,6 +1,9 @@
 // Deviations from what was expected (residuals, errors of back-calculated levels) against the level, about a zero line.
 import type { Chart } from '../document.ts'
+import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, LabelledValue, SeriesPoint } from './chart-input.ts'
+import { chartSpecification, plotFrame, ticksAlong } from './house-style.ts'
+import { excludedLayers, field, limitLayers, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, valueAxis, valueScale, withSeries, zeroMark } from './layers.ts'
 
 export interface DeviationChartInput {
   readonly xTitle: string
@@ -12,5 +15,24 @@ export interface DeviationChartInput {
 }
 
 export function deviationChart(input: DeviationChartInput): Chart {
-  throw new Error(`to come: ${input.width ?? ''}`)
+  const { points, excluded, limits } = input
+  const frame = plotFrame(input.width)
+  const xs = [...points, ...excluded].map((each) => each.x)
+  const ys = [...[...points, ...excluded].map((each) => each.y), ...limits.map((limit) => limit.value), 0]
+  const logarithmic = spansDecades(xs)
+  const spans = {
+    x: axisDomain(xs, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic, room: 0.02, ends: 'open' }),
+    // Room for the labels of limits above and below.
+    y: axisDomain(ys, { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 }),
+  }
+  const names = seriesOf(points)
+  const [x, y] = [field('x'), field('y')]
+  const specification = chartSpecification(frame, [
+    spanLayer({ ...x, scale: valueScale(logarithmic), axis: valueAxis('x', input.xTitle, frame, logarithmic) }, { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) }),
+    { data: { values: [{ zero: 0 }] }, mark: zeroMark, encoding: { y: field('zero') } },
+    ...limitLayers(field('value')),
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },
+    ...excludedLayers(x, y),
+  ])
+  return { specification, data: { span: spanRows(spans.x, spans.y), limits: rowsOf(limits), points: withSeries(points, names), excluded: rowsOf(excluded), ...placedLabels(frame, spans, { points, excluded, limits }) } }
 }

@@ -1,6 +1,10 @@
-// Responses against levels with the fitted line and its band: the picture of a calibration. The band is drawn only where the caller computed it.
+// Responses against levels with the fitted line and its band: the picture of a calibration. The band is drawn only where the
+// caller computed it. Both axes are logarithmic when the levels span more than two decades, so that a straight line stays one.
 import type { Chart } from '../document.ts'
+import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, SeriesPoint } from './chart-input.ts'
+import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
+import { excludedLayers, field, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, valueAxis, valueScale, withSeries } from './layers.ts'
 
 export interface ResponseChartInput {
   readonly xTitle: string
@@ -13,5 +17,24 @@ export interface ResponseChartInput {
 }
 
 export function responseChart(input: ResponseChartInput): Chart {
-  throw new Error(`to come: ${input.width ?? ''}`)
+  const { points, excluded, line, band = [] } = input
+  const frame = plotFrame(input.width)
+  const xs = [...points, ...excluded, ...line, ...band].map((each) => each.x)
+  const ys = [...[...points, ...excluded, ...line].map((each) => each.y), ...band.flatMap((each) => [each.low, each.high])]
+  const logarithmic = { x: spansDecades(xs), y: spansDecades(xs) && ys.every((each) => each > 0) }
+  const spans = {
+    x: axisDomain(xs, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic: logarithmic.x, room: 0.02, ends: 'open' }),
+    y: axisDomain(ys, { ticks: ticksAlong(frame.plotHeight, 34), logarithmic: logarithmic.y }),
+  }
+  const names = seriesOf(points)
+  const [x, y] = [field('x'), field('y')]
+  const specification = chartSpecification(frame, [
+    spanLayer({ ...x, scale: valueScale(logarithmic.x), axis: valueAxis('x', input.xTitle, frame, logarithmic.x) }, { ...y, scale: valueScale(logarithmic.y), axis: valueAxis('y', input.yTitle, frame, logarithmic.y) }),
+    { data: { name: 'band' }, mark: { type: 'area', color: inks.band, opacity: 1 }, encoding: { x, y: field('low'), y2: { field: 'high' } } },
+    { data: { name: 'line' }, mark: { type: 'line', color: inks.data, strokeWidth: 1 }, encoding: { x, y } },
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },
+    ...excludedLayers(x, y),
+  ])
+  const { excludedLabels } = placedLabels(frame, spans, { points: [...points, ...line], excluded, limits: [] })
+  return { specification, data: { span: spanRows(spans.x, spans.y), band: rowsOf(band), line: rowsOf(line), points: withSeries(points, names), excluded: rowsOf(excluded), excludedLabels } }
 }

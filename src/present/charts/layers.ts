@@ -1,0 +1,125 @@
+// The layers that charts share: span of the axes, points, excluded points, limits, and the labels of both. Each layer names its
+// data, so one specification serves every chart of its kind.
+import type { AxisDomain } from './axis-domain.ts'
+import { positionOn } from './axis-domain.ts'
+import type { LabelledPoint, LabelledValue } from './chart-input.ts'
+import { inks, pointSize, seriesInks, seriesShapes, textSize, ticksAlong, valueLabels, type PlotFrame } from './house-style.ts'
+import { aroundPoint, alongLine, estimatedWidth, placeLabels, type Box, type LabelRequest } from './label-placement.ts'
+
+export type Fragment = Readonly<Record<string, unknown>>
+export type Rows = readonly Readonly<Record<string, unknown>>[]
+
+/** The numbers of the record as rows of a chart, unchanged. */
+export function rowsOf<T extends object>(items: readonly T[]): Rows {
+  return items.map((item) => Object.fromEntries(Object.entries(item)))
+}
+
+export function valueAxis(channel: 'x' | 'y', title: string, frame: PlotFrame, logarithmic: boolean, more: Fragment = {}): Fragment {
+  const ticks = channel === 'x' ? ticksAlong(frame.plotWidth, 60) : ticksAlong(frame.plotHeight, 34)
+  return {
+    title, labelExpr: valueLabels(logarithmic), ...(logarithmic ? { gridOpacity: decadesOnly } : { tickCount: ticks }),
+    ...(channel === 'y' ? { minExtent: frame.left - 18, maxExtent: frame.left - 18 } : {}), ...more,
+  }
+}
+
+const decadesOnly: Fragment = { condition: { test: 'abs(log(datum.value) / LN10 - round(log(datum.value) / LN10)) < 1e-9', value: 1 }, value: 0 }
+
+export function valueScale(logarithmic: boolean): Fragment {
+  return logarithmic ? { type: 'log', nice: false } : { type: 'linear', nice: false, zero: false }
+}
+
+/** Draws nothing: it stretches both axes over the spans chosen for them, and bears their titles. */
+export function spanLayer(x: Fragment, y: Fragment): Fragment {
+  return { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x, y } }
+}
+
+export function spanRows(x: AxisDomain, y: AxisDomain): Rows {
+  return [{ x: x.low, y: y.low }, { x: x.high, y: y.high }]
+}
+
+export function field(name: string): Fragment {
+  return { field: name, type: 'quantitative' }
+}
+
+/** How series are told apart: shape first, ink second. Without series, nothing. */
+export function seriesEncoding(names: readonly string[], frame: PlotFrame): Fragment {
+  if (names.length === 0) return {}
+  const shared = { field: 'series', type: 'nominal', sort: null, legend: { columns: legendColumns(names, frame.plotWidth) } }
+  return { stroke: { ...shared, scale: { range: seriesInks } }, fill: { ...shared, scale: { range: seriesInks } }, shape: { ...shared, scale: { range: seriesShapes } } }
+}
+
+export function legendColumns(names: readonly string[], width: number): number {
+  const widest = Math.max(...names.map((name) => estimatedWidth(name) + 26))
+  return Math.max(1, Math.min(names.length, Math.floor(width / widest)))
+}
+
+/** Names in order of appearance; values without one, beside values with one, are `other`. */
+export function seriesOf(points: readonly { readonly series?: string | undefined }[]): readonly string[] {
+  if (points.every((point) => point.series === undefined)) return []
+  return [...new Set(points.map((point) => point.series ?? 'other'))]
+}
+
+export function withSeries<T extends { readonly series?: string | undefined }>(points: readonly T[], names: readonly string[]): Rows {
+  return points.map((point) => (names.length === 0 ? point : { ...point, series: point.series ?? 'other' }))
+}
+
+/** Full outline and half-clear filling: of points that lie on one another, each is seen. */
+export const pointMark: Fragment = { type: 'point', filled: true, size: pointSize, shape: 'circle', fill: inks.data, stroke: inks.data, fillOpacity: 0.45, opacity: 1, strokeWidth: 0.9 }
+export const excludedMark: Fragment = { type: 'point', filled: false, size: pointSize + 10, shape: 'circle', color: inks.excluded, fill: inks.paper, strokeWidth: 1 }
+export const limitMark: Fragment = { type: 'rule', color: inks.limit, strokeWidth: 0.9, strokeDash: [4, 2.5] }
+export const zeroMark: Fragment = { type: 'rule', color: inks.axis, strokeWidth: 0.8 }
+
+/** Text at a point of the data, moved by the offset of its row. */
+export function labelLayer(data: string, encoding: Fragment, mark: Fragment = {}): Fragment {
+  return { data: { name: data }, mark: { type: 'text', baseline: 'alphabetic', align: { expr: 'datum.align' }, dx: { expr: 'datum.dx' }, dy: { expr: 'datum.dy' }, fontSize: textSize, ...mark }, encoding: { text: { field: 'label', type: 'nominal' }, ...encoding } }
+}
+
+/** Excluded points are hollow and say why. */
+export function excludedLayers(x: Fragment, y: Fragment): readonly Fragment[] {
+  return [{ data: { name: 'excluded' }, mark: excludedMark, encoding: { x, y } }, labelLayer('excludedLabels', { x, y }, { color: inks.excluded })]
+}
+
+/** Level dashed lines across the plot, each with its label at the right end inside the plot. */
+export function limitLayers(y: Fragment): readonly Fragment[] {
+  return [{ data: { name: 'limits' }, mark: limitMark, encoding: { y } }, labelLayer('limitLabels', { y, x: { value: 'width' } }, { color: inks.limit })]
+}
+
+export interface Spans {
+  readonly x: AxisDomain
+  readonly y: AxisDomain
+}
+
+export interface PlacedLabels {
+  readonly excludedLabels: Rows
+  readonly limitLabels: Rows
+}
+
+/** Labels of limits first, which have fewer places to go, then those of excluded points. */
+export function placedLabels(frame: PlotFrame, spans: Spans, given: { readonly points: readonly { readonly x: number; readonly y: number }[]; readonly excluded: readonly LabelledPoint[]; readonly limits: readonly LabelledValue[] }): PlacedLabels {
+  const place = (point: { readonly x: number; readonly y: number }): { readonly x: number; readonly y: number } => ({ x: positionOn(spans.x, point.x) * frame.plotWidth, y: (1 - positionOn(spans.y, point.y)) * frame.plotHeight })
+  const taken: readonly Box[] = [...given.points, ...given.excluded].map((point) => pointBox(place(point)))
+  const lines: readonly LabelRequest[] = limitRequests(frame, spans.y, given.limits)
+  const points: readonly LabelRequest[] = given.excluded.map((point) => ({ text: point.label, ...place(point), candidates: aroundPoint() }))
+  const offsets = placeLabels([...lines, ...points], { left: 0, right: frame.plotWidth, top: -8, bottom: frame.plotHeight }, taken)
+  return {
+    limitLabels: given.limits.map((limit, index) => ({ value: limit.value, label: limit.label, ...offsets[index] })),
+    excludedLabels: given.excluded.map((point, index) => ({ x: point.x, y: point.y, label: point.label, ...offsets[lines.length + index] })),
+  }
+}
+
+/** An upper limit has its label above, a lower one below: outside, where there are fewest points. */
+export function limitRequests(frame: PlotFrame, y: AxisDomain, limits: readonly LabelledValue[]): readonly LabelRequest[] {
+  return limits.map((limit) => {
+    const level = 1 - positionOn(y, limit.value)
+    return { text: limit.label, x: frame.plotWidth, y: level * frame.plotHeight, candidates: alongLine(isLower(limit, limits, y) ? 'below' : 'above', frame.plotWidth) }
+  })
+}
+
+function isLower(limit: LabelledValue, limits: readonly LabelledValue[], y: AxisDomain): boolean {
+  if (limits.length > 1) return limit.value < (Math.min(...limits.map((each) => each.value)) + Math.max(...limits.map((each) => each.value))) / 2
+  return positionOn(y, limit.value) < 0.5
+}
+
+export function pointBox({ x, y }: { readonly x: number; readonly y: number }): Box {
+  return { left: x - 3, right: x + 3, top: y - 3, bottom: y + 3 }
+}
