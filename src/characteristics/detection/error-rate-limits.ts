@@ -7,7 +7,7 @@ import { standardDeviation } from '../../statistics/describe.ts'
 import { currieCriticalValue, currieMinimumDetectable, iso11843 } from '../../statistics/detection.ts'
 import type { DefinitionDetail, DistributionDetail } from './detail.ts'
 import { blankProblem, limitsFound, nothingFound, type Outcome, type Setting } from './outcome.ts'
-import { blankFindings, netFactorOf } from './scatter-limits.ts'
+import { blankFindings, netFactorOf, noteWideRange } from './scatter-limits.ts'
 
 export interface ErrorRateOutcome extends Outcome {
   readonly distribution?: DistributionDetail | undefined
@@ -43,6 +43,7 @@ export function isoLimits(setting: Setting): ErrorRateOutcome {
   const { options } = setting
   if (line === undefined) return nothing(setting, iso, because ?? 'no calibration')
   if (line.isExact) return nothing(setting, iso, 'the calibration line has no scatter')
+  noteWideRange(setting, line)
   const limits = iso11843(line.points, options.replicates, options.alpha, options.beta)
   const scatter = line.own.residualStandardDeviation
   const slope = line.detail.own.slope

@@ -2,7 +2,7 @@
 // governs, because a limit without a named definition means nothing.
 import { diagnostic } from '../../diagnostics/diagnostic.ts'
 import type { Place } from '../../diagnostics/place.ts'
-import { defaulted, listOf, number, object, type ObjectReader, oneOf, optional, quantity, type ReadBy, type Reading, required, text } from '../../definition/fields.ts'
+import { datasetName, defaulted, listOf, number, object, type ObjectReader, oneOf, optional, quantity, type ReadBy, type Reading, required, text } from '../../definition/fields.ts'
 import { calibrationDefinitions, confirmedLevel, type DefinitionName, definitionNames, detectionOnly, quantitationNames } from './definitions.ts'
 
 const window = object({
@@ -11,7 +11,7 @@ const window = object({
 }, { describe: 'A stretch of the trace' })
 
 const trace = object({
-  data: required(text({ describe: 'Dataset that holds the trace: fields `time` and `signal`' })),
+  data: required(datasetName({ describe: 'Dataset that holds the trace: fields `time` and `signal`' })),
   level: required(quantity({ describe: 'Level of the standard whose trace it is', example: '0.5 mg/L' })),
   baseline: required(listOf(window, { describe: 'One or more windows without a peak, where the noise is read', single: true, minimum: 1 })),
   peak: required(window),
@@ -21,12 +21,12 @@ const fields = object({
   by: required(listOf(oneOf(definitionNames, { describe: 'A definition of a lower limit' }), { describe: 'The definitions to compute, side by side', single: true, minimum: 1 })),
   govern: optional(oneOf(definitionNames, { describe: 'The definition whose value is the reported one; needed when several are computed' })),
   'govern-quantitation': optional(oneOf(quantitationNames, { describe: 'The definition of the reported quantitation limit, when it is not the one under `govern`' })),
-  calibration: optional(text({ describe: 'Dataset of calibration responses: the slope comes from the straight line of a linearity block on it, else from a straight line fitted here' })),
+  calibration: optional(datasetName({ describe: 'Dataset of calibration responses: the slope comes from the straight line of a linearity block on it, else from a straight line fitted here' })),
   'levels-up-to': optional(quantity({ describe: 'Use only calibration levels up to this one: a line over a wide range has too large a scatter for its low end', example: '0.5 mg/L' })),
   runs: optional(listOf(text({ describe: 'A field' }), { describe: 'Fields that tell independent calibration curves apart, for the intercept scatter', single: true, minimum: 1 })),
-  blanks: optional(text({ describe: 'Dataset of blank measurements' })),
-  spikes: optional(text({ describe: 'Dataset of measurements near the limit, with their `level`' })),
-  confirmation: optional(text({ describe: 'Dataset of results at the quantitation limit, with their `level`' })),
+  blanks: optional(datasetName({ describe: 'Dataset of blank measurements' })),
+  spikes: optional(datasetName({ describe: 'Dataset of measurements near the limit, with their `level`' })),
+  confirmation: optional(datasetName({ describe: 'Dataset of results at the quantitation limit, with their `level`' })),
   trace: optional(trace),
   convention: defaulted(oneOf(['3 s', '3.3 s'], { describe: 'Factor of the scatter definitions for the detection limit; the quantitation limit takes 10 s' }), '3.3 s'),
   noise: optional(oneOf(['peak-to-peak', 'rms'], { describe: 'Noise as the full width of the baseline (ratio 2H/h) or as its standard deviation (ratio H/s)' })),

@@ -148,7 +148,7 @@ function nothing(setting: Setting, definition: ScatterDefinition, because: strin
 }
 
 /** A line over more than two decades: its scatter is that of the top, not of the low end. */
-function noteWideRange(setting: Setting, line: CalibrationLine): void {
+export function noteWideRange(setting: Setting, line: CalibrationLine): void {
   const positive = line.points.x.filter((level) => level > 0)
   const [low, high] = [Math.min(...positive), Math.max(...positive)]
   if (positive.length === 0 || high / low <= 100) return
