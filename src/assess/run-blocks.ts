@@ -96,7 +96,7 @@ function judgeAll(
   return block.criteria.flatMap((criterion): readonly Verdict[] => {
     const metric = part.metrics[criterion.metric]
     if (metric === undefined) throw new Error(`a criterion names the metric ${criterion.metric}, which ${part.id} does not declare`)
-    const judged = findings.filter((finding) => finding.metric === criterion.metric).map((finding) => judge(finding, { criterion, decideBy: block.decideBy, rules: study.rules, metric }))
+    const judged = findings.filter((finding) => finding.metric === criterion.metric).map((finding) => judge(finding, { criterion, decideBy: criterion.decideBy ?? block.decideBy, rules: study.rules, metric }))
     const { limit, text } = limitFor(criterion, measurand.id)
     const unjudged = notEvaluable.filter((each) => each.metric === criterion.metric)
     const absent = judged.length + unjudged.length === 0
@@ -105,7 +105,7 @@ function judgeAll(
       finding: findingId({ block: block.id, measurand: measurand.id, metric: each.metric, level: each.level, condition: each.condition }),
       measurand: measurand.id, characteristic: part.id, block: block.id, metric: each.metric,
       ...(each.level === undefined ? {} : { level: each.level }), ...(each.condition === undefined ? {} : { condition: each.condition }),
-      criterion: text, limit, ...(criterion.source === undefined ? {} : { source: criterion.source }), decideBy: block.decideBy,
+      criterion: text, limit, ...(criterion.source === undefined ? {} : { source: criterion.source }), decideBy: criterion.decideBy ?? block.decideBy,
       verdict: 'not evaluable', because: each.because, required: true,
     }))
     return [...judged, ...missing]

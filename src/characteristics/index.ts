@@ -1,9 +1,11 @@
 // The catalogue: one line per characteristic, in the order a report usually tells them.
 import type { Characteristic } from './characteristic.ts'
+import { comparison } from './comparison/index.ts'
 import { detection } from './detection/index.ts'
 import { linearity } from './linearity/index.ts'
 
 export const catalogue: readonly Characteristic[] = [
   linearity,
   detection,
+  comparison,
 ]

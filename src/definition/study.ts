@@ -186,6 +186,8 @@ export interface Criterion {
   readonly source?: string | undefined
   /** Measurand → its own limit instead of the general one. */
   readonly overrides: Readonly<Record<string, { readonly limit: Limit; readonly text: string }>>
+  /** Where the question itself says what is decided on (equivalence: the interval), whatever the block says. */
+  readonly decideBy?: 'estimate' | 'interval' | undefined
   readonly place: Place
 }
 

@@ -1,0 +1,46 @@
+// Measurements of a dataset → readings under named conditions in their order, or why there are none.
+import type { AssessInput } from '../../assess/assessment-part.ts'
+import type { Measurement, Measurements } from '../../assess/measurements.ts'
+import { diagnostic, type Diagnostic } from '../../diagnostics/diagnostic.ts'
+import { type ComparisonOptions, otherConditions } from './options.ts'
+
+export interface ConditionReading {
+  readonly order: number
+  readonly value: number
+  readonly condition: string
+  readonly measurement: Measurement
+}
+
+export interface ReadingsOutcome {
+  readonly measurements?: Measurements
+  readonly readings: readonly ConditionReading[]
+  readonly because?: string
+  readonly diagnostics: readonly Diagnostic[]
+}
+
+export function readingsOf(input: AssessInput<ComparisonOptions>): ReadingsOutcome {
+  const { options, place } = input.block
+  const measurements = input.results(options.data)
+  if (measurements === undefined) return { readings: [], because: `dataset ${options.data} gives no results`, diagnostics: [] }
+  const wanted = [options.conditions.reference, ...otherConditions(options)]
+  const conditionOf = (each: Pick<Measurement, 'factors'>): string => each.factors[options.conditions.column] ?? ''
+  const censored = measurements.censored.find((each) => wanted.includes(conditionOf(each)))
+  if (censored !== undefined) {
+    const cell = `${censored.cell.text.trim()} in ${censored.cell.place.file}:${censored.cell.place.line ?? ''}`
+    return {
+      measurements, readings: [], because: `a censored value (${cell}) stands under ${conditionOf(censored)}`,
+      diagnostics: [diagnostic('assess/censored-value', `A censored value of \`${input.measurand.id}\` stands in the comparison`, { place: censored.cell.place, actual: censored.cell.text.trim(), expected: 'a number', mend: 'Measure conditions well above the detection limit' })],
+    }
+  }
+  const used = measurements.values.filter((each) => wanted.includes(conditionOf(each)))
+  // The order of measuring is the mapped `order`, else that of the file.
+  const placed = used.map((measurement, index) => ({ measurement, at: measurement.numbers['order'] ?? index })).sort((left, right) => left.at - right.at)
+  const readings = placed.map(({ measurement }, index): ConditionReading => ({ order: index + 1, value: measurement.value, condition: conditionOf(measurement), measurement }))
+  const absent = wanted.filter((condition) => !readings.some((each) => each.condition === condition))
+  if (absent.length === 0) return { measurements, readings, diagnostics: [] }
+  const found = [...new Set(measurements.values.map(conditionOf))]
+  return {
+    measurements, readings: [], because: `no reading under ${absent.join(', ')}`,
+    diagnostics: [diagnostic('assess/too-few-values', `No reading of \`${input.measurand.id}\` stands under ${absent.map((each) => `\`${each}\``).join(', ')}`, { place, actual: found.join(', '), expected: wanted.join(', '), mend: `Check \`conditions:\`; \`${options.conditions.column}\` must be a mapped field that holds these texts` })],
+  }
+}
