@@ -35,7 +35,7 @@ function linearDomain(low: number, high: number, ticks: number, room: number, en
   if (high <= 0 && padded.high > 0) padded.high = 0
   if (ends === 'open') {
     if (low > 0 && low < 0.15 * high) padded.low = 0
-    return { low: shortened(padded.low), high: shortened(padded.high), logarithmic: false }
+    return { ...padded, logarithmic: false }
   }
   const step = tickStep(padded.low, padded.high, ticks)
   const rounded = { low: stepsDown(padded.low, step), high: -stepsDown(-padded.high, step) }
@@ -60,10 +60,6 @@ function tickStep(low: number, high: number, count: number): number {
 function stepsDown(value: number, step: number): number {
   const steps = Math.floor(value / step + 1e-9)
   return Number((steps * step).toPrecision(12))
-}
-
-function shortened(value: number): number {
-  return Number(value.toPrecision(6))
 }
 
 function roundedTo(value: number, digits: number, direction: (value: number) => number): number {

@@ -1,6 +1,11 @@
 // Every single value on one axis, a row a group; values known only as below or above a bound are arrows, never dots.
 import type { Chart } from '../document.ts'
+import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
+import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
+import { arrowAbove, arrowBelow, chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
+import { field, pointMark, valueAxis, valueScale, yOffset } from './layers.ts'
+import { uprightLineData, uprightLineLayers } from './upright-lines.ts'
 
 export interface DotPlotChartInput {
   readonly xTitle: string
@@ -11,5 +16,35 @@ export interface DotPlotChartInput {
 }
 
 export function dotPlotChart(input: DotPlotChartInput): Chart {
-  throw new Error(`to come: ${input.width ?? ''}`)
+  const { dots, censored, lines } = input
+  const groups = namesInOrder(dots.map((each) => each.group), censored.map((each) => each.group))
+  const names = namesBeside(groups)
+  const rowHeight = Math.max(34, linesOf(names) * 10)
+  const frame = plotFrame(input.width, { left: roomBeside(names), height: rowHeight * Math.max(1, groups.length) })
+  const values = [...dots.map((each) => each.value), ...censored.map((each) => each.bound), ...lines.map((each) => each.value)]
+  const logarithmic = spansDecades(values)
+  const span = axisDomain(values, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic, ends: 'open' })
+  const shown = (group: string): string => names.shown.get(group) ?? group
+  const marks = groups.flatMap((group) => {
+    const here = [...dots.filter((each) => each.group === group), ...censored.filter((each) => each.group === group)]
+    const offsets = spread(here.map((each) => positionOn(span, 'bound' in each ? each.bound : each.value) * frame.plotWidth), rowHeight * 0.4)
+    return here.map((each, index) => ({ ...each, group: shown(group), offset: rowHeight / 2 + (offsets[index] ?? 0) }))
+  })
+  const y = { field: 'group', type: 'nominal', sort: null }
+  const arrow = { type: 'point', filled: false, size: 90, stroke: inks.data, strokeWidth: 1, opacity: 1 }
+  const specification = chartSpecification(frame, [
+    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: { ...field('value'), scale: valueScale(logarithmic), axis: valueAxis('x', input.xTitle, frame, logarithmic) }, y: { ...y, scale: { type: 'band' }, axis: { title: null, ...names.axis } } } },
+    ...uprightLineLayers(),
+    { data: { name: 'dots' }, mark: pointMark, encoding: { x: field('value'), y, yOffset } },
+    { data: { name: 'below' }, mark: { ...arrow, shape: arrowBelow }, encoding: { x: field('bound'), y, yOffset } },
+    { data: { name: 'above' }, mark: { ...arrow, shape: arrowAbove }, encoding: { x: field('bound'), y, yOffset } },
+  ], { height: { step: rowHeight } })
+  return {
+    specification,
+    data: {
+      span: groups.flatMap((group) => [span.low, span.high].map((value) => ({ group: shown(group), value }))),
+      ...uprightLineData(lines, span, frame),
+      dots: marks.filter((each) => 'value' in each), below: marks.filter((each) => 'direction' in each && each.direction === 'below'), above: marks.filter((each) => 'direction' in each && each.direction === 'above'),
+    },
+  }
 }

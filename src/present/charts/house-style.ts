@@ -11,7 +11,8 @@ export const inks = {
   grid: '#e4e8eb',
   data: '#1f4e6e',
   band: '#d8e3ea',
-  window: '#f0ebdf',
+  window: '#f1ece1',
+  bar: '#a9c0cf',
   limit: '#9c3a1e',
   excluded: '#5d6871',
   paper: '#ffffff',
@@ -50,11 +51,22 @@ export function plotFrame(width: ChartWidth = 'full', sides: { readonly left?: n
 }
 
 /** The specification of a chart of one plot; `rows` makes the height follow the number of categories instead. */
-export function chartSpecification(frame: PlotFrame, layer: readonly Fragment[], options: { readonly resolve?: Fragment; readonly height?: Fragment; readonly config?: Fragment } = {}): Fragment {
+export function chartSpecification(frame: PlotFrame, layer: readonly Fragment[], options: { readonly height?: Fragment } = {}): Fragment {
   return {
     usermeta: { frame: { left: frame.left, width: frame.total } },
     background: null, padding: 0, width: frame.plotWidth, height: options.height ?? frame.plotHeight,
-    layer, ...(options.resolve === undefined ? {} : { resolve: options.resolve }), config: houseConfig,
+    layer, config: houseConfig,
+  }
+}
+
+/** Panels below one another, each with its own value axis and the name of its level above it. */
+export function panelledSpecification(frame: PlotFrame, options: { readonly field: string; readonly data: string; readonly layer: readonly Fragment[] }): Fragment {
+  return {
+    usermeta: { frame: { left: frame.left, width: frame.total } },
+    background: null, padding: 0, data: { name: options.data }, spacing: 12,
+    facet: { field: options.field, type: 'nominal', sort: { field: 'panelOrder', op: 'min' } }, columns: 1,
+    spec: { width: frame.plotWidth, height: frame.plotHeight, layer: options.layer },
+    resolve: { scale: { y: 'independent' } }, config: houseConfig,
   }
 }
 

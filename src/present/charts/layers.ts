@@ -66,8 +66,25 @@ export function withSeries<T extends { readonly series?: string | undefined }>(p
 /** Full outline and half-clear filling: of points that lie on one another, each is seen. */
 export const pointMark: Fragment = { type: 'point', filled: true, size: pointSize, shape: 'circle', fill: inks.data, stroke: inks.data, fillOpacity: 0.45, opacity: 1, strokeWidth: 0.9 }
 export const excludedMark: Fragment = { type: 'point', filled: false, size: pointSize + 10, shape: 'circle', color: inks.excluded, fill: inks.paper, strokeWidth: 1 }
+/** A short thick line, unlike any point. */
+export const meanMark: Fragment = { type: 'rule', color: inks.text, strokeWidth: 1.6 }
 export const limitMark: Fragment = { type: 'rule', color: inks.limit, strokeWidth: 0.9, strokeDash: [4, 2.5] }
 export const zeroMark: Fragment = { type: 'rule', color: inks.axis, strokeWidth: 0.8 }
+
+const offset: Fragment = { field: 'offset', type: 'quantitative', scale: { type: 'linear', domain: [0, 1], range: [0, 1], zero: false, nice: false } }
+/** Points from the start of the band of a category; the scale is the identity, so that an offset is what it says. */
+export const xOffset: Fragment = offset
+export const yOffset: Fragment = offset
+
+/** An interval as a thin line with caps, from `low` to `high`. */
+export function capped(data: string, { channel, across }: { readonly channel: 'x' | 'y'; readonly across: Fragment }): readonly Fragment[] {
+  const other = channel === 'x' ? 'y' : 'x'
+  const cap = (end: string): Fragment => ({ data: { name: data }, mark: { type: 'point', filled: false, shape: channel === 'y' ? 'M-0.5,0L0.5,0' : 'M0,-0.5L0,0.5', size: 64, stroke: inks.text, strokeWidth: 0.8, opacity: 1 }, encoding: { [channel]: field(end), [other]: across } })
+  return [
+    { data: { name: data }, mark: { type: 'rule', color: inks.text, strokeWidth: 0.8 }, encoding: { [channel]: field('low'), [`${channel}2`]: { field: 'high' }, [other]: across } },
+    cap('low'), cap('high'),
+  ]
+}
 
 /** Text at a point of the data, moved by the offset of its row. */
 export function labelLayer(data: string, encoding: Fragment, mark: Fragment = {}): Fragment {

@@ -1,6 +1,10 @@
 // A signal trace with the windows it was read in and the values read from it. No smoothing: every point is drawn.
 import type { Chart } from '../document.ts'
+import { axisDomain, positionOn } from './axis-domain.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
+import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
+import { placeLabels } from './label-placement.ts'
+import { field, labelLayer, limitLayers, limitRequests, pointBox, rowsOf, spanLayer, spanRows, valueAxis, valueScale } from './layers.ts'
 
 export interface TraceChartInput {
   readonly xTitle: string
@@ -12,5 +16,34 @@ export interface TraceChartInput {
 }
 
 export function traceChart(input: TraceChartInput): Chart {
-  throw new Error(`to come: ${input.width ?? ''}`)
+  const { points, windows, lines } = input
+  const frame = plotFrame(input.width)
+  const spans = {
+    x: axisDomain([...points.map((point) => point.x), ...windows.flatMap((window) => [window.from, window.to])], { ticks: ticksAlong(frame.plotWidth, 60), room: 0.01, ends: 'open' }),
+    y: axisDomain([...points.map((point) => point.y), ...lines.map((line) => line.value)], { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 }),
+  }
+  const across = (value: number): number => positionOn(spans.x, value) * frame.plotWidth
+  const trace = points.map((point) => pointBox({ x: across(point.x), y: (1 - positionOn(spans.y, point.y)) * frame.plotHeight }))
+  const rows = [-4, -14, -24, -34, -44, -54]
+  const placed = placeLabels([
+    ...windows.map((window) => ({ text: window.label, x: across((window.from + window.to) / 2), y: 0, candidates: rows.map((dy) => ({ dx: 0, dy, align: 'center' as const })) })),
+    ...limitRequests(frame, spans.y, lines),
+  ], { left: 0, right: frame.plotWidth, top: -62, bottom: frame.plotHeight }, trace)
+  const [x, y] = [field('x'), field('y')]
+  const specification = chartSpecification(frame, [
+    { data: { name: 'windows' }, mark: { type: 'rect', color: inks.window, opacity: 1 }, encoding: { x: field('from'), x2: { field: 'to' } } },
+    spanLayer({ ...x, scale: valueScale(false), axis: valueAxis('x', input.xTitle, frame, false) }, { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) }),
+    { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('from') } },
+    { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('to') } },
+    labelLayer('windowLabels', { x: field('middle'), y: { value: 0 } }, { color: inks.quiet }),
+    ...limitLayers(field('value')),
+    { data: { name: 'points' }, mark: { type: 'line', color: inks.data, strokeWidth: 0.8, strokeJoin: 'round' }, encoding: { x, y } },
+  ])
+  return {
+    specification,
+    data: {
+      windows: rowsOf(windows), windowLabels: windows.map((window, index) => ({ middle: (window.from + window.to) / 2, label: window.label, ...placed[index] })),
+      span: spanRows(spans.x, spans.y), limits: rowsOf(lines), limitLabels: lines.map((line, index) => ({ ...line, ...placed[windows.length + index] })), points: rowsOf(points),
+    },
+  }
 }
