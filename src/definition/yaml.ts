@@ -1,88 +1,135 @@
 // YAML text → a tree in which every node keeps its place and every scalar the text as typed. All problems of the text are told at once.
-// Tabs, duplicate keys, aliases, several documents and what looks like a number but is none are errors, since each has cost a laboratory a result.
-import { type Document, isAlias, isMap, isScalar, isSeq, LineCounter, type Node, parseAllDocuments } from 'yaml'
+// Only the part of YAML that every program reads alike is taken: no anchors, tags or directives, and each key once.
+import { Composer, type Document, isAlias, isMap, isScalar, isSeq, Lexer, LineCounter, Parser } from 'yaml'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import type { Place } from '../diagnostics/place.ts'
 import type { StageResult } from '../diagnostics/stage-result.ts'
-import type { MapEntry, StudyNode } from './study-node.ts'
+import type { MapEntry, ScalarNode, StudyNode } from './study-node.ts'
+import { explainYamlError } from './yaml-errors.ts'
 
-const deepest = 24 // levels; a study has about eight
-const largest = 8 * 1024 * 1024 // characters; hundreds of measurands need a few hundred thousand
+const deepest = 40 // open collections; a study has about eight, and deeper text could exhaust the stack
+const longest = 2 * 1024 * 1024 // characters; a study with hundreds of measurands has some hundred thousand
 
+/** `place(from, to)` of offsets in the text; the underlined part ends with the line. */
+type PlaceOf = (from: number, to: number) => Place
+
+/** No value when the text is no YAML; a value beside errors when the rest can still be read. */
 export function readYaml(source: { readonly file: string; readonly text: string }): StageResult<StudyNode> {
   const text = source.text.replace(/^\uFEFF/, '')
   const lines = new LineCounter()
-  const place = (from: number, to: number): Place => {
+  const placeOf: PlaceOf = (from, to) => {
     const { line, col } = lines.linePos(Math.min(from, text.length))
-    const lineEnd = text.indexOf('\n', from)
-    return { file: source.file, line: Math.max(1, line), column: Math.max(1, col), length: Math.max(1, Math.min(to, lineEnd < 0 ? text.length : lineEnd) - from) }
+    const lineEnd = /[\r\n]|$/g
+    lineEnd.lastIndex = from
+    const end = lineEnd.exec(text)?.index ?? text.length
+    return { file: source.file, line: Math.max(1, line), column: Math.max(1, col), length: Math.max(1, Math.min(to, end) - from) }
   }
-  const problem = (message: string, at: Place, details: { readonly expected: string; readonly mend: string; readonly actual?: string }): Diagnostic => diagnostic('definition/not-yaml', message, { place: at, ...details })
   const start: Place = { file: source.file, line: 1, column: 1 }
-  if (text.length > largest) return { value: undefined, diagnostics: [problem('The study is too long', start, { expected: `at most ${largest} characters`, mend: 'Move data into raw files' })] }
-  const odd = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f\uFFFD]/.exec(text)
-  if (odd !== null) {
-    let line = 1
-    let from = 0
-    for (let index = text.indexOf('\n'); index >= 0 && index < odd.index; index = text.indexOf('\n', index + 1)) { line += 1; from = index + 1 }
-    return { value: undefined, diagnostics: [problem('Unexpected control character, or text that is not UTF-8', { file: source.file, line, column: odd.index - from + 1, length: 1 }, { actual: `U+${odd[0].charCodeAt(0).toString(16).toUpperCase().padStart(4, '0')}`, expected: 'plain text in UTF-8', mend: 'Remove the character, or save the study as UTF-8' })] }
+  if (text.length > longest) {
+    return refused([diagnostic('definition/too-long', 'The study is too long', { place: start, actual: `${text.length} characters`, expected: `at most ${longest} characters`, mend: 'Move data into raw files and name them under `data`' })])
   }
-  const documents: readonly Document.Parsed[] = [...parseAllDocuments(text, { lineCounter: lines, prettyErrors: false, uniqueKeys: true, version: '1.2', strict: true, merge: false, logLevel: 'silent' }) as Iterable<Document.Parsed>]
+  for (let index = text.indexOf('\n'), from = 0; ; from = index + 1, index = text.indexOf('\n', from)) {
+    lines.addNewLine(from)
+    if (index < 0) break
+  }
+  const control = controlCharacters(text, placeOf)
+  if (control.length > 0) return refused(control)
+  const read = documentOf(text, placeOf)
+  if (read.diagnostics.length > 0) return refused(read.diagnostics)
+  if (read.document?.contents == null) return refused([diagnostic('definition/empty-study', 'The study is empty', { place: start, actual: 'nothing but comments or blank lines', expected: 'a study definition', mend: 'Begin with `format: 1`' })])
   const diagnostics: Diagnostic[] = []
-  for (const document of documents) for (const error of [...document.errors, ...document.warnings]) {
-    const told = explained(error.code, error.message)
-    diagnostics.push(diagnostic(error.code === 'DUPLICATE_KEY' ? 'definition/duplicate-key' : 'definition/not-yaml', told.message, { place: place(error.pos[0], error.pos[1]), expected: told.expected, mend: told.mend }))
-  }
-  const first = documents[0]
-  if (documents.length > 1 && diagnostics.length === 0) diagnostics.push(problem('Unexpected second document', place(documents[1]?.range[0] ?? 0, documents[1]?.range[0] ?? 0), { expected: 'one study per file', mend: 'Remove the line `---`, or split the file' }))
-  if (first?.contents == null) {
-    if (diagnostics.length === 0) diagnostics.push(problem('The study is empty', start, { expected: 'a study definition', mend: 'Begin with `format: 1`' }))
-    return { value: undefined, diagnostics }
-  }
-  if (diagnostics.length > 0) return { value: undefined, diagnostics }
-  const walk = (node: Node | null, at: Place, depth: number): StudyNode => {
-    if (depth > deepest) {
-      diagnostics.push(problem('The study is nested too deeply', at, { expected: `at most ${deepest} levels`, mend: 'Remove levels' }))
-      return { kind: 'scalar', text: '', quoted: false, value: null, place: at }
-    }
-    if (node === null) return { kind: 'scalar', text: '', quoted: false, value: null, place: at }
-    const [from, to] = node.range ?? [0, 0]
-    const own = place(from, to)
-    if (isAlias(node) || ('anchor' in node && node.anchor !== undefined)) {
-      diagnostics.push(problem('Unexpected anchor or alias', own, { expected: 'everything written out', mend: 'Write the value where it is needed' }))
-      return { kind: 'scalar', text: '', quoted: false, value: null, place: own }
-    }
-    if (isMap(node)) {
-      return { kind: 'map', place: own, entries: node.items.map((item): MapEntry => {
-        const key = item.key as Node
-        const [keyFrom, keyTo] = key.range ?? [from, from]
-        const keyPlace = place(keyFrom, keyTo)
-        if (!isScalar(key)) diagnostics.push(problem('Unexpected key that is no plain text', keyPlace, { expected: 'a word', mend: 'Write a word before the colon' }))
-        return { key: isScalar(key) ? (key.source ?? String(key.value)) : '', keyPlace, value: walk(item.value as Node | null, keyPlace, depth + 1) }
-      }) }
-    }
-    if (isSeq(node)) return { kind: 'list', place: own, items: node.items.map((item) => walk(item as Node | null, own, depth + 1)) }
-    if (isScalar(node)) {
-      const quoted = node.type === 'QUOTE_DOUBLE' || node.type === 'QUOTE_SINGLE'
-      const block = node.type === 'BLOCK_FOLDED' || node.type === 'BLOCK_LITERAL'
-      const value = node.value
-      return {
-        kind: 'scalar', quoted: quoted || block, place: own, text: quoted || block || node.source === undefined ? String(value ?? '') : node.source.trim().replace(/\s*\n\s*/g, ' '),
-        value: typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean' || value === null ? value : String(value),
-      }
-    }
-    throw new Error('a kind of YAML node that YAML does not have')
-  }
-  const value = walk(first.contents, start, 0)
-  return { value: diagnostics.length > 0 ? undefined : value, diagnostics }
+  const value = walk(read.document.contents, start, (found) => diagnostics.push(found), placeOf)
+  return { value, diagnostics }
 }
 
-function explained(code: string, message: string): { readonly message: string; readonly expected: string; readonly mend: string } {
-  const first = message.split('\n')[0]?.replace(/\.$/, '') ?? message
-  switch (code) {
-    case 'TAB_AS_INDENT': return { message: 'Unexpected tab', expected: 'spaces before a key', mend: 'Replace the tab by spaces' }
-    case 'DUPLICATE_KEY': return { message: 'Unexpected second key of the same name', expected: 'each key once', mend: 'Remove one of the two, or rename it' }
-    case 'BAD_INDENT': case 'MISSING_CHAR': case 'BLOCK_AS_IMPLICIT_KEY': case 'MULTILINE_IMPLICIT_KEY': return { message: `Cannot read this as YAML: ${first}`, expected: '`key: value`, indented with spaces like its neighbours', mend: 'Correct the indentation, the colon or the bracket here or in the line before' }
-    default: return { message: `Cannot read this as YAML: ${first}`, expected: 'YAML', mend: 'Correct the line; a text with a colon, a number sign or brackets needs quotes' }
+function refused(diagnostics: readonly Diagnostic[]): StageResult<StudyNode> {
+  return { value: undefined, diagnostics }
+}
+
+/** Controls and direction marks deceive the eye of whoever reviews the study; U+FFFD is what a wrong encoding leaves. */
+function controlCharacters(text: string, placeOf: PlaceOf): readonly Diagnostic[] {
+  return [...text.matchAll(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u0084\u0086-\u009f\u200e\u200f\u202a-\u202e\u2066-\u2069\ufeff\ufffd]/g)].map((match) => {
+    const number = `U+${match[0].charCodeAt(0).toString(16).toUpperCase().padStart(4, '0')}`
+    const [message, mend] = match[0] === '\ufffd'
+      ? ['Unexpected bytes that are not UTF-8', 'Save the study as UTF-8']
+      : [`Unexpected invisible character ${number}`, 'Remove the character']
+    return diagnostic('definition/control-character', message, { place: placeOf(match.index, match.index + 1), actual: number, expected: 'visible text in UTF-8', mend })
+  })
+}
+
+/** A document with diagnostics is not to be trusted. */
+function documentOf(text: string, placeOf: PlaceOf): { readonly document?: Document.Parsed | undefined; readonly diagnostics: readonly Diagnostic[] } {
+  // The tree is built only after its depth is known, since building it is recursive.
+  const parser = new Parser()
+  const tokens = []
+  let offset = 0
+  for (const lexeme of new Lexer().lex(text)) {
+    tokens.push(...parser.next(lexeme))
+    if (parser.stack.length > deepest) {
+      return { diagnostics: [diagnostic('definition/too-deep', 'The study is nested too deeply', { place: placeOf(offset, offset + 1), expected: `at most ${deepest} levels`, mend: 'Remove levels, or close brackets that are open' })] }
+    }
+    offset += /^[\u0002\u001f\u0018]$/.test(lexeme) ? 0 : lexeme.replace(/^\ufeff/, '').length
   }
+  tokens.push(...parser.end())
+  const documents = [...new Composer({ version: '1.2', uniqueKeys: false, strict: true, merge: false, prettyErrors: false, logLevel: 'silent' }).compose(tokens)]
+  const told = new Set<number>() // one place, one diagnostic: what follows from an error is no news
+  const diagnostics = documents.flatMap((document) => [...document.errors, ...document.warnings]).flatMap((error) => {
+    const [from, to] = error.pos
+    if (told.has(from)) return []
+    told.add(from)
+    return [explainYamlError(error.code, placeOf(from, to), text.slice(from, from + 1))]
+  })
+  const second = documents[1]
+  if (second !== undefined) {
+    diagnostics.push(diagnostic('definition/several-documents', 'Unexpected second document', { place: placeOf(second.range[0], second.range[0] + 1), actual: `${documents.length} documents`, expected: 'one study in one file', mend: 'Remove the line `---`, or split the file' }))
+  }
+  const first = documents[0]
+  if (first !== undefined && (first.directives.yaml.explicit === true || text.startsWith('%'))) diagnostics.push(feature('directive', placeOf(0, 1), 'Remove the lines that begin with `%`'))
+  return { document: first, diagnostics }
+}
+
+function feature(what: string, place: Place, mend: string): Diagnostic {
+  return diagnostic('definition/yaml-feature', `Unexpected ${what}`, { place, expected: 'plain YAML: keys, lists and texts, each written out', mend })
+}
+
+/** `at` is the place of the key, where an empty value or a missing key is told. */
+function walk(node: unknown, at: Place, report: (found: Diagnostic) => void, placeOf: PlaceOf): StudyNode {
+  const nothing: ScalarNode = { kind: 'scalar', text: '', quoted: false, value: null, place: at }
+  if (isAlias(node)) {
+    report(feature(`alias \`*${node.source}\``, placeOf(node.range?.[0] ?? 0, node.range?.[1] ?? 0), 'Write the value itself'))
+    return nothing
+  }
+  if (!isMap(node) && !isSeq(node) && !isScalar(node)) return nothing
+  const [from, to] = node.range ?? [0, 0]
+  const place = placeOf(from, to)
+  if (node.anchor !== undefined) report(feature(`anchor \`&${node.anchor}\``, place, 'Remove the anchor and write the value wherever it is needed'))
+  if (node.tag !== undefined && node.srcToken !== undefined) report(feature(`tag \`${node.tag}\``, place, 'Remove the tag; put a text into quotes instead'))
+  if (isMap(node)) {
+    const seen = new Map<string, Place>()
+    const entries = node.items.flatMap((item): readonly MapEntry[] => {
+      const key = item.key
+      const range = isMap(key) || isSeq(key) || isScalar(key) || isAlias(key) ? key.range : undefined
+      const keyPlace = range == null ? place : placeOf(range[0], range[1])
+      if (!isScalar(key) || key.value === null) report(feature('key that is no word', keyPlace, 'Write a word before the colon'))
+      const word = isScalar(key) ? textOf(key) : ''
+      const earlier = seen.get(word)
+      if (earlier !== undefined && word !== '') {
+        report(diagnostic('definition/duplicate-key', `Unexpected second key \`${word}\``, { place: keyPlace, actual: word, expected: 'each key once in its map', mend: 'Remove one of the two, or rename it', related: [{ message: `the first \`${word}\``, place: earlier }] }))
+        return []
+      }
+      seen.set(word, keyPlace)
+      return [{ key: word, keyPlace, value: walk(item.value, keyPlace, report, placeOf) }]
+    })
+    return { kind: 'map', place: node.flow === true ? place : at, entries }
+  }
+  if (isSeq(node)) return { kind: 'list', place: node.flow === true ? place : at, items: node.items.map((item) => walk(item, isMap(item) || isSeq(item) || isScalar(item) ? placeOf(item.range?.[0] ?? from, item.range?.[1] ?? from) : place, report, placeOf)) }
+  const { value } = node
+  if (node.source === '' && value === null) return nothing
+  const text = textOf(node)
+  return { kind: 'scalar', text, quoted: node.type !== 'PLAIN', place, value: typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean' || value === null ? value : text }
+}
+
+/** As typed for a plain scalar (`5.0` is not `5`); between the quotes for a quoted one. */
+function textOf(scalar: { readonly value: unknown; readonly source?: string; readonly type?: string }): string {
+  return scalar.type === 'PLAIN' ? (scalar.source ?? String(scalar.value)) : String(scalar.value)
 }

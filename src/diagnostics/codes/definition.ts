@@ -3,6 +3,15 @@ import type { CodeEntry } from './entry.ts'
 
 export const definitionCodes = {
   'definition/not-yaml': { severity: 'error', help: 'The study cannot be read as YAML' },
+  'definition/tab': { severity: 'error', help: 'A tab stands where YAML takes spaces only' },
+  'definition/control-character': { severity: 'error', help: 'The study holds an invisible character, or is not stored as UTF-8' },
+  'definition/yaml-feature': { severity: 'error', help: 'The study uses a part of YAML that programs read differently: anchors, tags, directives, keys that are no words' },
+  'definition/several-documents': { severity: 'error', help: 'The file holds more than one YAML document' },
+  'definition/too-deep': { severity: 'error', help: 'The study is nested deeper than any study needs' },
+  'definition/too-long': { severity: 'error', help: 'The study is longer than any study needs; data belong into raw files' },
+  'definition/empty-study': { severity: 'error', help: 'The study file holds no study' },
+  'definition/ambiguous-word': { severity: 'error', help: 'A word that some YAML readers take for true, false or nothing stands without quotes' },
+  'definition/ambiguous-number': { severity: 'error', help: 'A number is written in a form that programs read differently, such as 1,5 or 1e3' },
   'definition/duplicate-key': { severity: 'error', help: 'A key stands twice in one map, so one of the two would be lost' },
   'definition/wrong-type': { severity: 'error', help: 'A key holds another kind of value than the study format asks for' },
   'definition/unknown-unit': { severity: 'error', help: 'A unit is not in the table of units' },
