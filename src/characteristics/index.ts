@@ -3,9 +3,11 @@ import type { Characteristic } from './characteristic.ts'
 import { comparison } from './comparison/index.ts'
 import { detection } from './detection/index.ts'
 import { linearity } from './linearity/index.ts'
+import { precision } from './precision/index.ts'
 
 export const catalogue: readonly Characteristic[] = [
   linearity,
   detection,
+  precision,
   comparison,
 ]
