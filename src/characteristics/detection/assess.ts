@@ -127,7 +127,7 @@ function quantitationFinding(setting: Setting, governs: Computed | undefined, na
   const limit = governs?.detail.quantitationLimit
   if (governs === undefined || limit === undefined) {
     const silent = detectionOnly.some((each) => each === name) && governs?.detail.because === undefined
-    return { metric, because: governs?.detail.because ?? (silent ? `${name ?? ''} gives no quantitation limit, and \`govern-quantitation\` names no other definition` : 'no definition governs') }
+    return { metric, because: governs?.detail.because ?? (silent ? `${name ?? ''} gives no quantitation limit, and the study names no other definition for it` : 'no definition governs') }
   }
   const inside = tested !== undefined && limit >= tested.lowest && limit <= tested.highest
   if (!inside && !confirmed.confirmed.some((level) => level <= limit)) {
@@ -138,7 +138,7 @@ function quantitationFinding(setting: Setting, governs: Computed | undefined, na
     }))
     return { metric, because }
   }
-  return { metric, value: limit, ...governingParts(governs), ...quantitationInterval(governs.detail) }
+  return { metric, value: limit, ...governingParts(governs, governs.detail.quantitationMethod), ...quantitationInterval(governs.detail) }
 }
 
 /** The lowest level at which enough results were obtained; their recovery and scatter are judged by their own criteria. */
@@ -156,8 +156,8 @@ function confirmedFinding({ options, input, notice }: Setting, governs: Computed
   return { metric, value: level, n: results.n ?? 0, method: 'lowest level with confirming results', source: results.source, evidence: results.evidence }
 }
 
-function governingParts({ detail, evidence }: Computed): Pick<FindingDraft, 'method' | 'source' | 'evidence' | 'n' | 'df'> {
-  return { method: `${detail.definition}: ${detail.method}`, source: detail.source, evidence, ...(detail.n === undefined ? {} : { n: detail.n }), ...(detail.df === undefined ? {} : { df: detail.df }) }
+function governingParts({ detail, evidence }: Computed, method = detail.method): Pick<FindingDraft, 'method' | 'source' | 'evidence' | 'n' | 'df'> {
+  return { method: `${detail.definition}: ${method}`, source: detail.source, evidence, ...(detail.n === undefined ? {} : { n: detail.n }), ...(detail.df === undefined ? {} : { df: detail.df }) }
 }
 
 function withoutRepeats(findings: readonly FindingDraft[]): readonly FindingDraft[] {

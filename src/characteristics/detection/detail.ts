@@ -27,6 +27,8 @@ export interface DefinitionDetail {
   readonly definition: DefinitionName
   /** The scatter it multiplies, in words, and in which unit it stands. */
   readonly scatter?: { readonly kind: string; readonly value: number; readonly unit: 'response' | 'measurand' } | undefined
+  /** What the limit rests on when that is no scatter. */
+  readonly basis?: string | undefined
   readonly detectionFactor?: number | undefined
   readonly quantitationFactor?: number | undefined
   /** Square root of 1/m + 1/n_b, when results are means or blanks are subtracted. */
@@ -39,7 +41,9 @@ export interface DefinitionDetail {
   readonly interval?: FindingInterval | undefined
   readonly n?: number | undefined
   readonly df?: number | undefined
+  /** Of the detection limit. */
   readonly method: string
+  readonly quantitationMethod?: string | undefined
   readonly source: string
   readonly because?: string | undefined
 }

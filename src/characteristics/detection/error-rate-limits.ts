@@ -13,7 +13,7 @@ export interface ErrorRateOutcome extends Outcome {
   readonly distribution?: DistributionDetail | undefined
 }
 
-const currie = { definition: 'critical value', method: 'Student t critical value and noncentral t minimum detectable value of the net signal of blanks', source: 'IUPAC Recommendations 1995, Pure Appl. Chem. 67, 1699' } as const
+const currie = { definition: 'critical value', method: 'critical value by Student t, minimum detectable value by noncentral t, of the net signal of blanks', quantitationMethod: '10 × net standard deviation of blanks / slope', source: 'IUPAC Recommendations 1995, Pure Appl. Chem. 67, 1699' } as const
 const iso = { definition: 'ISO 11843-2', method: 'critical and minimum detectable net value from the calibration line, noncentral t, constant standard deviation', source: 'ISO 11843-2:2000, basic method' } as const
 
 export function criticalValue(setting: Setting): ErrorRateOutcome {
@@ -63,13 +63,13 @@ function found(detail: DefinitionDetail, evidence: Outcome['evidence'], netStand
 
 /** Normal densities of a blank and of a sample at the minimum detectable value, on one net scale. */
 function distributionOf(definition: DefinitionDetail['definition'], critical: number, detectionLimit: number, standardDeviation: number): DistributionDetail {
-  const steps = 80
+  const steps = 120
   const [from, to] = [-4 * standardDeviation, detectionLimit + 4 * standardDeviation]
   const density = (x: number, centre: number): number => Math.exp(-(((x - centre) / standardDeviation) ** 2) / 2) / (standardDeviation * Math.sqrt(2 * Math.PI))
   const curve = (name: string, centre: number): DistributionDetail['curves'][number] => ({
     name, points: Array.from({ length: steps + 1 }, (_, index) => from + ((to - from) * index) / steps).map((x) => ({ x, density: density(x, centre) })),
   })
-  return { definition, criticalValue: critical, detectionLimit, standardDeviation, curves: [curve('blank', 0), curve('sample at the detection limit', detectionLimit)] }
+  return { definition, criticalValue: critical, detectionLimit, standardDeviation, curves: [curve('blank', 0), curve('sample', detectionLimit)] }
 }
 
 function nothing(setting: Setting, about: typeof currie | typeof iso, because: string): ErrorRateOutcome {

@@ -64,11 +64,11 @@ function partFindings(setting: Setting, detail: MdlDetail, evidence: Outcome['ev
 }
 
 /** Which of the two limits is the larger one, and the scatter it rests on. */
-function governingSide({ spikes, blanks, limit }: MethodDetectionLimit): { readonly from: string; readonly n: number; readonly df?: number; readonly detail: Pick<DefinitionDetail, 'scatter' | 'detectionFactor'> } {
+function governingSide({ spikes, blanks, limit }: MethodDetectionLimit): { readonly from: string; readonly n: number; readonly df?: number; readonly detail: Pick<DefinitionDetail, 'scatter' | 'basis' | 'detectionFactor'> } {
   if (limit === spikes.limit) {
     return { from: 'from spikes', n: spikes.n, df: spikes.n - 1, detail: { scatter: { kind: 'standard deviation of spikes', value: spikes.standardDeviation, unit: 'measurand' }, detectionFactor: spikes.t } }
   }
-  if (blanks.standardDeviation === undefined) return { from: `from blanks, ${blanks.rule}`, n: blanks.n, detail: {} }
+  if (blanks.standardDeviation === undefined) return { from: `from blanks, ${blanks.rule}`, n: blanks.n, detail: { basis: `${blanks.rule} of ${blanks.n}` } }
   return { from: `from blanks, ${blanks.rule}`, n: blanks.n, df: blanks.n - 1, detail: { scatter: { kind: 'standard deviation of blanks', value: blanks.standardDeviation, unit: 'measurand' } } }
 }
 

@@ -30,7 +30,7 @@ export function limitsFound(detail: DefinitionDetail, evidence: readonly Evidenc
   const about = { condition: detail.definition, method: detail.method, source: detail.source, evidence, ...(detail.n === undefined ? {} : { n: detail.n }), ...(detail.df === undefined ? {} : { df: detail.df }) }
   const limits: FindingDraft[] = []
   if (detail.detectionLimit !== undefined) limits.push({ ...about, metric: 'detection-limit-by-definition', value: detail.detectionLimit, ...(detail.interval === undefined ? {} : { interval: detail.interval }) })
-  if (detail.quantitationLimit !== undefined) limits.push({ ...about, metric: 'quantitation-limit-by-definition', value: detail.quantitationLimit, ...quantitationInterval(detail) })
+  if (detail.quantitationLimit !== undefined) limits.push({ ...about, metric: 'quantitation-limit-by-definition', value: detail.quantitationLimit, method: detail.quantitationMethod ?? detail.method, ...quantitationInterval(detail) })
   return { detail, evidence, findings: [...limits, ...extra], notEvaluable: [] }
 }
 

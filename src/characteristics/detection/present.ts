@@ -34,7 +34,7 @@ function summary({ detail, measurand }: Detection): ReportBlock {
   const untested = reported.quantitation !== undefined && governing.quantitation !== 'confirmed level' && confirmation === undefined
   return paragraph(
     reported.detection === undefined ? textOf('No detection limit can be reported.') : sentence`The detection limit is ${printed(reported.detection, three)} ${measurand.unit} by ${governing.detection ?? ''}, ${because}.`,
-    reported.quantitation === undefined ? textOf('No quantitation limit can be reported.') : sentence`The quantitation limit is ${printed(reported.quantitation, three)} ${measurand.unit} by ${governing.quantitation ?? ''}.`,
+    reported.quantitation === undefined ? textOf('No quantitation limit can be reported.') : sentence`The quantitation limit is ${printed(reported.quantitation, three)} ${measurand.unit}, ${governing.quantitation === 'confirmed level' ? 'the lowest level with confirming results' : `by ${governing.quantitation ?? ''}`}.`,
     untested && tested !== undefined ? sentence`It lies within the tested levels, ${asTyped(tested.lowest)} to ${asTyped(tested.highest)} ${measurand.unit}; no dataset of results at this limit was given to confirm it.` : [],
     spread === undefined ? [] : sentence`The definitions give detection limits from ${printed(spread.lowest, three)} to ${printed(spread.highest, three)} ${measurand.unit}, a factor of ${printed(spread.ratio, { significant: 2 })} apart, because they multiply different measures of scatter.`,
   )
@@ -43,20 +43,21 @@ function summary({ detail, measurand }: Detection): ReportBlock {
 function definitionExhibits(presented: Detection): readonly ReportBlock[] {
   const { detail, measurand, prefix } = presented
   const { definitions, settings } = detail
-  const items = definitions.flatMap(({ definition, criticalValue, detectionLimit, quantitationLimit }) => [
+  const confirmed = detail.governing.quantitation === 'confirmed level' ? detail.reported.quantitation : undefined
+  const items = [...definitions.flatMap(({ definition, criticalValue, detectionLimit, quantitationLimit }) => [
     ...(criticalValue === undefined ? [] : [{ label: definition, value: criticalValue, kind: 'critical value', governing: false }]),
     ...(detectionLimit === undefined ? [] : [{ label: definition, value: detectionLimit, kind: 'detection limit', governing: detail.governing.detection === definition }]),
-    ...(quantitationLimit === undefined ? [] : [{ label: definition, value: quantitationLimit, kind: 'quantitation limit', governing: detail.governing.quantitation === definition }]),
-  ])
+    ...(quantitationLimit === undefined ? [] : [{ label: definition, value: quantitationLimit, kind: 'quantitation limit', governing: detail.reported.quantitation !== undefined && detail.governing.quantitation === definition }]),
+  ]), ...(confirmed === undefined ? [] : [{ label: 'confirmed level', value: confirmed, kind: 'quantitation limit', governing: true }])]
   const exhibit = table({
     id: `${prefix}-definitions`, caption: `Lower limits of ${measurand.name} by each definition`,
     columns: [
       column('Definition', { align: 'text', rowHeader: true }), column('Scatter it rests on', { align: 'text' }), column('Critical value', { unit: measurand.unit }), column('Detection limit', { unit: measurand.unit }),
       column(`${asPercent(presented.confidence)} interval`, { unit: measurand.unit, align: 'text' }), column('Quantitation limit', { unit: measurand.unit }), column('n'), column('df'),
     ],
-    rows: definitions.map((each) => definitionRow(presented, each)),
+    rows: [...definitions.map((each) => definitionRow(presented, each)), ...(confirmed === undefined ? [] : [row(governingName('confirmed level', 'quantitation'), 'lowest level with confirming results', '', '', '', number(confirmed), '', '')])],
     notes: [
-      ...definitions.map((each) => `${each.definition}: ${each.method} (${each.source}).`),
+      ...definitions.map((each) => `${each.definition}: ${each.method}${each.quantitationMethod === undefined ? '' : `; quantitation: ${each.quantitationMethod}`} (${each.source}).`),
       ...[...new Set(definitions.flatMap((each) => each.interval?.method ?? []))].map((method) => `Interval of the detection limit: ${method}.`),
       ...(definitions.some((each) => each.criticalValue !== undefined) ? [sentence`Risk of a false detection ${asTyped(settings.alpha)}, of a missed one ${asTyped(settings.beta)}; the other definitions state no risk.`] : []),
       ...netNote(detail),
@@ -66,16 +67,21 @@ function definitionExhibits(presented: Detection): readonly ReportBlock[] {
   return [exhibit, figure({
     id: `${prefix}-definitions-chart`, caption: `Lower limits of ${measurand.name} by each definition; filled marks govern`,
     alternative: `Limits in ${measurand.unit}. ${items.map((each) => `${each.label}, ${each.kind}: ${numberText(each.value, three)}${each.governing ? ', governing' : ''}`).join('; ')}.`,
-    chart: definitionsChart({ xTitle: axis(measurand), items, lines: [...criterionLines(presented, 'detection-limit'), ...criterionLines(presented, 'quantitation-limit')] }),
+    chart: definitionsChart({ xTitle: axis(measurand), items, lines: [...criterionLines(presented, 'detection'), ...criterionLines(presented, 'quantitation')] }),
   })]
 }
 
 function definitionRow({ detail, measurand }: Detection, each: DefinitionDetail): ExhibitRow {
-  const roles = [detail.governing.detection === each.definition ? 'detection' : '', detail.governing.quantitation === each.definition && each.quantitationLimit !== undefined ? 'quantitation' : ''].filter((role) => role !== '')
-  const name: Words = roles.length === 0 ? each.definition : [{ type: 'strong', children: [{ type: 'text', value: each.definition }] }, { type: 'text', value: ` (governs ${roles.join(' and ')})` }]
+  const { governing, reported } = detail
+  const roles = [governing.detection === each.definition && reported.detection !== undefined ? 'detection' : '', governing.quantitation === each.definition && reported.quantitation !== undefined ? 'quantitation' : ''].filter((role) => role !== '')
+  const name = roles.length === 0 ? each.definition : governingName(each.definition, roles.join(' and '))
   if (each.because !== undefined) return row(name, `not evaluable: ${each.because}`, '', '', '', '', '', '')
-  const scatter = each.scatter === undefined ? [] : sentence`${each.scatter.kind}, ${printed(each.scatter.value)} ${each.scatter.unit === 'response' ? measurand.responseUnit ?? '' : measurand.unit}`
+  const scatter = each.scatter === undefined ? each.basis ?? '' : sentence`${each.scatter.kind}, ${printed(each.scatter.value)} ${each.scatter.unit === 'response' ? measurand.responseUnit ?? '' : measurand.unit}`
   return row(name, scatter, number(each.criticalValue), number(each.detectionLimit), intervalWords(each.interval, three), number(each.quantitationLimit), each.n === undefined ? '' : count(each.n), each.df === undefined ? '' : degreesOfFreedom(each.df))
+}
+
+function governingName(definition: string, roles: string): readonly Inline[] {
+  return [{ type: 'strong', children: [{ type: 'text', value: definition }] }, { type: 'text', value: ` (governs ${roles})` }]
 }
 
 function netNote({ definitions, settings }: DetectionDetail): readonly Words[] {
@@ -259,7 +265,7 @@ function limitLines({ reported, definitions, governing }: DetectionDetail): read
   ]
 }
 
-function criterionLines({ verdicts }: Detection, metric: string): readonly { readonly value: number; readonly label: string }[] {
-  const found = verdicts.filter((each) => each.metric === metric)
-  return found.flatMap(({ limit, criterion }) => (limit.kind === 'between' ? [limit.low.value, limit.high.value] : [limit.bound.value]).map((value) => ({ value, label: criterion })))
+function criterionLines({ verdicts }: Detection, kind: 'detection' | 'quantitation'): readonly { readonly value: number; readonly label: string }[] {
+  const found = verdicts.filter((each) => each.metric === `${kind}-limit`)
+  return found.flatMap(({ limit, criterion }) => (limit.kind === 'between' ? [limit.low.value, limit.high.value] : [limit.bound.value]).map((value) => ({ value, label: `${kind} ${criterion}` })))
 }

@@ -131,11 +131,12 @@ export function blankFindings(scatter: Pick<Scatter, 'value' | 'unit' | 'concent
   ]
 }
 
-function about(setting: Setting, definition: ScatterDefinition): { readonly method: string; readonly source: string } {
+function about(setting: Setting, definition: ScatterDefinition): { readonly method: string; readonly quantitationMethod: string; readonly source: string } {
   const { convention } = setting.options
   const net = definition === 'blank scatter' && netFactorOf(setting) !== 1
+  const scatter = `${scatterKinds[definition]}${net ? ' × net factor' : ''} / slope`
   return {
-    method: `${convention === '3 s' ? '3' : '3.3'} × ${scatterKinds[definition]}${net ? ' × net factor' : ''} / slope; quantitation 10 ×`,
+    method: `${convention === '3 s' ? '3' : '3.3'} × ${scatter}`, quantitationMethod: `10 × ${scatter}`,
     source: convention === '3 s' ? 'IUPAC convention of 3 s, quantitation 10 s' : 'ICH Q2(R2), standard deviation of the response and slope',
   }
 }

@@ -101,14 +101,15 @@ function limits(level: number, measured: MeasuredRatio, evidence: Outcome['evide
     ...about(convention), scatter: { kind: `${convention === 'rms' ? 'standard deviation' : 'peak-to-peak noise'} of ${kind}`, value: noise, unit: 'response' },
     detectionFactor: detectionRatio, quantitationFactor: quantitationRatio, detectionLimit: (level * detectionRatio) / ratio, quantitationLimit: (level * quantitationRatio) / ratio, n, ...(df === undefined ? {} : { df }),
   }
-  const found: FindingDraft = { metric: 'signal-to-noise', level, value: ratio, n, ...(df === undefined ? {} : { df }), method: detail.method, source: detail.source, evidence }
+  const found: FindingDraft = { metric: 'signal-to-noise', level, value: ratio, n, ...(df === undefined ? {} : { df }), method: convention === 'rms' ? 'H/s' : '2H/h', source: detail.source, evidence }
   return limitsFound(detail, evidence, [found])
 }
 
-function about(convention: Convention | undefined): Pick<DefinitionDetail, 'definition' | 'method' | 'source'> {
+function about(convention: Convention | undefined): Pick<DefinitionDetail, 'definition' | 'method' | 'quantitationMethod' | 'source'> {
+  const ratio = convention === 'rms' ? 'ratio H/s of height and standard deviation of the noise' : 'ratio 2H/h of height and peak-to-peak noise'
   return {
     definition: 'signal to noise', source: 'ICH Q2(R2), signal to noise of 3 and 10',
-    method: convention === 'rms' ? 'ratio H/s of height and standard deviation of the noise, scaled to 3 and 10' : 'ratio 2H/h of height and peak-to-peak noise, scaled to 3 and 10',
+    method: `level × 3 / ${ratio}`, quantitationMethod: `level × 10 / ${ratio}`,
   }
 }
 
