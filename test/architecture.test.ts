@@ -78,7 +78,7 @@ const doorways: Readonly<Record<string, RegExp>> = {
   'vega': /^publish\/chart\.ts$/,
   'vega-lite': /^publish\/chart\.ts$/,
   'pdfkit': /^publish\/pdf\//,
-  'fontkit': /^publish\/fonts\.ts$/,
+  'fontkit': /^publish\/(fonts|pdf\/pdfkit-augmented\.d)\.ts$/,
   'fflate': /^publish\/pdf\//,
   'unified': /^present\/template\.ts$/,
   'remark-parse': /^present\/template\.ts$/,
@@ -117,7 +117,7 @@ test('every file begins with a header comment', () => {
 })
 
 test('no default export, no enum, no any', () => {
-  const broken = files.filter((file) => !file.path.endsWith('.d.ts')).filter((file) => /^export default|^\s*(export )?(const )?enum |:\s*any\b|\bas any\b|<any>/m.test(file.text))
+  const broken = files.filter((file) => !file.path.endsWith('.d.ts')).filter((file) => /^export default|^\s*(export )?(const )?enum |:\s*any\b|\bas any\b|<any>/m.test(file.text.replace(/\/\/.*|\/\*[\s\S]*?\*\//g, '')))
   expect(broken.map((file) => file.path)).toEqual([])
 })
 

@@ -20,14 +20,14 @@ export const commandHelp: Readonly<Record<string, string>> = {
   --json              diagnostics and outcome as one JSON document on standard output
   --fail-on-verdict   exit with 3 when the overall verdict is not "meets"
 
-  Example:  assaywrit report chloride-2026/study.yaml --out dossiers`,
+  Example:  assaywrit report dye-2026/study.yaml --out dossiers`,
   check: `assaywrit check STUDY… [--json]
 
   Reads everything a report would read, says everything that is wrong, writes nothing.
 
   --json              diagnostics as one JSON document on standard output
 
-  Example:  assaywrit check chloride-2026/study.yaml`,
+  Example:  assaywrit check dye-2026/study.yaml`,
   schema: `assaywrit schema
 
   Prints the JSON Schema of a study definition, for editors that complete and explain YAML.

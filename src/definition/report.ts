@@ -4,9 +4,9 @@ import { date, defaulted, located, number, object, oneOf, optional, type ReadBy,
 import type { NumericRules, ReportIdentity } from './study.ts'
 
 export const reportReader = object({
-  number: required(text({ describe: 'Number of the report, unique in the laboratory', example: 'GHW-VR-014' })),
+  number: required(text({ describe: 'Number of the report, unique in the laboratory', example: 'VR-014' })),
   revision: required(number({ describe: 'Revision of the report, from 1', integer: true, minimum: 1, example: 1 })),
-  title: required(text({ describe: 'Title of the report', example: 'Chloride in process water by ion chromatography' })),
+  title: required(text({ describe: 'Title of the report', example: 'Dye in rinse water by photometry' })),
   kind: required(oneOf(['full validation', 'partial validation', 'verification', 'transfer'], { describe: 'What kind of study this is' })),
   date: required(date({ describe: 'Date of the report, the only date the document knows', example: '2026-04-17' })),
   language: defaulted(oneOf(['en'], { describe: 'Language of the report' }), 'en'),
@@ -27,7 +27,7 @@ export function checkReport(report: ReportIdentity, place: Diagnostic['place']):
 }
 
 export const methodReader = object({
-  number: required(text({ describe: 'Number of the method', example: 'GHW-M-031' })),
+  number: required(text({ describe: 'Number of the method', example: 'M-031' })),
   revision: optional(text({ describe: 'Revision of the method' })),
   title: optional(text({ describe: 'Title of the method' })),
   technique: required(text({ describe: 'Measuring technique', example: 'ion chromatography' })),

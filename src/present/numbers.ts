@@ -37,6 +37,11 @@ export function asTyped(value: number): NumberNode {
   return { type: 'number', value, text: exponentText(withTrueMinus(String(value))) }
 }
 
+/** A fraction of the record (0.95) as percent (95), without its sign. */
+export function asPercent(fraction: number): NumberNode {
+  return { type: 'number', value: fraction, text: String(Number((fraction * 100).toPrecision(6))) }
+}
+
 export function numberText(value: number, format: NumberFormat = {}): string {
   if (!Number.isFinite(value)) throw new Error('a number of the record is not finite')
   if (format.decimals !== undefined) return withTrueMinus(roundHalfUp(value, format.decimals).text)

@@ -6,7 +6,7 @@ import type { ReportBlock } from './document.ts'
 
 export interface Presented<Detail> {
   readonly title: string
-  /** Block id, `linearity` or `linearity.low`; prefix of every exhibit id together with the measurand: `linearity-chloride-fit`. */
+  /** Block id, `linearity` or `linearity.low`; prefix of every exhibit id together with the measurand: `linearity-dye-fit`. */
   readonly block: string
   readonly measurand: Measurand
   /** Prefix for exhibit ids, safe in file names. */

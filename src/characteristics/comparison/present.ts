@@ -4,7 +4,7 @@ import { differenceChart } from '../../present/charts/difference-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import { sequenceChart } from '../../present/charts/sequence-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { count, degreesOfFreedom, printed, probability } from '../../present/numbers.ts'
+import { asPercent, count, degreesOfFreedom, printed, probability } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { ComparisonDetail, EffectLine } from './detail.ts'
 
@@ -12,10 +12,6 @@ type Shown = Presented<ComparisonDetail>
 
 export function presentComparison(shown: Shown): readonly ReportBlock[] {
   return [summary(shown), conditions(shown), ...figures(shown), effects(shown), ...equivalenceTable(shown), ...spreads(shown), ...blocks(shown)]
-}
-
-function percent(fraction: number): Inline {
-  return { type: 'number', value: fraction, text: String(Number((fraction * 100).toPrecision(6))) }
 }
 
 function unit(text: string): string {
@@ -26,7 +22,7 @@ const designs = { replicates: 'from replicate readings under each condition', 'a
 
 function summary({ detail, measurand }: Shown): ReportBlock {
   return paragraph(...detail.effects.flatMap((effect): readonly (readonly Inline[])[] => {
-    const start = sentence`The difference ${effect.condition} − ${detail.reference} is ${printed(effect.difference)}${unit(measurand.unit)} (${printed(effect.low)} to ${printed(effect.high)} at ${percent(effect.confidence)}\u202f%), ${designs[detail.design]}.`
+    const start = sentence`The difference ${effect.condition} − ${detail.reference} is ${printed(effect.difference)}${unit(measurand.unit)} (${printed(effect.low)} to ${printed(effect.high)} at ${asPercent(effect.confidence)}\u202f%), ${designs[detail.design]}.`
     if (detail.question === 'difference') {
       const zeroOutside = effect.low > 0 || effect.high < 0
       return [start, textOf(zeroOutside ? 'The interval does not contain zero: the conditions differ by more than chance.' : 'The interval contains zero: these data do not show a difference, which does not mean that there is none.')]
@@ -63,7 +59,7 @@ function figures({ detail, measurand, prefix, verdicts }: Shown): readonly Repor
       chart: groupedValuesChart({ groupTitle: 'condition', yTitle: axis, values: detail.readings.map((each) => ({ group: each.condition, value: each.value })), excluded: detail.excluded.map((each) => ({ group: each.condition, value: each.value, label: `excluded (${each.exclusion})` })), means: detail.conditions.map((each) => ({ group: each.condition, mean: each.mean })), limits: [] }),
     }),
     figure({
-      id: `${prefix}-difference`, caption: sentence`Difference from ${detail.reference} with its interval at ${percent(detail.effects[0]?.confidence ?? 0)}\u202f%${limits === undefined ? '' : ', and the margin'}`,
+      id: `${prefix}-difference`, caption: sentence`Difference from ${detail.reference} with its interval at ${asPercent(detail.effects[0]?.confidence ?? 0)}\u202f%${limits === undefined ? '' : ', and the margin'}`,
       alternative: `Difference of ${detail.effects.map((each) => each.condition).join(', ')} from ${detail.reference} with interval${limits === undefined ? '' : ' and margin'}.`,
       chart: differenceChart({ xTitle: `difference / ${measurand.unit}`, items: detail.effects.map((each) => ({ label: each.condition, estimate: each.difference, low: each.low, high: each.high })), ...(limits === undefined ? {} : { margins: limits }), zero: true }),
     }),
@@ -79,7 +75,7 @@ function effects({ detail, measurand, prefix }: Shown): ReportBlock {
     columns: [column('Difference', { align: 'text', rowHeader: true }), column('Method', { align: 'text' }), column('Value', { unit: measurand.unit }), column('Standard error', { unit: measurand.unit }), column('df'), column('t'), column('Probability'), column('Interval', { align: 'text', unit: measurand.unit })],
     groups: [detail.effects.map(line), detail.besides.map(line)].filter((group) => group.length > 0),
     notes: [
-      sentence`Two-sided probabilities; intervals at ${percent(detail.effects[0]?.confidence ?? 0)}\u202f%.${detail.besides.length > 0 ? ' The decision rests on the method named first; the other stands beside it.' : ''}`,
+      sentence`Two-sided probabilities; intervals at ${asPercent(detail.effects[0]?.confidence ?? 0)}\u202f%.${detail.besides.length > 0 ? ' The decision rests on the method named first; the other stands beside it.' : ''}`,
       ...(detail.drift === undefined ? [] : [sentence`Drift of a block mean from block to block: ${printed(detail.drift.value)}${unit(measurand.unit)}, standard error ${printed(detail.drift.standardError)}.`]),
     ],
   })

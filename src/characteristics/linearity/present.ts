@@ -3,7 +3,7 @@ import { column, excludedRow, figure, formula, joined, paragraph, row, sentence,
 import { deviationChart } from '../../present/charts/deviation-chart.ts'
 import { responseChart } from '../../present/charts/response-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asTyped, columnDecimals, count, printed, probability } from '../../present/numbers.ts'
+import { asPercent, asTyped, columnDecimals, count, printed, probability } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { LinearityDetail } from './detail.ts'
 
@@ -46,7 +46,7 @@ function axis(name: string, unitText: string | undefined): string {
 function responseFigure({ detail, measurand, prefix, confidence }: Shown): ReportBlock {
   return figure({
     id: `${prefix}-response`,
-    caption: sentence`Response of ${measurand.name} against level, n = ${count(detail.n)}, with the fit and its confidence band at ${{ type: 'number', value: confidence, text: String(Number((confidence * 100).toPrecision(6))) }}\u202f%`,
+    caption: sentence`Response of ${measurand.name} against level, n = ${count(detail.n)}, with the fit and its confidence band at ${asPercent(confidence)}\u202f%`,
     alternative: `Calibration of ${measurand.name}: ${detail.n} responses at ${detail.levels.length} levels from ${detail.range.low} to ${detail.range.high} ${measurand.unit}, fitted by ${modelNames[detail.fit]} with weights ${detail.weights}.`,
     chart: responseChart({
       xTitle: axis('level', measurand.unit), yTitle: axis('response', measurand.responseUnit),

@@ -49,7 +49,7 @@ export function assessPrecision(input: AssessInput<PrecisionOptions>): AssessOut
   }
   const confounded = confoundedFields(measurements.values, fields)
   if (confounded.length > 0) diagnostics.push(diagnostic('assess/confounded-factors', `Run fields of \`${input.measurand.id}\` change together: ${confounded.join('; ')}`, { place, actual: confounded.join('; '), expected: 'each combination of the fields at least once', mend: 'Nothing, if only their sum is wanted; their contributions cannot be separated' }))
-  diagnostics.push(...designGaps(measurements.values, runOf, input))
+  diagnostics.push(...designGaps(measurements.values, (each) => runOf(each), input))
   const cells = done.flatMap((level) => level.runs.map((run) => run.values.length))
   return {
     detail: done.length === 0 ? undefined : { runFields: fields, isNested: options.nested !== undefined, levels: done, confounded },

@@ -4,7 +4,7 @@ import type { RecordedAssessment } from '../../assess/record.ts'
 import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
-import { columnDecimals, count, degreesOfFreedom, printed } from '../numbers.ts'
+import { asPercent, columnDecimals, count, degreesOfFreedom, printed } from '../numbers.ts'
 import { resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
 
@@ -90,5 +90,5 @@ function where(finding: Finding, levelUnit: string): readonly Inline[] {
 
 function intervalNotes(findings: readonly Finding[]): readonly (readonly Inline[])[] {
   const confidences = [...new Set(findings.flatMap((finding) => finding.interval?.confidence ?? []))].sort((left, right) => left - right)
-  return confidences.length === 0 ? [] : [[...textOf('Intervals are two-sided at a confidence of '), ...joined(confidences.map((each): readonly Inline[] => [{ type: 'number', value: each, text: String(Number((each * 100).toPrecision(6))) }, ...unitWords('%')]), ' or '), ...textOf('.')]]
+  return confidences.length === 0 ? [] : [[...textOf('Intervals are two-sided at a confidence of '), ...joined(confidences.map((each): readonly Inline[] => [asPercent(each), ...unitWords('%')]), ' or '), ...textOf('.')]]
 }

@@ -3,7 +3,7 @@ import type { DesignLine } from '../../assess/record.ts'
 import type { RegisterEntry } from '../../definition/study.ts'
 import { column, paragraph, row, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
-import { count } from '../numbers.ts'
+import { asPercent, count } from '../numbers.ts'
 import { blockTitle, measurandOf, metricLabel, type Section, titleOf } from './section.ts'
 
 export function purpose(section: Section): readonly ReportBlock[] {
@@ -70,7 +70,7 @@ export function design(section: Section): readonly ReportBlock[] {
 
 export function rules(section: Section): readonly ReportBlock[] {
   const { rules: stated } = section.record.study
-  const confidence: readonly Inline[] = [{ type: 'number', value: stated.confidence, text: String(Number((stated.confidence * 100).toPrecision(6))) }, ...textOf('\u202f%')]
+  const confidence: readonly Inline[] = [asPercent(stated.confidence), ...textOf('\u202f%')]
   const rounding = stated.decideOn === 'unrounded values'
     ? 'Decisions are taken on unrounded values; a printed value may show fewer digits than were compared.'
     : `Decisions are taken on values rounded ${stated.rounding} to the ${stated.to}.`
