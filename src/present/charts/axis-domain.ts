@@ -21,6 +21,13 @@ export function axisDomain(values: readonly number[], options: { readonly ticks:
   return options.logarithmic === true ? logarithmicDomain(low, high) : linearDomain(low, high, options.ticks, options.room ?? 0.04, options.ends ?? 'ticks')
 }
 
+/** Less than this and a logarithmic axis names 1, 2 and 5 as well. */
+const fewDecades = 3.2
+
+export function scaleOf(domain: AxisDomain): 'linear' | 'few decades' | 'decades' {
+  return !domain.logarithmic ? 'linear' : Math.log10(domain.high / domain.low) < fewDecades ? 'few decades' : 'decades'
+}
+
 /** Where a value stands between the ends of an axis, 0 to 1. */
 export function positionOn(domain: AxisDomain, value: number): number {
   const scaled = (each: number): number => (domain.logarithmic ? Math.log10(each) : each)

@@ -1,7 +1,8 @@
 // Names of categories along an axis: wrapped or turned so that all of them can be read, and values of one category spread
 // sideways so that none hides another.
+import type { ChartWidth } from './chart-input.ts'
 import type { Fragment } from './layers.ts'
-import { estimatedWidth } from './label-placement.ts'
+import { estimatedWidth, wrapped as wrap } from './label-placement.ts'
 
 const lineGap = 8.5
 
@@ -25,8 +26,9 @@ export function namesBelow(names: readonly string[], plotWidth: number): Categor
     : { shown: joined(new Map(names.map((name) => [name, wrap(name, 130)]))), axis: { ...turned, labelAlign: 'right', ...brokenLines }, width: band }
 }
 
-/** Names to the left of a plot, wrapped at this width. */
-export function namesBeside(names: readonly string[], widest = 150): CategoryNames {
+/** Names to the left of a plot, wrapped so that the larger part is left to the plot. */
+export function namesBeside(names: readonly string[], chart: ChartWidth = 'full'): CategoryNames {
+  const widest = chart === 'full' ? 150 : 78
   const wrapped = new Map(names.map((name) => [name, wrap(name, widest)]))
   const width = Math.max(0, ...[...wrapped.values()].flat().map((line) => estimatedWidth(line)))
   return { shown: joined(wrapped), axis: { labelOverlap: false, ...brokenLines }, width }
@@ -49,16 +51,6 @@ const brokenLines: Fragment = { labelExpr: "split(datum.label, '\\n')", labelLin
 
 function joined(wrapped: ReadonlyMap<string, readonly string[]>): ReadonlyMap<string, string> {
   return new Map([...wrapped].map(([name, lines]) => [name, lines.join('\n')]))
-}
-
-function wrap(text: string, width: number): readonly string[] {
-  const lines: string[] = []
-  for (const word of text.split(/\s+/)) {
-    const last = lines.at(-1)
-    if (last !== undefined && estimatedWidth(`${last} ${word}`) <= width) lines[lines.length - 1] = `${last} ${word}`
-    else lines.push(word)
-  }
-  return lines
 }
 
 /** Distance at which two marks stand side by side, in points. */

@@ -2,8 +2,8 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, LabelledValue, SeriesPoint } from './chart-input.ts'
-import { chartSpecification, plotFrame, ticksAlong } from './house-style.ts'
-import { excludedLayers, field, limitLayers, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, valueAxis, valueScale, withSeries, zeroMark } from './layers.ts'
+import { chartSpecification, plotFrame } from './house-style.ts'
+import { excludedLayers, field, limitLayers, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel, withSeries, zeroMark } from './layers.ts'
 
 export interface DeviationChartInput {
   readonly xTitle: string
@@ -21,14 +21,14 @@ export function deviationChart(input: DeviationChartInput): Chart {
   const ys = [...[...points, ...excluded].map((each) => each.y), ...limits.map((limit) => limit.value), 0]
   const logarithmic = spansDecades(xs)
   const spans = {
-    x: axisDomain(xs, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic, room: 0.02, ends: 'open' }),
+    x: axisDomain(xs, { ticks: ticksAcross(frame), logarithmic, room: 0.02, ends: 'open' }),
     // Room for the labels of limits above and below.
-    y: axisDomain(ys, { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 }),
+    y: axisDomain(ys, { ticks: ticksUp(frame), room: 0.09 }),
   }
   const names = seriesOf(points)
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
-    spanLayer({ ...x, scale: valueScale(logarithmic), axis: valueAxis('x', input.xTitle, frame, logarithmic) }, { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) }),
+    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
     { data: { values: [{ zero: 0 }] }, mark: zeroMark, encoding: { y: field('zero') } },
     ...limitLayers(field('value')),
     { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },

@@ -3,8 +3,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
 import { linesOf, namesBeside, roomBeside } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
-import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
-import { capped, field, pointMark, rowsOf, valueAxis, valueScale, zeroMark } from './layers.ts'
+import { chartSpecification, inks, plotFrame } from './house-style.ts'
+import { capped, category, field, nameChannel, pointMark, rowsOf, spanLayer, ticksAcross, valueChannel, zeroMark } from './layers.ts'
 import { uprightLineLayers } from './upright-lines.ts'
 
 export interface DifferenceChartInput {
@@ -18,16 +18,16 @@ export interface DifferenceChartInput {
 
 export function differenceChart(input: DifferenceChartInput): Chart {
   const { items, margins, zero } = input
-  const names = namesBeside(items.map((item) => item.label))
+  const names = namesBeside(items.map((item) => item.label), input.width)
   const rowHeight = Math.max(24, linesOf(names) * 10)
   const frame = plotFrame(input.width, { left: roomBeside(names), height: rowHeight * Math.max(1, items.length) })
   const values = [...items.flatMap((item) => [item.estimate, item.low, item.high]), ...(margins === undefined ? [] : [margins.low, margins.high]), ...(zero === true ? [0] : [])]
-  const span = axisDomain(values, { ticks: ticksAlong(frame.plotWidth, 60), ends: 'open' })
+  const span = axisDomain(values, { ticks: ticksAcross(frame), ends: 'open' })
   const shown = items.map((item) => ({ ...item, label: names.shown.get(item.label) ?? item.label }))
-  const y = { field: 'label', type: 'nominal', sort: null }
+  const y = category('label')
   const specification = chartSpecification(frame, [
     { data: { name: 'margins' }, mark: { type: 'rect', color: inks.window, opacity: 1 }, encoding: { x: field('low'), x2: { field: 'high' } } },
-    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: { ...field('value'), scale: valueScale(false), axis: valueAxis('x', input.xTitle, frame, false) }, y: { ...y, scale: { type: 'band' }, axis: { title: null, grid: false, ...names.axis } } } },
+    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('label', { title: null, grid: false, ...names.axis })),
     { data: { name: 'zero' }, mark: zeroMark, encoding: { x: field('value') } },
     ...uprightLineLayers(),
     ...capped('items', { channel: 'x', across: { ...y, bandPosition: 0.5 } }),

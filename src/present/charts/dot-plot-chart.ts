@@ -3,8 +3,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
 import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { arrowAbove, arrowBelow, chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
-import { field, pointMark, valueAxis, valueScale, yOffset } from './layers.ts'
+import { arrowAbove, arrowBelow, chartSpecification, inks, plotFrame } from './house-style.ts'
+import { category, field, nameChannel, pointMark, spanLayer, ticksAcross, valueChannel, yOffset } from './layers.ts'
 import { uprightLineData, uprightLineLayers } from './upright-lines.ts'
 
 export interface DotPlotChartInput {
@@ -18,22 +18,22 @@ export interface DotPlotChartInput {
 export function dotPlotChart(input: DotPlotChartInput): Chart {
   const { dots, censored, lines } = input
   const groups = namesInOrder(dots.map((each) => each.group), censored.map((each) => each.group))
-  const names = namesBeside(groups)
+  const names = namesBeside(groups, input.width)
   const rowHeight = Math.max(34, linesOf(names) * 10)
   const frame = plotFrame(input.width, { left: roomBeside(names), height: rowHeight * Math.max(1, groups.length) })
   const values = [...dots.map((each) => each.value), ...censored.map((each) => each.bound), ...lines.map((each) => each.value)]
   const logarithmic = spansDecades(values)
-  const span = axisDomain(values, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic, ends: 'open' })
+  const span = axisDomain(values, { ticks: ticksAcross(frame), logarithmic, ends: 'open' })
   const shown = (group: string): string => names.shown.get(group) ?? group
   const marks = groups.flatMap((group) => {
     const here = [...dots.filter((each) => each.group === group), ...censored.filter((each) => each.group === group)]
     const offsets = spread(here.map((each) => positionOn(span, 'bound' in each ? each.bound : each.value) * frame.plotWidth), rowHeight * 0.4)
     return here.map((each, index) => ({ ...each, group: shown(group), offset: rowHeight / 2 + (offsets[index] ?? 0) }))
   })
-  const y = { field: 'group', type: 'nominal', sort: null }
+  const y = category('group')
   const arrow = { type: 'point', filled: false, size: 90, stroke: inks.data, strokeWidth: 1, opacity: 1 }
   const specification = chartSpecification(frame, [
-    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: { ...field('value'), scale: valueScale(logarithmic), axis: valueAxis('x', input.xTitle, frame, logarithmic) }, y: { ...y, scale: { type: 'band' }, axis: { title: null, ...names.axis } } } },
+    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('group', { title: null, grid: true, ...names.axis })),
     ...uprightLineLayers(),
     { data: { name: 'dots' }, mark: pointMark, encoding: { x: field('value'), y, yOffset } },
     { data: { name: 'below' }, mark: { ...arrow, shape: arrowBelow }, encoding: { x: field('bound'), y, yOffset } },

@@ -4,8 +4,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, type AxisDomain } from './axis-domain.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { chartSpecification, inks, panelledSpecification, plotFrame, ticksAlong, type PlotFrame } from './house-style.ts'
-import { excludedMark, field, labelLayer, limitMark, limitRequests, meanMark, pointBox, pointMark, seriesEncoding, seriesOf, valueAxis, valueScale, xOffset, type Fragment, type Rows } from './layers.ts'
+import { chartSpecification, inks, panelledSpecification, plotFrame, type PlotFrame } from './house-style.ts'
+import { category, excludedMark, field, type Fragment, labelLayer, limitMark, limitRequests, meanMark, nameChannel, pointBox, pointMark, type Rows, seriesEncoding, seriesOf, ticksUp, valueChannel, xOffset } from './layers.ts'
 import { aroundPoint, placeLabels } from './label-placement.ts'
 
 export interface GroupedValuesChartInput {
@@ -26,12 +26,12 @@ export function groupedValuesChart(input: GroupedValuesChartInput): Chart {
   const groups = namesInOrder(input.values.map((each) => each.group), input.excluded.map((each) => each.group), input.means.map((each) => each.group))
   const names = namesBelow(groups, frame.plotWidth)
   const series = seriesOf(input.values)
-  const x = { field: 'group', type: 'nominal', sort: null }
+  const x = category('group')
   const y = field('value')
   const only = (role: string): Fragment => ({ transform: [{ filter: `datum.role == '${role}'` }] })
   const labels = (role: string, encoding: Fragment, color: string): Fragment => ({ ...only(role), ...withoutData(labelLayer('', { y, ...encoding }, { color })) })
   const layer: readonly Fragment[] = [
-    { ...only('span'), mark: { type: 'point', opacity: 0 }, encoding: { x: { ...x, axis: { title: input.groupTitle, ...names.axis }, scale: { type: 'band' } }, y: { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) } } },
+    { ...only('span'), mark: { type: 'point', opacity: 0 }, encoding: { x: nameChannel('group', { title: input.groupTitle, ...names.axis }), y: valueChannel('y', 'value', input.yTitle, frame, { low: 0, high: 1, logarithmic: false }) } },
     { ...only('overall'), mark: { type: 'rule', color: inks.axis, strokeWidth: 0.8 }, encoding: { y } },
     { ...only('limit'), mark: limitMark, encoding: { y } },
     { ...only('mean'), mark: meanMark, encoding: { x: { ...x, bandPosition: 0.2 }, x2: { field: 'group', bandPosition: 0.8 }, y } },
@@ -60,7 +60,7 @@ function panelRows(input: GroupedValuesChartInput, panel: string, { frame, group
   const [values, excluded, means] = [here(input.values), here(input.excluded), here(input.means)]
   const limits = input.limits.filter((limit) => limit.panel === undefined || limit.panel === panel)
   const overall = input.overall === undefined ? [] : [{ value: input.overall, label: 'overall mean' }]
-  const span = axisDomain([...values.map((each) => each.value), ...excluded.map((each) => each.value), ...means.map((each) => each.mean), ...[...limits, ...overall].map((each) => each.value)], { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 })
+  const span = axisDomain([...values.map((each) => each.value), ...excluded.map((each) => each.value), ...means.map((each) => each.mean), ...[...limits, ...overall].map((each) => each.value)], { ticks: ticksUp(frame), room: 0.09 })
   const named = (group: string): string => shown.get(group) ?? group
   const band = frame.plotWidth / Math.max(1, groups.length)
   const marks = groups.flatMap((group) => {

@@ -28,10 +28,12 @@ export const arrowBelow = 'M0,-0.55L0,0.55M0,0L-1.5,0M-1.05,-0.35L-1.5,0L-1.05,0
 export const arrowAbove = 'M0,-0.55L0,0.55M0,0L1.5,0M1.05,-0.35L1.5,0L1.05,0.35'
 
 export const textSize = 7.5
+export const titleSize = 8
 export const pointSize = 24
 
 export interface PlotFrame {
   readonly left: number
+  readonly right: number
   readonly plotWidth: number
   readonly plotHeight: number
   readonly total: number
@@ -45,9 +47,9 @@ const rightRoom = 10
 /** Room for the title of the y axis and six digits of its labels. */
 export const valueAxisRoom = 52
 
-export function plotFrame(width: ChartWidth = 'full', sides: { readonly left?: number; readonly height?: number; readonly right?: number } = {}): PlotFrame {
+export function plotFrame(width: ChartWidth = 'full', sides: { readonly left?: number; readonly height?: number } = {}): PlotFrame {
   const left = sides.left ?? valueAxisRoom
-  return { left, plotWidth: totals[width] - left - (sides.right ?? rightRoom), plotHeight: sides.height ?? heights[width], total: totals[width] }
+  return { left, right: rightRoom, plotWidth: totals[width] - left - rightRoom, plotHeight: sides.height ?? heights[width], total: totals[width] }
 }
 
 /** The specification of a chart of one plot; `rows` makes the height follow the number of categories instead. */
@@ -77,30 +79,31 @@ export const houseConfig = {
   view: { stroke: null },
   axis: {
     labelFont: font, labelFontSize: textSize, labelColor: inks.quiet, labelPadding: 3, labelLimit: 0, labelFlush: false, labelOverlap: 'greedy', labelSeparation: 4,
-    titleFont: font, titleFontSize: 8, titleFontWeight: 'normal', titleColor: inks.text, titleLimit: 0,
+    titleFont: font, titleFontSize: titleSize, titleFontWeight: 'normal', titleColor: inks.text, titleLimit: 0,
     domainColor: inks.axis, domainWidth: 0.6, tickColor: inks.axis, tickWidth: 0.6, tickSize: 3, gridColor: inks.grid, gridWidth: 0.5,
   },
   axisX: { grid: false, titlePadding: 5 },
   axisY: { grid: true, domain: false, ticks: false, titlePadding: 4 },
   legend: {
     orient: 'top', direction: 'horizontal', title: null, offset: 7, padding: 0, columnPadding: 12, rowPadding: 3, labelFont: font, labelFontSize: textSize, labelColor: inks.text, labelLimit: 0,
-    symbolSize: 34, symbolStrokeWidth: 1, labelOffset: 3,
+    symbolSize: 30, symbolStrokeWidth: 1, labelOffset: 3,
   },
   header: { labelFont: font, labelFontSize: 8, labelFontWeight: 'bold', labelColor: inks.text, labelAnchor: 'start', labelLimit: 0, title: null, labelPadding: 3 },
   text: { font, fontSize: textSize, color: inks.text },
   point: { filled: true, size: pointSize, opacity: 1, strokeWidth: 0.9 },
 }
 
-/** Labels of a value axis: ten-powers where plain digits would be long, on a logarithmic axis the decades only. */
-export function valueLabels(logarithmic: boolean): string {
+/** Labels of a value axis: ten-powers where plain digits would be long; on a logarithmic axis the decades only, or 1, 2 and 5 where these are few. */
+export function valueLabels(scale: 'linear' | 'few decades' | 'decades'): string {
   const magnitude = 'abs(datum.value)'
   const exponent = `floor(log(${magnitude}) / LN10 + 1e-9)`
   const digit = (value: string): string => `slice('⁰¹²³⁴⁵⁶⁷⁸⁹', ${value}, ${value} + 1)`
   const raised = `(${exponent} < 0 ? '⁻' : '') + (abs(${exponent}) > 9 ? ${digit(`floor(abs(${exponent}) / 10)`)} : '') + ${digit(`abs(${exponent}) % 10`)}`
   const mantissa = `format(datum.value / pow(10, ${exponent}), '.3~r')`
-  const decade = `abs(log(${magnitude}) / LN10 - round(log(${magnitude}) / LN10)) < 1e-9`
+  const leading = `round(${magnitude} / pow(10, ${exponent}))`
   const long = `${magnitude} >= 1e7 || ${magnitude} < 1e-4`
-  if (logarithmic) return `${decade} ? (${long} ? '10' + ${raised} : format(datum.value, ',~r')) : ''`
+  const shown = scale === 'decades' ? `${leading} == 1` : `${leading} == 1 || ${leading} == 2 || ${leading} == 5`
+  if (scale !== 'linear') return `${shown} ? (${long} ? (${leading} == 1 ? '' : ${leading} + ' × ') + '10' + ${raised} : format(datum.value, ',~r')) : ''`
   return `datum.value == 0 ? '0' : ${long} ? ${mantissa} + ' × 10' + ${raised} : datum.label`
 }
 

@@ -32,6 +32,17 @@ export function estimatedWidth(text: string, size = labelSize): number {
   return sum * size
 }
 
+/** Broken at spaces (a no-break space holds) so that no line is wider, unless one word is. */
+export function wrapped(text: string, width: number, size = labelSize): readonly string[] {
+  const lines: string[] = []
+  for (const word of text.split(/ +/)) {
+    const last = lines.at(-1)
+    if (last !== undefined && estimatedWidth(`${last} ${word}`, size) <= width) lines[lines.length - 1] = `${last} ${word}`
+    else lines.push(word)
+  }
+  return lines
+}
+
 /** Beside, above or below a point, and farther off when the place is taken. */
 export function aroundPoint(): readonly LabelOffset[] {
   const rings = [0, 1, 2, 3, 4, 5, 6, 7]
@@ -50,9 +61,9 @@ export function alongLine(away: 'above' | 'below', width: number): readonly Labe
   return [0, 0.25, 0.5, 0.75].flatMap((part): readonly LabelOffset[] => [first, second].map((dy) => ({ dx: -2 - part * width, dy, align: 'right' })))
 }
 
-/** Above the head of an upright line, in as many rows as it takes. */
-export function aboveHead(rows = 8): readonly LabelOffset[] {
-  return Array.from({ length: rows }, (_, row) => row * -(labelSize + 2.5) - 4).flatMap((dy): readonly LabelOffset[] => [{ dx: 0, dy, align: 'center' }, { dx: -3, dy, align: 'left' }, { dx: 3, dy, align: 'right' }])
+/** Above the top of a curve, in as many rows as it takes. */
+export function aboveTop(): readonly LabelOffset[] {
+  return Array.from({ length: 6 }, (_, row) => row * -(labelSize + 2.5) - 4).flatMap((dy): readonly LabelOffset[] => [{ dx: 0, dy, align: 'center' }, { dx: -3, dy, align: 'left' }, { dx: 3, dy, align: 'right' }])
 }
 
 /** In the order asked for; `plot` keeps labels inside, `taken` are boxes of points. A label for which nothing is free takes its last candidate that touches no other label. */

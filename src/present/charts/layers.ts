@@ -1,10 +1,10 @@
 // The layers that charts share: span of the axes, points, excluded points, limits, and the labels of both. Each layer names its
 // data, so one specification serves every chart of its kind.
 import type { AxisDomain } from './axis-domain.ts'
-import { positionOn } from './axis-domain.ts'
+import { positionOn, scaleOf } from './axis-domain.ts'
 import type { LabelledPoint, LabelledValue } from './chart-input.ts'
-import { inks, pointSize, seriesInks, seriesShapes, textSize, ticksAlong, valueLabels, type PlotFrame } from './house-style.ts'
-import { aroundPoint, alongLine, estimatedWidth, placeLabels, type Box, type LabelRequest } from './label-placement.ts'
+import { inks, pointSize, seriesInks, seriesShapes, textSize, ticksAlong, titleSize, valueLabels, type PlotFrame } from './house-style.ts'
+import { aroundPoint, alongLine, estimatedWidth, placeLabels, wrapped, type Box, type LabelRequest } from './label-placement.ts'
 
 export type Fragment = Readonly<Record<string, unknown>>
 export type Rows = readonly Readonly<Record<string, unknown>>[]
@@ -14,19 +14,44 @@ export function rowsOf<T extends object>(items: readonly T[]): Rows {
   return items.map((item) => Object.fromEntries(Object.entries(item)))
 }
 
-export function valueAxis(channel: 'x' | 'y', title: string, frame: PlotFrame, logarithmic: boolean, more: Fragment = {}): Fragment {
-  const ticks = channel === 'x' ? ticksAlong(frame.plotWidth, 60) : ticksAlong(frame.plotHeight, 34)
+/** The encoding that bears an axis of numbers: field, scale and axis. */
+export function valueChannel(channel: 'x' | 'y', name: string, title: string, frame: PlotFrame, domain: AxisDomain, more: Fragment = {}): Fragment {
+  return { ...field(name), scale: domain.logarithmic ? { type: 'log', nice: false } : { type: 'linear', nice: false, zero: false }, axis: valueAxis(channel, title, frame, domain, more) }
+}
+
+/** The encoding that bears an axis of names, in the order of the data. */
+export function nameChannel(name: string, axis: Fragment): Fragment {
+  return { ...category(name), scale: { type: 'band' }, axis }
+}
+
+export function category(name: string): Fragment {
+  return { field: name, type: 'nominal', sort: null }
+}
+
+function valueAxis(channel: 'x' | 'y', title: string, frame: PlotFrame, domain: AxisDomain, more: Fragment): Fragment {
+  const ticks = channel === 'x' ? ticksAcross(frame) : ticksUp(frame)
+  const lines = titleLines(title, channel === 'x' ? frame.plotWidth + 20 : frame.plotHeight + 16)
   return {
-    title, labelExpr: valueLabels(logarithmic), ...(logarithmic ? { gridOpacity: decadesOnly } : { tickCount: ticks }),
+    title: lines, labelExpr: valueLabels(scaleOf(domain)), ...(domain.logarithmic ? { gridOpacity: decadesOnly } : { tickCount: ticks }),
     ...(channel === 'y' ? { minExtent: frame.left - 18, maxExtent: frame.left - 18 } : {}), ...more,
   }
 }
 
-const decadesOnly: Fragment = { condition: { test: 'abs(log(datum.value) / LN10 - round(log(datum.value) / LN10)) < 1e-9', value: 1 }, value: 0 }
-
-export function valueScale(logarithmic: boolean): Fragment {
-  return logarithmic ? { type: 'log', nice: false } : { type: 'linear', nice: false, zero: false }
+export function ticksAcross(frame: PlotFrame): number {
+  return ticksAlong(frame.plotWidth, 56)
 }
+
+export function ticksUp(frame: PlotFrame): number {
+  return ticksAlong(frame.plotHeight, 34)
+}
+
+/** A title longer than its axis goes on in a second line. */
+export function titleLines(title: string, length: number): string | readonly string[] {
+  const lines = wrapped(title, length, titleSize)
+  return lines.length > 1 ? lines : title
+}
+
+const decadesOnly: Fragment = { condition: { test: 'abs(log(datum.value) / LN10 - round(log(datum.value) / LN10)) < 1e-9', value: 1 }, value: 0 }
 
 /** Draws nothing: it stretches both axes over the spans chosen for them, and bears their titles. */
 export function spanLayer(x: Fragment, y: Fragment): Fragment {
@@ -97,8 +122,8 @@ export function excludedLayers(x: Fragment, y: Fragment): readonly Fragment[] {
 }
 
 /** Level dashed lines across the plot, each with its label at the right end inside the plot. */
-export function limitLayers(y: Fragment): readonly Fragment[] {
-  return [{ data: { name: 'limits' }, mark: limitMark, encoding: { y } }, labelLayer('limitLabels', { y, x: { value: 'width' } }, { color: inks.limit })]
+export function limitLayers(y: Fragment, color: string = inks.limit): readonly Fragment[] {
+  return [{ data: { name: 'limits' }, mark: { ...limitMark, color }, encoding: { y } }, labelLayer('limitLabels', { y, x: { value: 'width' } }, { color })]
 }
 
 export interface Spans {
@@ -117,7 +142,7 @@ export function placedLabels(frame: PlotFrame, spans: Spans, given: { readonly p
   const taken: readonly Box[] = [...given.points, ...given.excluded].map((point) => pointBox(place(point)))
   const lines: readonly LabelRequest[] = limitRequests(frame, spans.y, given.limits)
   const points: readonly LabelRequest[] = given.excluded.map((point) => ({ text: point.label, ...place(point), candidates: aroundPoint() }))
-  const offsets = placeLabels([...lines, ...points], { left: 0, right: frame.plotWidth, top: -8, bottom: frame.plotHeight }, taken)
+  const offsets = placeLabels([...lines, ...points], { left: 0, right: frame.plotWidth, top: 0, bottom: frame.plotHeight }, taken)
   return {
     limitLabels: given.limits.map((limit, index) => ({ value: limit.value, label: limit.label, ...offsets[index] })),
     excludedLabels: given.excluded.map((point, index) => ({ x: point.x, y: point.y, label: point.label, ...offsets[lines.length + index] })),

@@ -4,9 +4,9 @@ import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
+import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { aroundPoint, placeLabels } from './label-placement.ts'
-import { capped, excludedMark, field, labelLayer, limitLayers, limitRequests, meanMark, pointBox, pointMark, rowsOf, seriesEncoding, seriesOf, valueAxis, valueScale, withSeries, xOffset } from './layers.ts'
+import { capped, category, excludedMark, field, labelLayer, limitLayers, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, ticksUp, valueChannel, withSeries, xOffset } from './layers.ts'
 
 export interface LevelIntervalChartInput {
   readonly xTitle: string
@@ -25,7 +25,7 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   const names = namesBelow(levels, frame.plotWidth)
   const band = frame.plotWidth / Math.max(1, levels.length)
   const ends = means.flatMap((each) => [each.mean, each.low ?? each.mean, each.high ?? each.mean])
-  const span = axisDomain([...points, ...excluded, ...limits].map((each) => each.value).concat(ends), { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 })
+  const span = axisDomain([...points, ...excluded, ...limits].map((each) => each.value).concat(ends), { ticks: ticksUp(frame), room: 0.09 })
   const height = (value: number): number => (1 - positionOn(span, value)) * frame.plotHeight
   const shown = <T extends { readonly level: string }>(each: T): T => ({ ...each, level: names.shown.get(each.level) ?? each.level })
 
@@ -42,10 +42,10 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   )
 
   const series = seriesOf(points)
-  const x = { field: 'level', type: 'nominal', sort: null }
+  const x = category('level')
   const y = field('value')
   const specification = chartSpecification(frame, [
-    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: { ...x, scale: { type: 'band' }, axis: { title: input.xTitle, ...names.axis } }, y: { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) } } },
+    spanLayer(nameChannel('level', { title: input.xTitle, ...names.axis }), valueChannel('y', 'value', input.yTitle, frame, span)),
     ...limitLayers(y),
     ...capped('intervals', { channel: 'y', across: { ...x, bandPosition: 0.66 } }),
     { data: { name: 'means' }, mark: meanMark, encoding: { x: { ...x, bandPosition: 0.56 }, x2: { field: 'level', bandPosition: 0.76 }, y: field('mean') } },

@@ -3,8 +3,8 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, SeriesPoint } from './chart-input.ts'
-import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
-import { excludedLayers, field, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, valueAxis, valueScale, withSeries } from './layers.ts'
+import { chartSpecification, inks, plotFrame } from './house-style.ts'
+import { excludedLayers, field, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel, withSeries } from './layers.ts'
 
 export interface ResponseChartInput {
   readonly xTitle: string
@@ -23,13 +23,13 @@ export function responseChart(input: ResponseChartInput): Chart {
   const ys = [...[...points, ...excluded, ...line].map((each) => each.y), ...band.flatMap((each) => [each.low, each.high])]
   const logarithmic = { x: spansDecades(xs), y: spansDecades(xs) && ys.every((each) => each > 0) }
   const spans = {
-    x: axisDomain(xs, { ticks: ticksAlong(frame.plotWidth, 60), logarithmic: logarithmic.x, room: 0.02, ends: 'open' }),
-    y: axisDomain(ys, { ticks: ticksAlong(frame.plotHeight, 34), logarithmic: logarithmic.y }),
+    x: axisDomain(xs, { ticks: ticksAcross(frame), logarithmic: logarithmic.x, room: 0.02, ends: 'open' }),
+    y: axisDomain(ys, { ticks: ticksUp(frame), logarithmic: logarithmic.y, ends: 'open' }),
   }
   const names = seriesOf(points)
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
-    spanLayer({ ...x, scale: valueScale(logarithmic.x), axis: valueAxis('x', input.xTitle, frame, logarithmic.x) }, { ...y, scale: valueScale(logarithmic.y), axis: valueAxis('y', input.yTitle, frame, logarithmic.y) }),
+    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
     { data: { name: 'band' }, mark: { type: 'area', color: inks.band, opacity: 1 }, encoding: { x, y: field('low'), y2: { field: 'high' } } },
     { data: { name: 'line' }, mark: { type: 'line', color: inks.data, strokeWidth: 1 }, encoding: { x, y } },
     { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },

@@ -4,8 +4,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
 import { namesInOrder } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
-import { chartSpecification, plotFrame, seriesDashes, seriesInks, ticksAlong } from './house-style.ts'
-import { field, pointMark, rowsOf, seriesEncoding, spanLayer, spanRows, valueAxis, valueScale } from './layers.ts'
+import { chartSpecification, plotFrame, seriesDashes } from './house-style.ts'
+import { category, field, pointMark, rowsOf, seriesEncoding, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
 
 export interface SequenceChartInput {
   readonly orderTitle: string
@@ -19,17 +19,17 @@ export function sequenceChart(input: SequenceChartInput): Chart {
   const { points, line = [] } = input
   const frame = plotFrame(input.width)
   const spans = {
-    x: axisDomain([...points, ...line].map((each) => each.order), { ticks: ticksAlong(frame.plotWidth, 60), room: 0.03, ends: 'open' }),
-    y: axisDomain([...points, ...line].map((each) => each.value), { ticks: ticksAlong(frame.plotHeight, 34), room: 0.06 }),
+    x: axisDomain([...points, ...line].map((each) => each.order), { ticks: ticksAcross(frame), room: 0.03, ends: 'open' }),
+    y: axisDomain([...points, ...line].map((each) => each.value), { ticks: ticksUp(frame), room: 0.06 }),
   }
   const conditions = namesInOrder(points.map((each) => each.condition), line.map((each) => each.condition))
-  const named = <T extends { readonly condition: string }>(items: readonly T[]) => conditions.flatMap((condition) => items.filter((item) => item.condition === condition)).map(({ condition, ...rest }) => ({ ...rest, series: condition }))
+  const named = <T extends { readonly condition: string }>(items: readonly T[]) => conditions.flatMap((condition) => items.filter((item) => item.condition === condition)).map(({ condition, ...rest }) => ({ ...rest, series: condition, condition }))
   const [x, y] = [field('order'), field('value')]
-  const series = { field: 'series', type: 'nominal', sort: null, legend: null }
+  const told = seriesEncoding(conditions, frame)
   const specification = chartSpecification(frame, [
-    spanLayer({ ...field('x'), scale: valueScale(false), axis: valueAxis('x', input.orderTitle, frame, false, { tickMinStep: 1, format: 'd' }) }, { ...field('y'), scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) }),
-    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(conditions, frame) } },
-    { data: { name: 'line' }, mark: { type: 'line', strokeWidth: 1 }, encoding: { x, y, stroke: { ...series, scale: { range: seriesInks } }, strokeDash: { ...series, scale: { range: seriesDashes } } } },
+    spanLayer(valueChannel('x', 'x', input.orderTitle, frame, spans.x, { tickMinStep: 1 }), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...told } },
+    { data: { name: 'line' }, mark: { type: 'line', strokeWidth: 1 }, encoding: { x, y, stroke: told['stroke'], strokeDash: { ...category('condition'), legend: null, scale: { range: seriesDashes } } } },
   ])
   return { specification, data: { span: spanRows(spans.x, spans.y), points: rowsOf(named(points)), line: rowsOf(named(line)) } }
 }

@@ -2,9 +2,9 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { chartSpecification, inks, plotFrame, ticksAlong } from './house-style.ts'
+import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { placeLabels } from './label-placement.ts'
-import { field, labelLayer, limitLayers, limitRequests, pointBox, rowsOf, spanLayer, spanRows, valueAxis, valueScale } from './layers.ts'
+import { field, labelLayer, limitLayers, limitRequests, pointBox, rowsOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
 
 export interface TraceChartInput {
   readonly xTitle: string
@@ -19,8 +19,8 @@ export function traceChart(input: TraceChartInput): Chart {
   const { points, windows, lines } = input
   const frame = plotFrame(input.width)
   const spans = {
-    x: axisDomain([...points.map((point) => point.x), ...windows.flatMap((window) => [window.from, window.to])], { ticks: ticksAlong(frame.plotWidth, 60), room: 0.01, ends: 'open' }),
-    y: axisDomain([...points.map((point) => point.y), ...lines.map((line) => line.value)], { ticks: ticksAlong(frame.plotHeight, 34), room: 0.09 }),
+    x: axisDomain([...points.map((point) => point.x), ...windows.flatMap((window) => [window.from, window.to])], { ticks: ticksAcross(frame), room: 0.01, ends: 'open' }),
+    y: axisDomain([...points.map((point) => point.y), ...lines.map((line) => line.value)], { ticks: ticksUp(frame), room: 0.09 }),
   }
   const across = (value: number): number => positionOn(spans.x, value) * frame.plotWidth
   const trace = points.map((point) => pointBox({ x: across(point.x), y: (1 - positionOn(spans.y, point.y)) * frame.plotHeight }))
@@ -32,11 +32,11 @@ export function traceChart(input: TraceChartInput): Chart {
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
     { data: { name: 'windows' }, mark: { type: 'rect', color: inks.window, opacity: 1 }, encoding: { x: field('from'), x2: { field: 'to' } } },
-    spanLayer({ ...x, scale: valueScale(false), axis: valueAxis('x', input.xTitle, frame, false) }, { ...y, scale: valueScale(false), axis: valueAxis('y', input.yTitle, frame, false) }),
+    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
     { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('from') } },
     { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('to') } },
     labelLayer('windowLabels', { x: field('middle'), y: { value: 0 } }, { color: inks.quiet }),
-    ...limitLayers(field('value')),
+    ...limitLayers(field('value'), inks.quiet),
     { data: { name: 'points' }, mark: { type: 'line', color: inks.data, strokeWidth: 0.8, strokeJoin: 'round' }, encoding: { x, y } },
   ])
   return {
