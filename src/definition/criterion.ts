@@ -30,7 +30,7 @@ function quantityOf(text: string): Quantity | (ParsedCriterion & { readonly kind
   switch (parsed.kind) {
     case 'quantity': return parsed.quantity
     case 'unknown unit': return { kind: 'unreadable', found: parsed.unit, mend: parsed.nearest === undefined ? 'Write a unit of the table of units' : `Write the unit as \`${parsed.nearest}\`` }
-    case 'decimal comma': return { kind: 'unreadable', found: text, mend: `Write the number with a point: \`${text.replace(',', '.')}\`` }
+    case 'decimal comma': return { kind: 'unreadable', found: text, mend: `Write the number with a point: \`${parsed.meant}\`` }
     case 'not a quantity': return { kind: 'unreadable', found: text, mend: phrase }
   }
 }

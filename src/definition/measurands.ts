@@ -1,8 +1,8 @@
 // The key `measurands`: what is measured, in which unit; the order is the order of the report.
-import { diagnostic } from '../diagnostics/diagnostic.ts'
 import { mapOf, object, optional, type ReadBy, type Reader, required, text } from './fields.ts'
 import type { Measurand } from './study.ts'
-import { checkUnit } from './units.ts'
+import { readUnit } from './units.ts'
+import { unknownUnit } from './unknown-unit.ts'
 
 function unit(describe: string, example: string): Reader<string> {
   const inner = text({ describe, example })
@@ -11,12 +11,8 @@ function unit(describe: string, example: string): Reader<string> {
     read(node, reading) {
       const typed = inner.read(node, reading)
       if (typed === undefined) return undefined
-      const checked = checkUnit(typed)
-      if (checked.known) return typed
-      reading.report(diagnostic('definition/unknown-unit', `Unexpected unit \`${typed}\` for \`${reading.path}\``, {
-        place: node.place, actual: typed, expected: 'a unit of the table of units', mend: checked.nearest === undefined ? 'Write a unit such as mg/L, µg/kg, %, mAU·s or counts' : `Write \`${checked.nearest}\``,
-      }))
-      return undefined
+      const found = readUnit(typed)
+      return found.known ? found.unit : unknownUnit({ unit: typed, nearest: found.nearest }, node.place, reading)
     },
   }
 }
