@@ -13,7 +13,7 @@ export interface ErrorRateOutcome extends Outcome {
   readonly distribution?: DistributionDetail | undefined
 }
 
-const currie = { definition: 'critical value', method: 'critical value by Student t, minimum detectable value by noncentral t, of the net signal of blanks', quantitationMethod: '10 × net standard deviation of blanks / slope', source: 'IUPAC Recommendations 1995, Pure Appl. Chem. 67, 1699' } as const
+const currie = { definition: 'critical value', method: 'critical value by Student t, minimum detectable value by noncentral t, of the net signal of blanks', quantitationMethod: '10 × net standard deviation of blanks, in concentration', source: 'IUPAC Recommendations 1995, Pure Appl. Chem. 67, 1699' } as const
 const iso = { definition: 'ISO 11843-2', method: 'critical and minimum detectable net value from the calibration line, noncentral t, constant standard deviation', source: 'ISO 11843-2:2000, basic method' } as const
 
 export function criticalValue(setting: Setting): ErrorRateOutcome {

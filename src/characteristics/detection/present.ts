@@ -59,7 +59,7 @@ function definitionExhibits(presented: Detection): readonly ReportBlock[] {
     notes: [
       ...definitions.map((each) => `${each.definition}: ${each.method}${each.quantitationMethod === undefined ? '' : `; quantitation: ${each.quantitationMethod}`} (${each.source}).`),
       ...[...new Set(definitions.flatMap((each) => each.interval?.method ?? []))].map((method) => `Interval of the detection limit: ${method}.`),
-      ...(definitions.some((each) => each.criticalValue !== undefined) ? [sentence`Risk of a false detection ${asTyped(settings.alpha)}, of a missed one ${asTyped(settings.beta)}; the other definitions state no risk.`] : []),
+      ...(definitions.some((each) => each.criticalValue !== undefined) ? [sentence`Risk of a false detection ${asTyped(settings.alpha)}, of a missed one ${asTyped(settings.beta)}${definitions.every((each) => each.criticalValue !== undefined) ? '' : '; the other definitions state no risk'}.`] : []),
       ...netNote(detail),
     ],
   })

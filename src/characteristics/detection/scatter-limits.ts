@@ -116,7 +116,7 @@ function limits(setting: Setting, scatter: Scatter): Outcome {
     detectionLimit, quantitationLimit: quantitationFactor * unit, n: scatter.n, df: scatter.df,
     interval: {
       low: (detectionLimit * spread.low) / scatter.value, high: (detectionLimit * spread.high) / scatter.value, confidence: setting.input.confidence,
-      method: 'chi-square interval of the standard deviation, slope taken as known',
+      method: `chi-square interval of the standard deviation${hasSlope(setting, scatter.definition) ? ', slope taken as known' : ''}`,
     },
   }
   return limitsFound(detail, scatter.evidence, scatter.definition === 'blank scatter' ? blankFindings(scatter) : [])
@@ -134,11 +134,16 @@ export function blankFindings(scatter: Pick<Scatter, 'value' | 'unit' | 'concent
 function about(setting: Setting, definition: ScatterDefinition): { readonly method: string; readonly quantitationMethod: string; readonly source: string } {
   const { convention } = setting.options
   const net = definition === 'blank scatter' && netFactorOf(setting) !== 1
-  const scatter = `${scatterKinds[definition]}${net ? ' × net factor' : ''} / slope`
+  const scatter = `${scatterKinds[definition]}${net ? ' × net factor' : ''}${hasSlope(setting, definition) ? ' / slope' : ''}`
   return {
     method: `${convention === '3 s' ? '3' : '3.3'} × ${scatter}`, quantitationMethod: `10 × ${scatter}`,
-    source: convention === '3 s' ? 'IUPAC convention of 3 s, quantitation 10 s' : 'ICH Q2(R2), standard deviation of the response and slope',
+    source: convention === '3 s' ? 'IUPAC convention of 3 s, quantitation 10 s' : `ICH Q2(R2), standard deviation of the ${hasSlope(setting, definition) ? 'response and slope' : 'blank'}`,
   }
+}
+
+/** Blanks given as results need no slope any more. */
+function hasSlope({ blanks }: Setting, definition: ScatterDefinition): boolean {
+  return definition !== 'blank scatter' || blanks?.quantity === 'response'
 }
 
 function nothing(setting: Setting, definition: ScatterDefinition, because: string, cause: 'too few' | 'degenerate' = 'too few'): Outcome {

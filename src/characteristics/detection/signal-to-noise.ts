@@ -106,10 +106,10 @@ function limits(level: number, measured: MeasuredRatio, evidence: Outcome['evide
 }
 
 function about(convention: Convention | undefined): Pick<DefinitionDetail, 'definition' | 'method' | 'quantitationMethod' | 'source'> {
-  const ratio = convention === 'rms' ? 'ratio H/s of height and standard deviation of the noise' : 'ratio 2H/h of height and peak-to-peak noise'
+  const ratio = convention === 'rms' ? 'the ratio H/s (height H, standard deviation s of the noise)' : 'the ratio 2H/h (height H, peak-to-peak noise h)'
   return {
     definition: 'signal to noise', source: 'ICH Q2(R2), signal to noise of 3 and 10',
-    method: `level × 3 / ${ratio}`, quantitationMethod: `level × 10 / ${ratio}`,
+    method: `level × 3 over ${ratio}`, quantitationMethod: `level × 10 over ${ratio}`,
   }
 }
 
