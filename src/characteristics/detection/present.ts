@@ -139,7 +139,8 @@ function seriesTable({ measurand, prefix }: Detection, series: SeriesDetail | un
 function dotPlot(presented: Detection): readonly ReportBlock[] {
   const { detail, measurand, prefix } = presented
   const groups = [['blanks', detail.blanks], ['spikes', detail.spikes]] as const
-  const dots = groups.flatMap(([group, series]) => (series?.points ?? []).flatMap((each) => (each.concentration === undefined ? [] : [{ group, value: each.concentration }])))
+  const placed = (group: string, points: readonly SeriesPoint[]): readonly { readonly group: string; readonly value: number }[] => points.flatMap((each) => (each.concentration === undefined ? [] : [{ group, value: each.concentration }]))
+  const dots = groups.flatMap(([group, series]) => (series === undefined ? [] : [...placed(group, series.points), ...placed(`${group} (excluded)`, series.excluded)]))
   if (dots.length === 0) return []
   const censored = groups.flatMap(([group, series]) => (series?.censored ?? []).flatMap((each) => (each.bound === undefined || each.direction === undefined ? [] : [{ group, bound: each.bound, direction: each.direction }])))
   const lines = limitLines(detail)
