@@ -36,12 +36,18 @@ export function sumOfSquaredDeviations(values: readonly number[]): number {
   return Math.max(0, sum(deviations.map((deviation) => deviation * deviation)) - (residue * residue) / values.length)
 }
 
+/** The power of two at or below a positive number, kept where its inverse is finite too. */
+export function powerOfTwo(value: number): number {
+  return 2 ** Math.min(1000, Math.max(-1000, Math.floor(Math.log2(value))))
+}
+
 /** Sample standard deviation (s), with n − 1. Throws below two values. */
 export function standardDeviation(values: readonly number[]): number {
   if (values.length < 2) throw new RangeError('the standard deviation needs at least two values')
-  const scale = Math.max(...values.map(Math.abs))
-  if (scale === 0) return 0
-  // Scaled, so that squares of 1e200 do not overflow and squares of 1e-200 do not vanish.
+  const largest = values.reduce((most, value) => Math.max(most, Math.abs(value)), 0)
+  if (largest === 0) return 0
+  // Scaled by a power of two, which costs no digit, so that squares of 1e200 do not overflow and squares of 1e-200 do not vanish.
+  const scale = powerOfTwo(largest)
   return scale * Math.sqrt(sumOfSquaredDeviations(values.map((value) => value / scale)) / (values.length - 1))
 }
 

@@ -1,6 +1,6 @@
 // Least squares by Householder QR on scaled columns, with one step of refinement: never normal equations, which would square the
 // condition of the problem. Columns that do not determine the coefficients are refused by name.
-import { sum } from './describe.ts'
+import { powerOfTwo, sum } from './describe.ts'
 
 export interface LeastSquares {
   readonly coefficients: readonly number[]
@@ -28,8 +28,8 @@ export function leastSquares(columns: readonly (readonly number[])[], y: readonl
     return Math.sqrt(weight)
   })
   const heavy = root === undefined ? 1 : Math.max(...root)
-  const size = Math.max(...y.map(Math.abs)) || 1
-  const scales = columns.map((column) => Math.max(...column.map(Math.abs)) || 1)
+  const size = scaleOf(y)
+  const scales = columns.map(scaleOf)
   const weigh = (value: number, index: number): number => (root === undefined ? value : (value * (root[index] ?? 1)) / heavy)
   const matrix = columns.map((column, k) => column.map((value, i) => weigh(value / (scales[k] ?? 1), i)))
   const target = y.map((value, i) => weigh(value / size, i))
@@ -45,6 +45,12 @@ export function leastSquares(columns: readonly (readonly number[])[], y: readonl
   const residuals = rest.map((value, i) => (root === undefined ? value : (value * heavy) / (root[i] ?? 1)) * size)
   const norm = Math.sqrt(sum(rest.map((value) => value * value)))
   return { coefficients, unscaledCovariance, residuals, fitted: y.map((value, i) => value - (residuals[i] ?? 0)), residualSumOfSquares: (norm * heavy * size) ** 2, df: n - p }
+}
+
+/** A power of two near the largest value: scaling by it costs no digit. */
+function scaleOf(values: readonly number[]): number {
+  const largest = values.reduce((most, value) => Math.max(most, Math.abs(value)), 0)
+  return largest === 0 ? 1 : powerOfTwo(largest)
 }
 
 interface Factor {
