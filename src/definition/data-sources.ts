@@ -1,30 +1,12 @@
 // The key `data`: which files hold which rows, how they are written, which column is which field, and what one independent value is.
 import { diagnostic } from '../diagnostics/diagnostic.ts'
 import {
-  datasetName, type Field, listOf, located, mapOf, number, object, oneOf, optional, type ReadBy, type Reader, type Reading, required, text, unexpected,
+  below, datasetName, type Field, listOf, located, mapOf, number, object, oneOf, optional, type ReadBy, type Reader, type Reading, required, text,
 } from './fields.ts'
+import { checkKnown, checkNames } from './names.ts'
+import { pathInside } from './paths.ts'
 import type { ColumnChoice, DatasetSource, FileSource } from './study.ts'
 import type { StudyNode } from './study-node.ts'
-
-/** A path inside the study's folder, with `/`. */
-export function pathInside(describe: string): Reader<string> {
-  const inner = text({ describe, example: 'raw/calibration.csv' })
-  return {
-    schema: inner.schema,
-    read(node, reading) {
-      const path = inner.read(node, reading)
-      if (path === undefined) return undefined
-      const parts = path.split('/')
-      let depth = 0
-      const leaves = parts.some((part) => (depth += part === '..' ? -1 : part === '.' || part === '' ? 0 : 1) < 0)
-      if (!leaves && !path.startsWith('/') && !/^[A-Za-z]:/.test(path) && !path.includes('\\')) return parts.filter((part) => part !== '.' && part !== '').join('/')
-      reading.report(diagnostic('definition/path-outside', `The path \`${path}\` is outside the folder of the study, or written with other signs than \`/\``, {
-        place: node.place, actual: path, expected: 'a path relative to the study, with `/`, that stays in its folder', mend: 'Copy the file beside the study and write its relative path',
-      }))
-      return undefined
-    },
-  }
-}
 
 const fixedValues = mapOf(text({ describe: 'The value' }), { describe: 'Values that hold for every row of the file, by field', example: { day: '2026-03-02' } })
 
@@ -51,17 +33,18 @@ const file: Reader<{ readonly node: StudyNode; readonly value: ReadBy<typeof fil
   },
 }
 
+const heading = text({ describe: 'Heading of the column', example: 'Area' })
+const headings = mapOf(located(heading), { describe: 'When each measurand has its own column: measurand → heading', minimum: 1 })
+
 const column: Reader<ColumnChoice> = {
-  schema: { anyOf: [{ type: ['string', 'number'] }, { type: 'object', additionalProperties: { type: ['string', 'number'] } }], description: 'Heading of the column; or, when each measurand has its own column, measurand → heading', examples: ['Area'] },
+  schema: { anyOf: [heading.schema, headings.schema], description: 'Heading of the column; or, when each measurand has its own column, measurand → heading', examples: ['Area'] },
   read(node, reading) {
-    if (node.kind === 'scalar' && node.text !== '') return { kind: 'one', column: node.text, place: node.place }
-    if (node.kind !== 'map') return unexpected(node, reading, 'the heading of a column, or measurand → heading')
-    const columns: Record<string, { value: string; place: typeof node.place }> = {}
-    for (const entry of node.entries) {
-      if (entry.value.kind !== 'scalar' || entry.value.text === '') return unexpected(entry.value, reading, 'the heading of a column')
-      columns[entry.key] = { value: entry.value.text, place: entry.value.place }
+    if (node.kind !== 'map') {
+      const one = heading.read(node, reading)
+      return one === undefined ? undefined : { kind: 'one', column: one, place: node.place }
     }
-    return { kind: 'per measurand', columns, place: node.place }
+    const each = headings.read(node, reading)
+    return each === undefined ? undefined : { kind: 'per measurand', columns: Object.fromEntries(each.map(({ key, value }) => [key, value])), place: node.place }
   },
 }
 
@@ -84,7 +67,7 @@ const datasetReader = object({
   reportable: optional(oneOf(['result', 'recomputed'], { describe: 'When a result and a response are both mapped: which one is reported' })),
 } satisfies Record<string, Field<never> | Field<unknown>>, { describe: 'One dataset' })
 
-export const dataReader = mapOf(located(datasetReader), { describe: 'Datasets: name → files and columns' })
+export const dataReader = mapOf(located(datasetReader), { describe: 'Datasets: name → files and columns', minimum: 1 })
 
 export function datasetsOf(read: ReadBy<typeof dataReader>): readonly DatasetSource[] {
   return read.map(({ key, entry, value: { value } }) => ({
@@ -101,20 +84,29 @@ export function datasetsOf(read: ReadBy<typeof dataReader>): readonly DatasetSou
   }))
 }
 
-/** Averaged fields and the independent unit must be mapped; wide columns must name measurands. */
-export function checkDatasets(datasets: readonly DatasetSource[], measurands: ReadonlySet<string>, reading: Reading): void {
+/** What one dataset says of another, of measurands and of its own fields. `measurands` and `blocks` are names, whether or not the thing itself could be read. */
+export function checkDatasets(datasets: readonly DatasetSource[], known: { readonly measurands: ReadonlySet<string>; readonly blocks: readonly string[] }, reading: Reading): void {
   for (const dataset of datasets) {
-    const fields = Object.keys(dataset.columns)
-    for (const each of [...dataset.average, ...(dataset.replicate === undefined ? [] : [dataset.replicate])]) {
-      if (!fields.includes(each.value) && !dataset.files.some((source) => each.value in source.fixed)) {
-        reading.report(diagnostic('definition/unknown-name', `Dataset \`${dataset.name}\` maps no column for \`${each.value}\``, { place: each.place, actual: each.value, expected: fields.join(', '), mend: `Add \`${each.value}:\` under \`columns:\`` }))
-      }
+    const inner = below(below(reading, 'data'), dataset.name)
+    const columns = Object.entries(dataset.columns)
+    checkNames(columns.map(([value, choice]) => ({ value, place: choice.place })), 'field', inner)
+    const fields = [...new Set([...Object.keys(dataset.columns), ...dataset.files.flatMap((each) => Object.keys(each.fixed))])]
+    for (const each of [...dataset.average, ...(dataset.replicate === undefined ? [] : [dataset.replicate])]) checkKnown(each, fields, `field of dataset \`${dataset.name}\``, 'under `columns`', inner)
+    const wide = columns.flatMap(([, choice]) => (choice.kind === 'per measurand' ? [choice] : []))
+    for (const choice of wide) for (const [value, heading] of Object.entries(choice.columns)) checkKnown({ value, place: heading.place }, known.measurands, 'measurand', 'under `measurands`', inner)
+    const [long, first] = [dataset.columns['measurand'], wide[0]]
+    if (long !== undefined && first !== undefined) {
+      reading.report(diagnostic('definition/contradiction', `Unexpected column \`measurand\` in dataset \`${dataset.name}\`, where each measurand has its own column`, { place: long.place, expected: 'one of the two layouts', mend: 'Remove `measurand:`, or give each field one column', related: [{ message: 'one column for each measurand', place: first.place }] }))
     }
-    for (const choice of Object.values(dataset.columns)) {
-      if (choice.kind !== 'per measurand') continue
-      for (const [name, heading] of Object.entries(choice.columns)) {
-        if (!measurands.has(name)) reading.report(diagnostic('definition/unknown-name', `No measurand is named \`${name}\``, { place: heading.place, actual: name, expected: [...measurands].join(', '), mend: 'Write the id of a measurand' }))
-      }
-    }
+    if (dataset.through !== undefined) checkKnown(dataset.through, known.blocks, 'block', 'under `characteristics`', inner)
+    checkFiles(dataset, inner)
   }
+}
+
+function checkFiles(dataset: DatasetSource, reading: Reading): void {
+  dataset.files.forEach((file, index) => {
+    const earlier = dataset.files.slice(0, index).find((other) => other.path === file.path)
+    if (earlier === undefined) return
+    reading.report(diagnostic('definition/duplicate-name', `Unexpected second file \`${file.path}\` in dataset \`${dataset.name}\``, { place: file.place, actual: file.path, expected: 'each file once, since its rows would count twice', mend: 'Remove one of the two', related: [{ message: 'the first', place: earlier.place }] }))
+  })
 }

@@ -29,11 +29,12 @@ export function listOf<T>(item: Reader<T>, about: Described & { readonly single?
 }
 
 /** A map with keys of the user's choosing, in the order typed. */
-export function mapOf<T>(value: Reader<T>, about: Described): Reader<readonly { readonly key: string; readonly entry: MapEntry; readonly value: T }[]> {
+export function mapOf<T>(value: Reader<T>, about: Described & { readonly minimum?: number }): Reader<readonly { readonly key: string; readonly entry: MapEntry; readonly value: T }[]> {
   return {
-    schema: described({ type: 'object', additionalProperties: value.schema }, about),
+    schema: described({ type: 'object', additionalProperties: value.schema, ...(about.minimum === undefined ? {} : { minProperties: about.minimum }) }, about),
     read(node, reading) {
       if (node.kind !== 'map') return unexpected(node, reading, 'a map of keys')
+      if (node.entries.length < (about.minimum ?? 0)) return unexpected(node, reading, 'at least one entry')
       const read = node.entries.flatMap((entry) => {
         const each = value.read(entry.value, below(reading, entry.key))
         return each === undefined ? [] : [{ key: entry.key, entry, value: each }]
@@ -95,28 +96,8 @@ export function object<F extends Readonly<Record<string, unknown>>>(fields: F & 
     required: keys.filter((key) => (fields as Fields)[key]?.need === 'required'),
   }, about)
   function readPart(node: MapNode, reading: Reading): ReadFields<F> | undefined {
-    let complete = true
-    const result: Record<string, unknown> = {}
-    for (const key of keys) {
-      const field = (fields as Fields)[key]
-      if (field === undefined) continue
-      const entry = node.entries.find((each) => each.key === key)
-      const inner = below(reading, key)
-      if (entry !== undefined) {
-        const value = field.reader.read(entry.value, inner)
-        if (value === undefined) complete = false
-        else result[key] = value
-      } else if (field.need === 'required') {
-        complete = false
-        reading.report(diagnostic('definition/missing-key', `Expected key \`${key}\` in ${reading.path === '' ? 'the study' : `\`${reading.path}\``}`, {
-          place: node.place, actual: 'no such key', expected: `\`${key}\`: ${String(field.reader.schema.description ?? '')}`, mend: `Add \`${key}:\` here`,
-        }))
-      } else if (field.need === 'default') {
-        result[key] = field.fallback
-        reading.took(inner.path, field.fallbackText ?? '')
-      }
-    }
-    return complete ? (result as ReadFields<F>) : undefined
+    const { value, isComplete } = readSome(fields, node, reading)
+    return isComplete ? (value as ReadFields<F>) : undefined
   }
   return {
     schema, keys, readPart,
@@ -127,6 +108,30 @@ export function object<F extends Readonly<Record<string, unknown>>>(fields: F & 
       return known ? value : undefined
     },
   }
+}
+
+/** What could be read of the fields; what could not has been told. */
+export function readSome<F extends Readonly<Record<string, unknown>>>(fields: F & Fields, node: MapNode, reading: Reading): { readonly value: Partial<ReadFields<F>>; readonly isComplete: boolean } {
+  let isComplete = true
+  const result: Record<string, unknown> = {}
+  for (const [key, field] of Object.entries(fields as Fields)) {
+    const entry = node.entries.find((each) => each.key === key)
+    const inner = below(reading, key)
+    if (entry !== undefined) {
+      const value = field.reader.read(entry.value, inner)
+      if (value === undefined) isComplete = false
+      else result[key] = value
+    } else if (field.need === 'required') {
+      isComplete = false
+      reading.report(diagnostic('definition/missing-key', `Expected key \`${key}\` in ${reading.path === '' ? 'the study' : `\`${reading.path}\``}`, {
+        place: node.place, actual: 'no such key', expected: `\`${key}\`: ${String(field.reader.schema['description'] ?? '')}`, mend: `Add \`${key}:\` here`,
+      }))
+    } else if (field.need === 'default') {
+      result[key] = field.fallback
+      reading.took(inner.path, field.fallbackText ?? '')
+    }
+  }
+  return { value: result as Partial<ReadFields<F>>, isComplete }
 }
 
 export function reportUnknownKeys(node: MapNode, known: readonly string[], reading: Reading): boolean {

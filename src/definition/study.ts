@@ -157,6 +157,8 @@ export interface Exclusion {
 export interface DesignPromise {
   readonly characteristic: string
   readonly counts: Readonly<Record<string, number>>
+  /** Relative standard deviation that the design was planned for. */
+  readonly assumedRsd?: Quantity | undefined
   readonly place: Place
 }
 

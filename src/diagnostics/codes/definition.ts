@@ -19,6 +19,8 @@ export const definitionCodes = {
   'definition/missing-key': { severity: 'error', help: 'A key that the study needs is absent' },
   'definition/unknown-key': { severity: 'error', help: 'A key is not known at this place' },
   'definition/unknown-name': { severity: 'error', help: 'A name is used that the study does not declare' },
+  'definition/unusable-name': { severity: 'error', help: 'A name would break the ids of findings or the names of files' },
+  'definition/duplicate-name': { severity: 'error', help: 'Two things of one kind have the same name, or names that differ only in the case of letters' },
   'definition/unreadable-criterion': { severity: 'error', help: 'A criterion is no phrase that the program knows' },
   'definition/unit-mismatch': { severity: 'error', help: 'A limit has another unit than the number it is held against' },
   'definition/contradiction': { severity: 'error', help: 'Two parts of the study cannot both hold' },
