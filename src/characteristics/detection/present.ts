@@ -97,9 +97,10 @@ function lineExhibits({ detail, measurand, prefix }: Detection): readonly Report
   if (line === undefined) return []
   const unit = measurand.responseUnit ?? ''
   const origin = line.block === undefined ? `a straight line fitted to dataset ${line.dataset}` : `the line of ${line.block}`
+  const converts = [detail.blanks, detail.spikes].some((series) => series?.quantity === 'response')
   return [
     paragraph(
-      sentence`Responses become concentrations through ${origin}, slope ${printed(line.slope)} and intercept ${printed(line.intercept)} ${unit}.`,
+      !converts ? [] : sentence`Responses become concentrations through ${origin}, slope ${printed(line.slope)} and intercept ${printed(line.intercept)} ${unit}.`,
       sentence`The scatter of calibration is that of an unweighted straight line through ${count(line.own.n)} responses from ${asTyped(line.own.lowest)} to ${asTyped(line.own.highest)} ${measurand.unit}: residual standard deviation ${printed(line.own.residualStandardDeviation)} ${unit} (df ${count(line.own.df)}), standard error of the intercept ${printed(line.own.interceptStandardError)} ${unit}.`,
     ),
     ...(line.curves === undefined ? [] : [table({
