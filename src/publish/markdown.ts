@@ -1,9 +1,10 @@
 // A report → GitHub-flavoured Markdown: our nodes become standard ones and are written by the Markdown library. Tables are written row
 // by row, because the library's cost grows faster than the number of rows.
-import type { BlockContent, DefinitionContent, PhrasingContent, RootContent } from 'mdast'
+import type { BlockContent, DefinitionContent, Paragraph, PhrasingContent, RootContent } from 'mdast'
 import { gfmToMarkdown } from 'mdast-util-gfm'
 import { toMarkdown } from 'mdast-util-to-markdown'
 import type { CoverBlock, ExhibitRow, ExhibitTable, Inline, ReportBlock, ReportDocument, SectionHeading, SignOffBlock } from '../present/document.ts'
+import { plainInline } from './plain-inline.ts'
 
 export interface MarkdownPaths {
   chartPath(id: string): string
@@ -28,8 +29,13 @@ export function publishMarkdown(document: ReportDocument, paths: MarkdownPaths):
     names: new Map(headings.map((heading) => [heading.id, `${heading.annex === true && heading.depth === 1 ? 'Annex' : 'Section'} ${heading.number ?? heading.id}`])),
   }
   const { header } = document
-  const top = written([{ type: 'paragraph', children: [{ type: 'text', value: `${header.number} · ${header.revision} · ${header.status} · record ${header.digest}` }] }])
-  return `${[top, ...document.blocks.map((block) => blockText(block, targets))].filter((text) => text !== '').join('\n\n')}\n`
+  const top: RootContent = { type: 'paragraph', children: [{ type: 'text', value: `${header.number} · ${header.revision} · ${header.status} · record ${header.digest}` }] }
+  return `${written([top, ...document.blocks.flatMap((block) => nodesOf(block, targets))])}\n`
+}
+
+/** Text that is Markdown already. */
+function ready(text: string): RootContent {
+  return { type: 'html', value: text }
 }
 
 const extensions = [gfmToMarkdown({ tablePipeAlign: false })]
@@ -38,27 +44,34 @@ function written(children: readonly RootContent[]): string {
   return toMarkdown({ type: 'root', children: [...children] }, { bullet: '-', emphasis: '*', rule: '-', extensions }).trimEnd()
 }
 
-function blockText(block: ReportBlock, targets: Targets): string {
+function nodesOf(block: ReportBlock, targets: Targets): readonly RootContent[] {
   switch (block.type) {
-    case 'sectionHeading': return written([{ type: 'heading', depth: (block.depth + 1) as 2 | 3 | 4, children: [...anchor(block.id, targets), { type: 'text', value: headingLabel(block) }, ...phrasing(block.children, targets)] }])
-    case 'textBlock': {
-      if (block.children.length === 0) return ''
-      const paragraph = { type: 'paragraph' as const, children: [...phrasing(block.children, targets)] }
-      if (block.origin !== 'user') return written([paragraph])
-      return written([{ type: 'blockquote', children: [{ type: 'paragraph', children: [strong('Stated by the laboratory')] }, paragraph] }])
-    }
-    case 'exhibitTable': return tableText(block, targets)
-    case 'exhibitFigure': return written([
+    case 'sectionHeading': return [{ type: 'heading', depth: (block.depth + 1) as 2 | 3 | 4, children: [...anchor(block.id, targets), { type: 'text', value: headingLabel(block) }, ...phrasing(block.children, targets)] }]
+    case 'textBlock':
+      if (block.children.length === 0) return []
+      return block.origin === 'user' ? [{ type: 'blockquote', children: [{ type: 'paragraph', children: [strong('Stated by the laboratory')] }, paragraph(block.children, targets)] }] : [textNode(block.children, targets)]
+    case 'exhibitTable': return tableNodes(block, targets)
+    case 'exhibitFigure': return [
       { type: 'paragraph', children: [...anchor(block.id, targets), { type: 'image', url: targets.paths.chartPath(block.id), alt: block.alternative }] },
       { type: 'paragraph', children: [strong(`Figure ${block.number ?? ''}`.trim()), { type: 'text', value: ' ' }, ...phrasing(block.caption, targets)] },
-    ])
-    case 'formula': return written([{ type: 'paragraph', children: [...phrasing(block.children, targets)] }, { type: 'paragraph', children: [{ type: 'emphasis', children: [{ type: 'text', value: `In words: ${block.words}` }] }] }])
-    case 'cover': return coverText(block, targets)
-    case 'signOff': return signOffText(block, targets)
-    case 'contents': return contentsText(block.title, targets)
-    case 'pageBreak': return ''
-    default: return written([standardBlock(block, targets)])
+    ]
+    case 'formula': return [paragraph(block.children, targets), { type: 'paragraph', children: [{ type: 'emphasis', children: [{ type: 'text', value: `In words: ${block.words}` }] }] }]
+    case 'cover': return coverNodes(block, targets)
+    case 'signOff': return signOffNodes(block, targets)
+    case 'contents': return contentsNodes(block.title, targets)
+    case 'pageBreak': return []
+    default: return [standardBlock(block, targets)]
   }
+}
+
+function paragraph(inlines: readonly Inline[], targets: Targets): Paragraph {
+  return { type: 'paragraph', children: [...phrasing(inlines, targets)] }
+}
+
+/** A paragraph, past the library when it holds nothing to escape. */
+function textNode(inlines: readonly Inline[], targets: Targets): RootContent {
+  const plain = plainText(inlines)
+  return plain === undefined ? paragraph(inlines, targets) : ready(plain)
 }
 
 function headingLabel(heading: SectionHeading): string {
@@ -103,12 +116,11 @@ function standardBlock(block: StandardBlock | BlockContent | DefinitionContent, 
   return convert(block) as RootContent
 }
 
-function tableText(table: ExhibitTable, targets: Targets): string {
-  const caption = written([{ type: 'paragraph', children: [...anchor(table.id, targets), strong(`Table ${table.number ?? ''}`.trim()), { type: 'text', value: ' ' }, ...phrasing(table.caption, targets), { type: 'text', value: ' ' }, { type: 'link', url: targets.paths.tablePath(table.id), children: [{ type: 'text', value: '(CSV)' }] }] }])
+function tableNodes(table: ExhibitTable, targets: Targets): readonly RootContent[] {
+  const caption: Paragraph = { type: 'paragraph', children: [...anchor(table.id, targets), strong(`Table ${table.number ?? ''}`.trim()), { type: 'text', value: ' ' }, ...phrasing(table.caption, targets), { type: 'text', value: ' ' }, { type: 'link', url: targets.paths.tablePath(table.id), children: [{ type: 'text', value: '(CSV)' }] }] }
   const head = table.columns.map((column) => cellText([{ type: 'text', value: column.unit === undefined ? column.header : `${column.header} (${column.unit})` }], targets))
   const rows = table.groups.flat().map((row) => rowCells(row, table, targets))
-  const notes = table.notes.map((note) => written([{ type: 'paragraph', children: [...phrasing(note, targets)] }]))
-  return [caption, gridText(head, table.columns.map((column) => column.align === 'number'), rows), ...notes].join('\n\n')
+  return [caption, ready(gridText(head, table.columns.map((column) => column.align === 'number'), rows)), ...table.notes.map((note) => textNode(note, targets))]
 }
 
 function gridText(head: readonly string[], areRight: readonly boolean[], rows: readonly (readonly string[])[]): string {
@@ -125,46 +137,54 @@ function rowCells(row: ExhibitRow, table: ExhibitTable, targets: Targets): reado
   })
 }
 
-/** Nothing in it that Markdown could take for a mark. */
+/** Nothing in it that Markdown could take for a mark, wherever it stands. */
 const isHarmless = /^[^\\`*_[\]<>|~&#:@\n]*$/
 
-function cellText(cell: readonly Inline[], targets: Targets): string {
-  if (cell.every((inline) => inline.type === 'text' || inline.type === 'number' || inline.type === 'verdict')) {
-    const text = cell.map((inline) => (inline.type === 'text' ? inline.value : inline.type === 'number' ? inline.text : inline.type === 'verdict' ? `${marks[inline.word]} ${inline.word}` : '')).join('')
-    if (isHarmless.test(text) && !text.includes('www.') && !text.startsWith(' ') && !text.endsWith(' ')) return text
+/** What would begin a list, a heading or white at the start or end of a paragraph, or a bare address. */
+const isTreacherous = /^(\d+[.)]|[-+=]+)(\s|$)|^\s|\s$|www\.| {2}/
+
+/** The text as it stands when it needs no escape: by far the most do not, and the library weighs every letter. */
+function plainText(inlines: readonly Inline[]): string | undefined {
+  let text = ''
+  for (const inline of inlines) {
+    if (inline.type === 'text') text += inline.value
+    else if (inline.type === 'number') text += inline.text
+    else if (inline.type === 'verdict') text += `${marks[inline.word]} ${inline.word}`
+    else return undefined
   }
+  return isHarmless.test(text) && !isTreacherous.test(text) ? text : undefined
+}
+
+function cellText(cell: readonly Inline[], targets: Targets): string {
+  const plain = plainText(cell)
+  if (plain !== undefined) return plain
   return written([{ type: 'table', children: [{ type: 'tableRow', children: [{ type: 'tableCell', children: [...phrasing(cell, targets)] }] }] }]).split('\n')[0]?.replace(/^\|\s?/, '').replace(/\s*\|$/, '') ?? ''
 }
 
-function coverText(cover: CoverBlock, targets: Targets): string {
-  return written([
+function coverNodes(cover: CoverBlock, targets: Targets): readonly RootContent[] {
+  return [
     { type: 'heading', depth: 1, children: [{ type: 'text', value: cover.title }] },
     ...(cover.organisation === undefined ? [] : [{ type: 'paragraph' as const, children: [{ type: 'text' as const, value: cover.organisation }] }]),
     { type: 'paragraph', children: [{ type: 'text', value: cover.subtitle }] },
     { type: 'list', ordered: false, spread: false, children: cover.facts.map((fact) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [strong(`${fact.label}:`), { type: 'text', value: ` ${fact.text}` }] }] })) },
     { type: 'paragraph', children: [strong('Overall verdict:'), { type: 'text', value: ' ' }, ...phrasing([cover.overall], targets), { type: 'text', value: '. ' }, ...phrasing(cover.overallSentence, targets)] },
-  ])
+  ]
 }
 
-function signOffText(block: SignOffBlock, targets: Targets): string {
-  const plain = (text: string): string => cellText([{ type: 'text', value: text }], targets)
-  const rows = block.people.map((person) => [person.role, person.name, person.position, person.meaning, '', ''].map(plain))
-  return [
-    gridText(['Role', 'Name', 'Position', 'Meaning', 'Signature', 'Date, time and zone'], [false, false, false, false, false, false], rows),
-    ...(block.note.length === 0 ? [] : [written([{ type: 'paragraph', children: [...phrasing(block.note, targets)] }])]),
-  ].join('\n\n')
+function signOffNodes(block: SignOffBlock, targets: Targets): readonly RootContent[] {
+  const cell = (text: string): string => cellText([{ type: 'text', value: text }], targets)
+  const rows = block.people.map((person) => [person.role, person.name, person.position, person.meaning, '', ''].map(cell))
+  const head = ['Role', 'Name', 'Position', 'Meaning', 'Signature', 'Date, time and zone']
+  return [ready(gridText(head, head.map(() => false), rows)), ...(block.note.length === 0 ? [] : [textNode(block.note, targets)])]
 }
 
-function contentsText(title: string, targets: Targets): string {
+function contentsNodes(title: string, targets: Targets): readonly RootContent[] {
   const lines = targets.headings.filter((heading) => heading.depth <= 2).map((heading) => {
-    const text = written([{ type: 'paragraph', children: [linkTo(heading.id, headingLabel(heading) + plain(heading.children))] }])
+    const label = headingLabel(heading) + plainInline(heading.children)
+    const text = isHarmless.test(label) ? `[${label}](#${encodeURI(heading.id)})` : written([{ type: 'paragraph', children: [linkTo(heading.id, label)] }])
     return `${heading.depth === 1 ? '' : '  '}- ${text}`
   })
-  return [written([{ type: 'heading', depth: 2, children: [{ type: 'text', value: title }] }]), lines.join('\n')].join('\n\n')
-}
-
-function plain(inlines: readonly Inline[]): string {
-  return inlines.map((inline) => ('children' in inline ? plain(inline.children as readonly Inline[]) : inline.type === 'number' ? inline.text : inline.type === 'text' || inline.type === 'inlineCode' ? inline.value : '')).join('')
+  return [{ type: 'heading', depth: 2, children: [{ type: 'text', value: title }] }, ready(lines.join('\n'))]
 }
 
 function referredIn(value: unknown): readonly string[] {

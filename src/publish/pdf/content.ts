@@ -4,6 +4,7 @@ import type { ClipOperation, Drawing, Operation, Paint, PathOperation, Segment, 
 import type { FaceName } from '../fonts.ts'
 import type { DrawingBox, PanelBox, RuleBox, TextBox } from './frames.ts'
 import type { FontResources } from './font-resources.ts'
+import { latin1 } from './pdf-writer.ts'
 
 export interface ContentResources {
   readonly fonts: FontResources
@@ -17,6 +18,7 @@ export class Content {
   readonly #resources: ContentResources
   #fill = ''
   #stroke = ''
+  #font = ''
 
   constructor(height: number, resources: ContentResources) {
     this.#height = height
@@ -29,7 +31,7 @@ export class Content {
 
   text(box: TextBox): void {
     this.#setFill(box.colour)
-    this.#lines.push(`BT ${this.#show(box.text, box.face, box.size, `1 0 0 1 ${number(box.x)} ${number(this.#height - box.y)}`)} ET`)
+    this.#lines.push(`BT ${this.#show(box.text, box.face, box.size, `${number(box.x)} ${number(this.#height - box.y)} Td`)} ET`)
     if (box.isStruck === true) this.#line(box.x, box.y - box.size * 0.24, box.x + box.width, box.y - box.size * 0.24, 0.5, box.colour)
   }
 
@@ -49,14 +51,11 @@ export class Content {
     this.#lines.push(`q ${number(scale)} 0 0 ${number(-scale)} ${number(x)} ${number(this.#height - y)} cm`)
     for (const operation of drawing.operations) this.#operation(operation)
     this.#lines.push('Q')
-    this.#fill = this.#stroke = ''
+    this.#fill = this.#stroke = this.#font = ''
   }
 
   bytes(): Uint8Array {
-    const text = this.#lines.join('\n')
-    const bytes = new Uint8Array(text.length)
-    for (let index = 0; index < text.length; index += 1) bytes[index] = text.charCodeAt(index)
-    return bytes
+    return latin1(this.#lines.join('\n'))
   }
 
   #operation(operation: Operation): void {
@@ -82,13 +81,13 @@ export class Content {
     this.#setFill(text.paint.colour)
     const angle = (text.rotation * Math.PI) / 180
     const [cosine, sine] = [Math.cos(angle), Math.sin(angle)]
-    this.#lines.push(`BT ${this.#show(text.text, text.face, text.size, `${number(cosine)} ${number(sine)} ${number(sine)} ${number(-cosine)} ${number(text.x)} ${number(text.y)}`)} ET`)
+    this.#lines.push(`BT ${this.#show(text.text, text.face, text.size, `${number(cosine)} ${number(sine)} ${number(sine)} ${number(-cosine)} ${number(text.x)} ${number(text.y)} Tm`)} ET`)
     if (opacity) this.#leave()
   }
 
   #clip(operation: ClipOperation): void {
     this.#lines.push(`q ${operation.segments.map(segmentText).join(' ')} W n`)
-    this.#fill = this.#stroke = ''
+    this.#fill = this.#stroke = this.#font = ''
     for (const each of operation.operations) this.#operation(each)
     this.#leave()
   }
@@ -102,7 +101,7 @@ export class Content {
 
   #leave(): void {
     this.#lines.push('Q')
-    this.#fill = this.#stroke = ''
+    this.#fill = this.#stroke = this.#font = ''
   }
 
   #line(x: number, y: number, toX: number, toY: number, width: number, colour: string): void {
@@ -124,12 +123,20 @@ export class Content {
     this.#lines.push(`${components(stroke.colour)} RG ${number(stroke.width)} w ${caps[stroke.cap]} J ${joins[stroke.join]} j${dash}`)
   }
 
-  #show(text: string, face: FaceName, size: number, matrix: string): string {
+  #show(text: string, face: FaceName, size: number, position: string): string {
     const { name, pieces } = this.#resources.fonts.shown(text, face)
-    const rises = pieces.map(({ rise, array }) => (rise === 0 ? `[${array}] TJ` : `${number((rise * size) / 1000)} Ts [${array}] TJ 0 Ts`))
-    return `/${name} ${number(size)} Tf ${matrix} Tm ${rises.join(' ')}`
+    const font = `/${name} ${number(size)} Tf`
+    const shown = pieces.map(({ rise, array }) => {
+      const show = isOneString.test(array) ? `${array} Tj` : `[${array}] TJ`
+      return rise === 0 ? show : `${number((rise * size) / 1000)} Ts ${show} 0 Ts`
+    }).join(' ')
+    if (font === this.#font) return `${position} ${shown}`
+    this.#font = font
+    return `${font} ${position} ${shown}`
   }
 }
+
+const isOneString = /^<[0-9a-f]*>$/
 
 const caps = { butt: 0, round: 1, square: 2 } as const
 const joins = { miter: 0, round: 1, bevel: 2 } as const

@@ -27,17 +27,17 @@ function entry(heading: SectionHeading, item: ReturnType<typeof node>, context: 
   const tag = node('Link', item)
   const number = depth === 1 && heading.annex === true ? `Annex ${heading.number ?? ''}` : (heading.number ?? '')
   const left = depth === 1 ? 0 : numberWidth[1]
-  const textLeft = Math.max(left + numberWidth[depth], left + context.fonts.measure(number, style.face, style.size) + 8)
+  const textLeft = Math.max(left + numberWidth[depth], left + context.shaping.width(number, style.face, style.size) + 8)
   const lines = setLines(heading.children, style, tag, page.textWidth - textLeft - pageWidth, context)
   const height = lines.length * style.leading
   const last = lines.at(-1)
   const lastBaseline = (lines.length - 1) * style.leading + baselineIn(style.leading, style.size)
   const shown = context.pageOf(heading.id)
-  const shownWidth = context.fonts.measure(shown, styles.contents2.face, styles.contents2.size)
+  const shownWidth = context.shaping.width(shown, styles.contents2.face, styles.contents2.size)
   const dotsFrom = textLeft + (last?.width ?? 0) + 5
   const dotsTo = page.textWidth - Math.max(shownWidth, 10) - 6
   const at = (text: string, x: number, y: number, face: typeof style.face, size: number): Box =>
-    ({ kind: 'text', x, y, text, face, size, width: context.fonts.measure(text, face, size), colour: style.colour, tag })
+    ({ kind: 'text', x, y, text, face, size, width: context.shaping.width(text, face, size), colour: style.colour, tag })
   return {
     height, spaceBefore: depth === 1 ? 5 : 0, ...(depth === 1 ? { keepWithNext: 'must' } : {}),
     boxes: [

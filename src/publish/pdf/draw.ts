@@ -24,7 +24,7 @@ export interface Destination {
 }
 
 export function draw(frames: Frames, input: DrawInput): Uint8Array {
-  const pdf = openPdf(input)
+  const { pdf, finish } = openPdf(input)
   const pages = frames.pages.map(() => pdf.addPage().page)
   const destinations = new Map<string, Destination>()
   frames.pages.forEach(({ boxes }, index) => {
@@ -54,8 +54,7 @@ export function draw(frames: Frames, input: DrawInput): Uint8Array {
   attach(pdf, input.attachments, pdf.info.CreationDate)
   pdf._root.data['PageLabels'] = { Nums: [0, { S: 'D' }] }
   tree.finish()
-  pdf.end()
-  return new Uint8Array(pdf.read())
+  return finish()
 }
 
 function drawArtifacts(boxes: readonly Box[], subtype: 'Header' | 'Footer', content: Content): void {

@@ -12,6 +12,7 @@ import { plainText } from './inline.ts'
 import { paginate } from './paginate.ts'
 import { runningBoxes } from './running.ts'
 import { signOffSlabs } from './sign-off.ts'
+import { shaping as shapingOf } from './shaping.ts'
 import type { BlockContext, Slab } from './slab.ts'
 import { node } from './structure.ts'
 import { tableSlabs } from './table.ts'
@@ -34,11 +35,12 @@ export function flow({ document, drawings, fonts }: FlowInput): Frames {
   const root = node('Document', undefined)
   const headings = document.blocks.filter((block): block is SectionHeading => block.type === 'sectionHeading')
   const groups = grouped(document.blocks, drawings)
+  const shaping = shapingOf(fonts)
   const settled = new Map<number, readonly Slab[]>()
   let pages: ReadonlyMap<string, number> = new Map()
   for (let round = 0; round < mostRounds; round += 1) {
     const known = pages
-    const context: BlockContext = { fonts, root, pageOf: (target) => (round === 0 ? placeholder : String(pageOf(target, known))) }
+    const context: BlockContext = { shaping, root, pageOf: (target) => (round === 0 ? placeholder : String(pageOf(target, known))) }
     const slabs = groups.flatMap((group, index): readonly Slab[] => {
       const before = settled.get(index)
       if (before !== undefined) return before
@@ -51,7 +53,7 @@ export function flow({ document, drawings, fonts }: FlowInput): Frames {
     if (round > 0 && [...found].every(([id, at]) => known.get(id) === at)) {
       return {
         root,
-        pages: laid.map((boxes, index) => ({ boxes, ...runningBoxes(document.header, index + 1, laid.length, fonts) })),
+        pages: laid.map((boxes, index) => ({ boxes, ...runningBoxes(document.header, index + 1, laid.length, shaping) })),
         outline: headings.map((heading) => ({ title: outlineTitle(heading, context), depth: heading.depth, id: heading.id })),
       }
     }

@@ -1,5 +1,6 @@
 // Faces → fonts of the PDF, each embedded at its first use, and texts → arrays of glyphs with their shifts. Words are encoded once.
 import type { FaceName, FontFaces } from '../fonts.ts'
+import { figureCharacters, isFigure, plainFigures } from './shaping.ts'
 import type { PdfDocument, PdfFont, PdfReference } from './pdfkit-augmented.d.ts'
 
 export interface ShownText {
@@ -23,6 +24,7 @@ interface EncodedPiece {
 export function fontResources(pdf: PdfDocument, faces: FontFaces): FontResources {
   const fonts = new Map<FaceName, PdfFont>()
   const words = new Map<string, readonly EncodedPiece[]>()
+  const figures = new Map<FaceName, ReadonlyMap<string, string> | undefined>()
   let used = new Map<string, PdfReference>()
 
   function fontOf(face: FaceName): PdfFont {
@@ -33,7 +35,20 @@ export function fontResources(pdf: PdfDocument, faces: FontFaces): FontResources
     return pdf._font
   }
 
+  function figureGlyphs(face: FaceName): ReadonlyMap<string, string> | undefined {
+    if (figures.has(face)) return figures.get(face)
+    const glyphs = plainFigures(faces, face) === undefined ? undefined : new Map([...figureCharacters].map((character) => [character, fontOf(face).encode(character)[0].join('')]))
+    figures.set(face, glyphs)
+    return glyphs
+  }
+
   function encodedWord(word: string, face: FaceName): readonly EncodedPiece[] {
+    const glyphs = isFigure.test(word) ? figureGlyphs(face) : undefined
+    if (glyphs !== undefined) {
+      let array = ''
+      for (const character of word) array += glyphs.get(character) ?? ''
+      return [{ array: `<${array}>`, rise: 0 }]
+    }
     const key = `${face} ${word}`
     const known = words.get(key)
     if (known !== undefined) return known
@@ -47,8 +62,8 @@ export function fontResources(pdf: PdfDocument, faces: FontFaces): FontResources
       const font = fontOf(face)
       used.set(font.id, font.ref())
       const pieces: { array: string; rise: number }[] = []
-      // Word by word with the space after it, as the faces measure.
-      for (const [word] of text.matchAll(/[^ \t]*[ \t]|[^ \t]+/g)) {
+      // Words and spaces apart, as they are measured.
+      for (const [word] of text.matchAll(/[^ ]+| +/g)) {
         for (const piece of encodedWord(word, face)) {
           const last = pieces.at(-1)
           if (last !== undefined && last.rise === piece.rise) last.array += ` ${piece.array}`

@@ -2,13 +2,13 @@
 // superscripts are set smaller and shifted, with the text's own glyphs.
 import type { PhrasingContent } from 'mdast'
 import type { Inline } from '../../present/document.ts'
-import type { FontFaces } from '../fonts.ts'
 import type { Box, LinkBox } from './frames.ts'
+import type { Shaping } from './shaping.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, emboldened, resized, script, styles, type TextStyle, tinted, verdictMarks } from './style.ts'
 
 export interface InlineContext {
-  readonly fonts: FontFaces
+  readonly shaping: Shaping
   /** Page of a target as printed; a placeholder before the pages are known. */
   pageOf(target: string): string
 }
@@ -52,6 +52,11 @@ const unitLength = 10
 
 /** Sets inline nodes in lines no wider than `width`. At least one line, which may be empty. */
 export function setLines(inlines: readonly AnyInline[], style: TextStyle, tag: StructureNode | undefined, width: number, context: InlineContext): readonly Line[] {
+  const simple = simpleText(inlines)
+  if (simple !== undefined && context.shaping.isWhole(simple, style.face)) {
+    const simpleWidth = context.shaping.width(simple, style.face, style.size)
+    if (simpleWidth <= width) return [{ pieces: [{ text: simple, style, rise: 0, tag, x: 0, width: simpleWidth }], width: simpleWidth }]
+  }
   return broken(wordsOf(inlines, style, tag, context), width, context)
 }
 
@@ -63,6 +68,11 @@ export interface Extent {
 }
 
 export function extentOf(inlines: readonly AnyInline[], style: TextStyle, context: InlineContext): Extent {
+  const simple = simpleText(inlines)
+  if (simple !== undefined && simple.length <= softBreakLength && !simple.includes(' ')) {
+    const width = context.shaping.width(simple, style.face, style.size)
+    return { natural: width, least: width }
+  }
   let natural = 0
   let least = 0
   let lineWidth = 0
@@ -73,6 +83,14 @@ export function extentOf(inlines: readonly AnyInline[], style: TextStyle, contex
     lineWidth = word.endsLine === true ? 0 : lineWidth + word.space
   }
   return { natural, least }
+}
+
+/** The text of most cells: one number, or one text in one line without white at its ends. */
+function simpleText(inlines: readonly AnyInline[]): string | undefined {
+  const only = inlines[0]
+  if (inlines.length !== 1 || only === undefined) return undefined
+  if (only.type === 'number') return only.text.replaceAll(' ', '\u00a0')
+  return only.type === 'text' && !/\n|\t| {2}|^ | $/.test(only.value) && only.value !== '' ? only.value : undefined
 }
 
 /** What stands there, without style; references and page numbers included. */
@@ -156,9 +174,9 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
   let width = 0
   let holds = false
   const add = (fragment: Fragment, text: string): void => {
-    for (const run of context.fonts.runs(text, fragment.style.face)) {
+    for (const run of context.shaping.word(text, fragment.style.face)) {
       pieces.push({ ...fragment, text: run.text, style: run.face === fragment.style.face ? fragment.style : { ...fragment.style, face: run.face } })
-      width += context.fonts.measure(run.text, run.face, fragment.style.size)
+      width += run.width * fragment.style.size
     }
   }
   const close = (space: number, endsLine?: true): void => {
@@ -174,8 +192,8 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
       else if (token.startsWith(' ') || token.startsWith('\t')) {
         const isBound = holds && !fragment.isNumber && startsWithUnit(text)
         if (isBound) add(fragment, '\u00a0')
-        else if (pieces.length > 0) close(context.fonts.measure(' ', fragment.style.face, fragment.style.size))
-        else if (words.length > 0) words.push({ pieces: [], width: 0, space: context.fonts.measure(' ', fragment.style.face, fragment.style.size) })
+        else if (pieces.length > 0) close(context.shaping.width(' ', fragment.style.face, fragment.style.size))
+        else if (words.length > 0) words.push({ pieces: [], width: 0, space: context.shaping.width(' ', fragment.style.face, fragment.style.size) })
       } else if (fragment.isNumber === true || token.length <= softBreakLength) add(fragment, token)
       else {
         const parts = [...token.matchAll(softBreak)].map(([part]) => part)
@@ -232,7 +250,7 @@ function broken(words: readonly Word[], width: number, context: InlineContext): 
 }
 
 function piecesWidth(pieces: readonly Piece[], context: InlineContext): number {
-  return pieces.reduce((sum, piece) => sum + context.fonts.measure(piece.text, piece.style.face, piece.style.size), 0)
+  return pieces.reduce((sum, piece) => sum + context.shaping.width(piece.text, piece.style.face, piece.style.size), 0)
 }
 
 /** A word wider than the line, letter by letter. */
@@ -242,7 +260,7 @@ function cutToFit(word: Word, width: number, context: InlineContext): readonly (
   for (const piece of word.pieces) {
     let held = ''
     for (const [letter] of piece.text.matchAll(/[\s\S]\p{M}*/gu)) {
-      const letterWidth = context.fonts.measure(letter, piece.style.face, piece.style.size)
+      const letterWidth = context.shaping.width(letter, piece.style.face, piece.style.size)
       if (filled + letterWidth > width && (held !== '' || (parts.at(-1)?.length ?? 0) > 0)) {
         if (held !== '') parts.at(-1)?.push({ ...piece, text: held })
         parts.push([])
@@ -273,8 +291,8 @@ function placed(words: readonly { readonly pieces: readonly Piece[]; readonly sp
   })
   let x = 0
   const pieces = joined.map(({ piece, text }, index): PlacedPiece => {
-    const width = context.fonts.measure(text, piece.style.face, piece.style.size)
-    const seen = index === joined.length - 1 ? context.fonts.measure(text.trimEnd(), piece.style.face, piece.style.size) : width
+    const width = context.shaping.width(text, piece.style.face, piece.style.size)
+    const seen = index === joined.length - 1 ? context.shaping.width(text.trimEnd(), piece.style.face, piece.style.size) : width
     const made = { ...piece, text, x, width: seen }
     x += width
     return made

@@ -3,6 +3,9 @@ import { type Box, moved } from './frames.ts'
 import type { Slab } from './slab.ts'
 import { page } from './style.ts'
 
+/** A group longer than this part of a page is broken where it must, rather than leave the page before it half empty. */
+const longestTogether = 0.35
+
 export function paginate(slabs: readonly Slab[]): readonly (readonly Box[])[] {
   const pages: Box[][] = [[]]
   const room = page.bottom - page.top
@@ -30,7 +33,7 @@ export function paginate(slabs: readonly Slab[]): readonly (readonly Box[])[] {
     if (y > 0) {
       const together = chainHeight(slabs, index, 'prefer')
       const least = chainHeight(slabs, index, 'must')
-      const isWholePossible = together + repeated + foot <= room
+      const isWholePossible = together + repeated + foot <= longestTogether * room
       // A group that starts here moves as a whole only where its first row may start a page.
       const startsChain = before?.keepWithNext === undefined
       if (!fits(least) || (startsChain && isWholePossible && !fits(together))) {

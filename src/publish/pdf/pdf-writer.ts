@@ -18,7 +18,13 @@ export interface PdfWriterInput {
 
 const program = 'Assaywrit'
 
-export function openPdf(input: PdfWriterInput): PdfDocument {
+export interface PdfWriter {
+  readonly pdf: PdfDocument
+  /** Ends the document and gives its bytes. */
+  finish(): Uint8Array
+}
+
+export function openPdf(input: PdfWriterInput): PdfWriter {
   const date = new Date(`${input.date}T00:00:00Z`)
   const pdf = new (PdfKit as unknown as PdfDocumentConstructor)({
     size: 'A4', bufferPages: true, autoFirstPage: false, tagged: true, lang: input.language, displayTitle: true, pdfVersion: '1.7', subset: 'PDF/A-3a', font: null,
@@ -26,13 +32,59 @@ export function openPdf(input: PdfWriterInput): PdfDocument {
   })
   deflatePurely(pdf)
   pdf._id = identifier(input)
+  const parts = collectBytes(pdf)
   pdf._addInfo = () => {
     pdf.appendXML(metadata(input))
   }
   pdf._addColorOutputIntent = () => {
     addOutputIntent(pdf, input.colourProfile)
   }
-  return pdf
+  return {
+    pdf,
+    finish() {
+      pdf.end()
+      return concatenated(parts)
+    },
+  }
+}
+
+/** Takes the bytes as they are written; the document's own stream would hold each small piece apart. */
+function collectBytes(pdf: PdfDocument): readonly Uint8Array[] {
+  const parts: Uint8Array[] = []
+  let pending: string[] = []
+  const settle = (): void => {
+    if (pending.length > 0) parts.push(latin1(pending.join('')))
+    pending = []
+  }
+  // What the constructor has written so far.
+  parts.push(new Uint8Array(pdf.read()))
+  pdf._write = (data) => {
+    if (typeof data === 'string') {
+      pending.push(data, '\n')
+      pdf._offset += data.length + 1
+    } else {
+      settle()
+      parts.push(data)
+      pdf._offset += data.length
+    }
+  }
+  pdf.push = (end) => {
+    if (end === null) settle()
+    return true
+  }
+  return parts
+}
+
+/** One byte a letter: what PDF writes outside its text strings, whose bytes are letters already. */
+export function latin1(text: string): Uint8Array {
+  return Buffer.from(text, 'latin1')
+}
+
+/** An object of our own words, past the general conversion: structure elements come by ten thousands. */
+export function writeObject(pdf: PdfDocument, reference: PdfReference, body: string): void {
+  reference.offset = pdf._offset
+  pdf._write(`${reference.id} 0 obj\n${body}\nendobj`)
+  pdf._refEnd(reference)
 }
 
 let isDeflatingPurely = false

@@ -11,6 +11,7 @@ export interface PdfDictionary {
 export interface PdfReference {
   readonly id: number
   readonly data: PdfDictionary
+  offset: number
   compress: boolean
   buffer: Uint8Array | Uint8Array[]
   write(chunk: Uint8Array | string): void
@@ -63,6 +64,10 @@ export interface PdfDocument {
   _addInfo(): void
   _addColorOutputIntent(): void
   getStructTreeRoot(): PdfReference
+  _offset: number
+  _write(data: Uint8Array | string): void
+  _refEnd(reference: PdfReference): void
+  push(data: Uint8Array | null): boolean
   end(): void
   read(): Uint8Array
 }

@@ -1,12 +1,16 @@
 // Structure nodes → the structure tree of the PDF: every marked content and every link belongs to exactly one element, and the parent
 // tree leads back from it.
-import type { PdfDictionary, PdfDocument, PdfReference, PdfValue } from './pdfkit-augmented.d.ts'
+import { number } from './content.ts'
+import { writeObject } from './pdf-writer.ts'
+import type { PdfDocument, PdfReference, PdfValue } from './pdfkit-augmented.d.ts'
 import type { StructureNode } from './structure.ts'
 
 interface Element {
   readonly node: StructureNode
   readonly reference: PdfReference
-  readonly children: PdfValue[]
+  readonly parent: PdfReference
+  /** As written in the array of kids. */
+  readonly children: string[]
   /** Page of its first content. */
   page: PdfReference | undefined
   /** On that page. */
@@ -44,17 +48,28 @@ export function structureTree(pdf: PdfDocument): StructureTree {
     const known = elements.get(node)
     if (known !== undefined) return known
     const parent = node.parent === undefined ? undefined : elementOf(node.parent)
-    const reference = pdf.ref({ Type: 'StructElem', S: node.role, P: parent?.reference ?? root })
-    const made: Element = { node, reference, children: [], page: undefined, box: undefined }
+    const reference = pdf.ref()
+    const made: Element = { node, reference, parent: parent?.reference ?? root, children: [], page: undefined, box: undefined }
     elements.set(node, made)
     if (parent === undefined) top.push(reference)
-    else parent.children.push(reference)
+    else parent.children.push(`${reference.id} 0 R`)
     return made
   }
 
   function page(): PdfReference {
     if (current === undefined) throw new Error('marked content before the first page')
     return current
+  }
+
+  function writeElement({ node, reference, parent, children, page: first, box }: Element): void {
+    const entries = [`/Type /StructElem /S /${node.role} /P ${parent.id} 0 R`]
+    if (first !== undefined) entries.push(`/Pg ${first.id} 0 R`)
+    if (children.length > 0) entries.push(children.length === 1 ? `/K ${children[0] ?? ''}` : `/K [${children.join(' ')}]`)
+    if (node.alternative !== undefined) entries.push(`/Alt ${textString(node.alternative)}`)
+    if (node.role === 'Note') entries.push(`/ID (note-${(noteCount += 1)})`)
+    if (node.scope !== undefined) entries.push(`/A <</O /Table /Scope /${node.scope}>>`)
+    else if (node.isPlaced === true && box !== undefined) entries.push(`/A <</O /Layout /Placement /Block /BBox [${box.map(number).join(' ')}]>>`)
+    writeObject(pdf, reference, `<<${entries.join(' ')}>>`)
   }
 
   return {
@@ -67,11 +82,11 @@ export function structureTree(pdf: PdfDocument): StructureTree {
     },
     mark(node) {
       const element = elementOf(node)
-      const number = marked.length
+      const identifier = marked.length
       marked.push(element.reference)
       element.page ??= page()
-      element.children.push(element.page === page() ? number : { Type: 'MCR', Pg: page(), MCID: number })
-      return number
+      element.children.push(element.page === page() ? String(identifier) : `<</Type /MCR /Pg ${page().id} 0 R /MCID ${identifier}>>`)
+      return identifier
     },
     place(node) {
       elementOf(node)
@@ -81,7 +96,7 @@ export function structureTree(pdf: PdfDocument): StructureTree {
       const key = nextKey()
       annotation.data['StructParent'] = key
       parents.push([key, element.reference])
-      element.children.push({ Type: 'OBJR', Obj: annotation, Pg: page() })
+      element.children.push(`<</Type /OBJR /Obj ${annotation.id} 0 R /Pg ${page().id} 0 R>>`)
     },
     enclose(node, box) {
       const element = elementOf(node)
@@ -89,17 +104,7 @@ export function structureTree(pdf: PdfDocument): StructureTree {
       element.box = known === undefined ? box : [Math.min(known[0], box[0]), Math.min(known[1], box[1]), Math.max(known[2], box[2]), Math.max(known[3], box[3])]
     },
     finish() {
-      for (const { node, reference, children, page: first, box } of elements.values()) {
-        const { data } = reference
-        if (first !== undefined) data['Pg'] = first
-        const [only] = children
-        if (children.length > 0) data['K'] = children.length === 1 && only !== undefined ? only : children
-        if (node.alternative !== undefined) data['Alt'] = new String(node.alternative)
-        if (node.role === 'Note') data['ID'] = new String(`note-${(noteCount += 1)}`)
-        const attributes = attributesOf(node, box)
-        if (attributes !== undefined) data['A'] = attributes
-        reference.end()
-      }
+      for (const element of elements.values()) writeElement(element)
       const tree = pdf.ref({ Nums: parents.flatMap(([key, value]) => [key, value]) })
       tree.end()
       root.data['ParentTree'] = tree
@@ -109,8 +114,9 @@ export function structureTree(pdf: PdfDocument): StructureTree {
   }
 }
 
-function attributesOf(node: StructureNode, box: Element['box']): PdfDictionary | undefined {
-  if (node.scope !== undefined) return { O: 'Table', Scope: node.scope }
-  if (node.isPlaced === true && box !== undefined) return { O: 'Layout', Placement: 'Block', BBox: [...box] }
-  return undefined
+/** UTF-16 with its mark, in hexadecimal (ISO 32000-1, 7.9.2.2). */
+function textString(text: string): string {
+  let hexadecimal = 'FEFF'
+  for (let index = 0; index < text.length; index += 1) hexadecimal += text.charCodeAt(index).toString(16).toUpperCase().padStart(4, '0')
+  return `<${hexadecimal}>`
 }

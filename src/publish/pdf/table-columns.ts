@@ -114,7 +114,7 @@ export function alignedAt(cell: readonly Inline[], style: TextStyle, context: Bl
   const text = first.type === 'number' ? first.text : first.type === 'text' ? first.value : plainText(cell, context)
   const whole = /^[<>≤≥≈±+\u2212-]?\s?\d+/.exec(text)?.[0]
   if (whole === undefined) return undefined
-  return context.fonts.measure(whole.replaceAll(' ', '\u00a0'), style.face, style.size)
+  return context.shaping.width(whole.replaceAll(' ', '\u00a0'), style.face, style.size)
 }
 
 function laidOut(wishes: readonly Wish[], style: TextStyle): TablePart {

@@ -11,12 +11,22 @@ import { alignedAt, columnLayouts, type ColumnLayout, type TablePart } from './t
 
 const padding = { above: 2.4, below: 2.4 } as const
 
-/** Rows taller than this are cut between lines, since a page might not hold them. */
-const tallestRow = 420
+/** Rows of more lines than `tallest` are cut into pieces of `piece` lines, since a page might not hold them. */
+const lines = { tallest: 18, piece: 6 } as const
 
 export function tableSlabs(table: ExhibitTable, context: BlockContext): readonly Slab[] {
-  const parts = columnLayouts(table, context)
-  return parts.flatMap((part, index) => partSlabs(table, part, { index, count: parts.length }, context))
+  const spoken = withWords(table, context)
+  const parts = columnLayouts(spoken, context)
+  return parts.flatMap((part, index) => partSlabs(spoken, part, { index, count: parts.length }, context))
+}
+
+/** An excluded row says so in words, in its first cell unless another does. */
+function withWords(table: ExhibitTable, context: BlockContext): ExhibitTable {
+  const rows = table.groups.flat()
+  const isUnsaid = (row: ExhibitRow): boolean => row.tone === 'excluded' && !row.cells.some((cell) => /excluded/i.test(plainText(cell, context)))
+  if (!rows.some(isUnsaid)) return table
+  const spoken = (row: ExhibitRow): ExhibitRow => (isUnsaid(row) ? { ...row, cells: row.cells.map((cell, index) => (index === 0 ? [...cell, { type: 'text', value: cell.length === 0 ? 'excluded' : ' (excluded)' }] : cell)) } : row)
+  return { ...table, groups: table.groups.map((group) => group.map(spoken)) }
 }
 
 interface Position {
@@ -101,17 +111,14 @@ const borders = {
 
 function rowSlabs(row: ExhibitRow, part: TablePart, rowTag: StructureNode, border: keyof typeof borders, context: BlockContext): readonly Slab[] {
   const base = row.tone === 'excluded' ? tinted(part.style, colours.faint) : row.tone === 'total' ? emboldened(part.style) : part.style
-  const said = row.tone === 'excluded' && !row.cells.some((cell) => /excluded/i.test(plainText(cell, context)))
-  const cells = part.columns.map((column, index) => {
+  const cells = part.columns.map((column) => {
     const tag = column.column.rowHeader === true ? node('TH', rowTag, { scope: 'Row' }) : node('TD', rowTag)
     const given = row.cells[column.index] ?? []
-    const struck: readonly Inline[] = row.tone === 'excluded' && given.length > 0 && column.column.align === 'number' ? [{ type: 'delete', children: [...given] } as unknown as Inline] : given
-    const inlines: readonly Inline[] = said && index === 0 ? [...struck, { type: 'text', value: ' (excluded)' }] : struck
-    const lines = setLines(inlines, base, tag, column.width, context)
-    return { column, tag, lines, inlines: given, isEmpty: inlines.length === 0 }
+    const inlines: readonly Inline[] = row.tone === 'excluded' && given.length > 0 && column.column.align === 'number' ? [{ type: 'delete', children: [...given] } as unknown as Inline] : given
+    return { column, tag, lines: setLines(inlines, base, tag, column.width, context), inlines: given }
   })
   const count = Math.max(1, ...cells.map((cell) => cell.lines.length))
-  const perSlab = Math.floor(tallestRow / base.leading)
+  const perSlab = count > lines.tallest ? lines.piece : count
   const slabs: Slab[] = []
   for (let from = 0; from < count; from += perSlab) {
     const to = Math.min(count, from + perSlab)

@@ -47,7 +47,7 @@ export function headingSlabs(heading: SectionHeading, context: BlockContext): re
   const style = styles[`heading${heading.depth}`]
   const tag = node(`H${heading.depth}`, context.root)
   const label = heading.number === undefined ? '' : heading.annex === true && heading.depth === 1 ? `Annex ${heading.number}` : heading.number
-  const indent = label === '' ? 0 : context.fonts.measure(label, style.face, style.size) + style.size * 0.75
+  const indent = label === '' ? 0 : context.shaping.width(label, style.face, style.size) + style.size * 0.75
   const lines = setLines(heading.children, style, tag, page.textWidth - indent, context)
   const baseline = baselineIn(style.leading, style.size)
   const slabs = lines.map((line, index): Slab => ({
