@@ -77,5 +77,6 @@ function sectionOf(document: ReportDocument, characteristic: string): string {
     if (block.type === 'sectionHeading' && block.depth === 1) inside = block.id === `section-${characteristic}` || block.id.startsWith(`section-${characteristic}-`)
     return inside
   })
-  return publishMarkdown({ ...document, blocks }, { chartPath: (id) => `charts/${id}.svg`, tablePath: (id) => `tables/${id}.csv` })
+  // The digest of the record changes with every byte of the study; the section itself does not.
+  return publishMarkdown({ ...document, header: { ...document.header, digest: '' }, blocks }, { chartPath: (id) => `charts/${id}.svg`, tablePath: (id) => `tables/${id}.csv` })
 }

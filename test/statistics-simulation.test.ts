@@ -29,7 +29,7 @@ describe('95 % intervals cover the truth in 95 % of trials', () => {
     expect(Math.abs(share(50 + n, (random) => inside(standardDeviationInterval(standardDeviation(Array.from({ length: n }, () => 10 + 2 * random.normal())), n - 1, 0.95), 2)) - 0.95)).toBeLessThan(monteCarlo)
   })
 
-  test.each([[[3, 3, 3, 3, 3, 3], 'balanced'], [[2, 5, 3, 6, 2, 4], 'unbalanced']] as const)('intermediate precision, runs of %j (%s): modified large sample', (sizes) => {
+  test.each([[[3, 3, 3, 3, 3, 3], 'balanced'], [[2, 5, 3, 6, 2, 4], 'unbalanced']] as const)('intermediate precision, runs of %j (%s): modified large sample', (sizes, _) => {
     const truth = Math.sqrt(1 + 1.5 ** 2)
     const covered = share(7, (random) => {
       const anova = oneWay(sizes.map((size) => {
