@@ -20,7 +20,7 @@ export async function drawChart(chart: Chart, measure: MeasureText): Promise<Dra
   const complaints: string[] = []
   const logger = complainingLogger(complaints)
   measureTextWith(measure)
-  const view = new vega.View(runtimeOf(chart.specification, logger), { renderer: 'none', logger, locale: numberLocale as unknown as vega.LocaleFormatters })
+  const view = new vega.View(runtimeOf(chart.specification, logger), { renderer: 'none', logger, expr: expressions, locale: numberLocale as unknown as vega.LocaleFormatters })
   // Copies, because Vega marks the rows that it takes in.
   for (const [name, rows] of Object.entries(chart.data)) view.data(name, rows.map((row) => ({ ...row })))
   await view.runAsync()
@@ -36,11 +36,29 @@ export async function drawChart(chart: Chart, measure: MeasureText): Promise<Dra
 /** Members of Vega that its types do not know. */
 const untyped = vega as unknown as {
   readonly textMetrics: { width: (item: TextItem, text: unknown) => number }
+  readonly Dataflow: new () => object
+  readonly runtimeContext: (dataflow: object, transforms: object, functions: object, expressions: undefined) => { readonly expr: Readonly<Record<'operator' | 'parameter' | 'encode', (context: object, expression: object) => ExpressionFunction>> }
   readonly CanvasRenderer: new () => {
     initialize(element: null, width: number, height: number, origin: readonly [number, number], scale: number, options: { readonly externalContext: RecordingContext }): void
     render(root: unknown): void
   }
 }
+
+/** What Vega makes of an expression of a specification; the views of one runtime share it, as compiling is dear. */
+const compiled = new WeakMap<object, ExpressionFunction>()
+
+function shared(compile: (context: object, expression: object) => ExpressionFunction): (context: { readonly functions?: unknown }, expression: object) => ExpressionFunction {
+  return (context, expression) => {
+    const known = compiled.get(expression) ?? compile({}, expression)
+    compiled.set(expression, known)
+    return known.bind(context.functions) as ExpressionFunction
+  }
+}
+
+type ExpressionFunction = (...given: readonly unknown[]) => unknown
+
+const plain = untyped.runtimeContext(new untyped.Dataflow(), {}, {}, undefined).expr
+const expressions = { ...plain, operator: shared(plain.operator), parameter: shared(plain.parameter), encode: shared(plain.encode) }
 
 /** Decimal point and thin spaces, as in the tables: no comma that could be read as a decimal one. */
 const numberLocale = { number: { decimal: '.', thousands: '\u2009', grouping: [3], currency: ['', ''], minus: '\u2212' } }

@@ -4,7 +4,7 @@ import type { ChartWidth } from './chart-input.ts'
 import type { Fragment } from './layers.ts'
 import { estimatedWidth, wrapped as wrap } from './label-placement.ts'
 
-const lineGap = 8.5
+export const lineGap = 8.5
 
 export interface CategoryNames {
   /** Name as given → name with line breaks. */
@@ -23,7 +23,7 @@ export function namesBelow(names: readonly string[], plotWidth: number): Categor
   const turned = band < lineGap * 1.6 ? { labelAngle: -90, labelBaseline: 'middle', labelOverlap: 'greedy' } : { labelAngle: -45, labelBaseline: 'top', labelOverlap: false }
   return names.length > 0 && fits
     ? { shown: joined(wrapped), axis: { labelAngle: 0, labelOverlap: false, ...brokenLines }, width: band }
-    : { shown: joined(new Map(names.map((name) => [name, wrap(name, 130)]))), axis: { ...turned, labelAlign: 'right', ...brokenLines }, width: band }
+    : { shown: joined(new Map(names.map((name) => [name, wrap(name, 110)]))), axis: { ...turned, labelAlign: 'right', ...brokenLines }, width: band }
 }
 
 /** Names to the left of a plot, wrapped so that the larger part is left to the plot. */

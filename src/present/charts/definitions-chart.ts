@@ -4,8 +4,9 @@ import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
 import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { chartSpecification, inks, plotFrame, seriesInks, seriesShapes } from './house-style.ts'
-import { category, field, legendColumns, nameChannel, pointMark, rowsOf, spanLayer, ticksAcross, valueChannel, yOffset } from './layers.ts'
+import { chartSpecification, inks, plotFrame, seriesInks } from './house-style.ts'
+import { footOfAxis, keyLayers, keyRows, seriesEncoding } from './key.ts'
+import { category, field, nameChannel, pointMark, rowsOf, spanLayer, ticksAcross, valueChannel, yOffset } from './layers.ts'
 import { uprightLineData, uprightLineLayers } from './upright-lines.ts'
 
 export interface DefinitionsChartInput {
@@ -29,18 +30,20 @@ export function definitionsChart(input: DefinitionsChartInput): Chart {
   const marks = labels.flatMap((label) => {
     const here = items.filter((item) => item.label === label)
     const offsets = spread(here.map((item) => positionOn(span, item.value) * frame.plotWidth), rowHeight * 0.4)
-    return here.map((item, index) => ({ ...item, label: shown(label), offset: rowHeight / 2 + (offsets[index] ?? 0) }))
+    return here.map((item, index) => ({ ...item, label: shown(label), series: item.kind, offset: rowHeight / 2 + (offsets[index] ?? 0) }))
   })
   const y = category('label')
-  const shared = { field: 'kind', type: 'nominal', sort: null, legend: { orient: 'bottom', columns: legendColumns(kinds, frame.plotWidth), symbolFillColor: inks.paper } }
-  const kind = { shape: { ...shared, scale: { range: seriesShapes } }, stroke: { ...shared, scale: { range: seriesInks } } }
+  // Hollow unless the row governs; an entry of the key is no row of data, hence hollow.
+  const kind = { ...seriesEncoding, fill: { condition: { test: '!datum.governing', value: inks.paper }, ...category('series'), scale: { range: seriesInks }, legend: null } }
+  const mark = { ...pointMark, strokeWidth: 1.1, fillOpacity: 1 }
   const specification = chartSpecification(frame, [
     spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('label', { title: null, grid: true, ...names.axis })),
     ...uprightLineLayers(),
-    { data: { name: 'items' }, mark: { ...pointMark, size: 46, strokeWidth: 1.1, fillOpacity: 1 }, encoding: { x: field('value'), y, yOffset, ...kind, fill: { condition: { test: '!datum.governing', value: inks.paper }, ...shared, scale: { range: seriesInks } } } },
+    { data: { name: 'items' }, mark: { ...mark, size: 46 }, encoding: { x: field('value'), y, yOffset, ...kind } },
+    ...keyLayers(kind, { ...mark, size: 36 }),
   ], { height: { step: rowHeight } })
   return {
     specification,
-    data: { span: labels.flatMap((label) => [span.low, span.high].map((value) => ({ label: shown(label), value }))), items: rowsOf(marks), ...uprightLineData(lines, span, frame) },
+    data: { span: labels.flatMap((label) => [span.low, span.high].map((value) => ({ label: shown(label), value }))), items: rowsOf(marks), key: keyRows(kinds, frame, footOfAxis), ...uprightLineData(lines, span, frame) },
   }
 }

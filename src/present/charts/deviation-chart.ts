@@ -3,7 +3,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, LabelledValue, SeriesPoint } from './chart-input.ts'
 import { chartSpecification, plotFrame } from './house-style.ts'
-import { excludedLayers, field, limitLayers, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel, withSeries, zeroMark } from './layers.ts'
+import { keyLayers, keyRows, seriesEncoding, seriesOf, withSeries } from './key.ts'
+import { excludedLayers, field, limitLayers, placedLabels, pointMark, rowsOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel, zeroMark } from './layers.ts'
 
 export interface DeviationChartInput {
   readonly xTitle: string
@@ -31,8 +32,8 @@ export function deviationChart(input: DeviationChartInput): Chart {
     spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
     { data: { values: [{ zero: 0 }] }, mark: zeroMark, encoding: { y: field('zero') } },
     ...limitLayers(field('value')),
-    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },
-    ...excludedLayers(x, y),
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
+    ...excludedLayers(x, y), ...keyLayers(),
   ])
-  return { specification, data: { span: spanRows(spans.x, spans.y), limits: rowsOf(limits), points: withSeries(points, names), excluded: rowsOf(excluded), ...placedLabels(frame, spans, { points, excluded, limits }) } }
+  return { specification, data: { span: spanRows(spans.x, spans.y), limits: rowsOf(limits), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), ...placedLabels(frame, spans, { points, excluded, limits }) } }
 }

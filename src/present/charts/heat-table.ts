@@ -1,11 +1,11 @@
 // Verdicts of many rows by column as tiles with a mark and a tone, so that the few that need attention stand out; the mark alone
 // says the verdict in a grey print.
 import type { Chart } from '../document.ts'
-import { linesOf, namesBeside, namesBelow, namesInOrder, roomBeside } from './categories.ts'
+import { lineGap, linesOf, namesBeside, namesBelow, namesInOrder, roomBeside } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
-import { estimatedWidth } from './label-placement.ts'
-import { category, nameChannel, rowsOf } from './layers.ts'
+import { keyLayers, keyRows } from './key.ts'
+import { category, nameChannel } from './layers.ts'
 
 export interface HeatTableInput {
   readonly rowTitle: string
@@ -33,7 +33,6 @@ export function heatTable(input: HeatTableInput): Chart {
   const above = namesBelow(columns, frame.plotWidth)
   const used = verdicts.filter(({ word }) => cells.some((cell) => cell.word === word)).map(({ word }) => word)
   const [x, y] = [category('column'), category('row')]
-  const keyPlace = { x: { expr: 'datum.at' }, y: { expr: 'height + 13' } }
   const words = verdicts.map(({ word }) => word)
   const tone = { field: 'word', type: 'nominal', scale: { domain: words, range: verdicts.map((verdict) => verdict.tone) }, legend: null }
   const mark = {
@@ -41,26 +40,14 @@ export function heatTable(input: HeatTableInput): Chart {
     stroke: { field: 'word', type: 'nominal', scale: { domain: words, range: verdicts.map((verdict) => verdict.ink) }, legend: null },
   }
   const specification = chartSpecification(frame, [
-    { data: { name: 'cells' }, mark: { type: 'rect', stroke: inks.paper, strokeWidth: 1.5, opacity: 1 }, encoding: { x: nameChannel('column', { title: null, orient: 'top', domain: false, ticks: false, ...above.axis }), y: nameChannel('row', { title: input.rowTitle, grid: false, ...beside.axis }), fill: tone } },
+    { data: { name: 'cells' }, mark: { type: 'rect', stroke: inks.paper, strokeWidth: 1.5, opacity: 1 }, encoding: { x: nameChannel('column', { title: null, orient: 'top', domain: false, ticks: false, ...above.axis, labelPadding: 3 + (linesOf(above) - 1) * lineGap }), y: nameChannel('row', { title: input.rowTitle, grid: false, ...beside.axis }), fill: tone } },
     { data: { name: 'cells' }, mark: { type: 'point', filled: false, size: tall > 12 ? 48 : 36, strokeWidth: 1.2, opacity: 1 }, encoding: { x, y, ...mark } },
-    { data: { name: 'key' }, mark: { type: 'point', shape: 'square', size: 110, strokeWidth: 0, opacity: 1, fillOpacity: 1, ...keyPlace }, encoding: { fill: tone } },
-    { data: { name: 'key' }, mark: { type: 'point', filled: false, size: 36, strokeWidth: 1.1, opacity: 1, ...keyPlace }, encoding: mark },
-    { data: { name: 'key' }, mark: { type: 'text', align: 'left', baseline: 'middle', dx: 8, ...keyPlace }, encoding: { text: { field: 'word', type: 'nominal' } } },
+    ...keyLayers({ fill: tone }, { shape: 'square', size: 110, strokeWidth: 0, fillOpacity: 1 }), ...keyLayers(mark, { filled: false, fill: null, size: 36, strokeWidth: 1.1 }).slice(0, 1),
   ], { height: { step: tall } })
   const lines = linesOf(above)
   const column = (name: string): string => {
     const shown = above.shown.get(name) ?? name
     return '\n'.repeat(lines - shown.split('\n').length) + shown
   }
-  return { specification, data: { cells: cells.map((cell) => ({ ...cell, row: beside.shown.get(cell.row) ?? cell.row, column: column(cell.column) })), key: rowsOf(keyPlaces(used)) } }
-}
-
-/** The key stands below the tiles, from the left. */
-function keyPlaces(words: readonly string[]): readonly { readonly word: string; readonly at: number }[] {
-  let at = 6
-  return words.map((word) => {
-    const place = { word, at }
-    at += estimatedWidth(word) + 28
-    return place
-  })
+  return { specification, data: { cells: cells.map((cell) => ({ ...cell, row: beside.shown.get(cell.row) ?? cell.row, column: column(cell.column) })), key: keyRows(used, frame, 13).map((each) => ({ ...each, word: each['series'] })) } }
 }

@@ -20,7 +20,8 @@ export const inks = {
 
 /** Dark to light in turn, so that neighbours differ in grey too. */
 export const seriesInks = ['#1f4e6e', '#d07c1f', '#6b2f5e', '#4f9aa8', '#3d3d3d', '#9a9a3c']
-export const seriesShapes = ['circle', 'square', 'triangle-up', 'diamond', 'triangle-down', 'cross']
+/** One more than the inks, so that a pair of shape and ink comes again only after all pairs. */
+export const seriesShapes = ['circle', 'square', 'triangle-up', 'diamond', 'triangle-down', 'cross', 'M-0.7,-0.7L0.7,0.7M-0.7,0.7L0.7,-0.7']
 export const seriesDashes = [[1, 0], [5, 2.5], [1.5, 1.8], [7, 2, 1.5, 2], [10, 3], [3, 3]]
 
 /** An upright bar at the bound and an arrow to the side on which the value lies. */
@@ -56,17 +57,19 @@ export function plotFrame(width: ChartWidth = 'full', sides: { readonly left?: n
 export function chartSpecification(frame: PlotFrame, layer: readonly Fragment[], options: { readonly height?: Fragment } = {}): Fragment {
   return {
     usermeta: { frame: { left: frame.left, width: frame.total } },
-    background: null, padding: 0, width: frame.plotWidth, height: options.height ?? frame.plotHeight,
+    background: null, padding: 0, autosize: 'none', width: frame.plotWidth, height: options.height ?? frame.plotHeight,
     layer, config: houseConfig,
   }
 }
 
-/** Panels below one another, each with its own value axis and the name of its level above it. */
+const panelGap = 26
+
+/** Panels below one another, each with its own value axis and room for the name of its level above it. */
 export function panelledSpecification(frame: PlotFrame, options: { readonly field: string; readonly data: string; readonly layer: readonly Fragment[] }): Fragment {
   return {
     usermeta: { frame: { left: frame.left, width: frame.total } },
-    background: null, padding: 0, data: { name: options.data }, spacing: 12,
-    facet: { field: options.field, type: 'nominal', sort: { field: 'panelOrder', op: 'min' } }, columns: 1,
+    background: null, padding: 0, autosize: 'none', data: { name: options.data }, bounds: 'flush', spacing: panelGap,
+    facet: { row: { field: options.field, type: 'nominal', sort: { field: 'panelOrder', op: 'min' }, header: { labels: false, title: null } } },
     spec: { width: frame.plotWidth, height: frame.plotHeight, layer: options.layer },
     resolve: { scale: { y: 'independent' } }, config: houseConfig,
   }
@@ -77,6 +80,8 @@ const font = 'Source Sans 3'
 export const houseConfig = {
   font,
   view: { stroke: null },
+  // A point without a place is our mistake and stops the publisher; left to itself the library would drop it.
+  mark: { invalid: 'show' },
   axis: {
     labelFont: font, labelFontSize: textSize, labelColor: inks.quiet, labelPadding: 3, labelLimit: 0, labelFlush: false, labelOverlap: 'greedy', labelSeparation: 4,
     titleFont: font, titleFontSize: titleSize, titleFontWeight: 'normal', titleColor: inks.text, titleLimit: 0,
@@ -84,11 +89,6 @@ export const houseConfig = {
   },
   axisX: { grid: false, titlePadding: 5 },
   axisY: { grid: true, domain: false, ticks: false, titlePadding: 4 },
-  legend: {
-    orient: 'top', direction: 'horizontal', title: null, offset: 7, padding: 0, columnPadding: 12, rowPadding: 3, labelFont: font, labelFontSize: textSize, labelColor: inks.text, labelLimit: 0,
-    symbolSize: 30, symbolStrokeWidth: 1, labelOffset: 3,
-  },
-  header: { labelFont: font, labelFontSize: 8, labelFontWeight: 'bold', labelColor: inks.text, labelAnchor: 'start', labelLimit: 0, title: null, labelPadding: 3 },
   text: { font, fontSize: textSize, color: inks.text },
   point: { filled: true, size: pointSize, opacity: 1, strokeWidth: 0.9 },
 }

@@ -63,7 +63,7 @@ export function alongLine(away: 'above' | 'below', width: number): readonly Labe
 
 /** Above the top of a curve, in as many rows as it takes. */
 export function aboveTop(): readonly LabelOffset[] {
-  return Array.from({ length: 6 }, (_, row) => row * -(labelSize + 2.5) - 4).flatMap((dy): readonly LabelOffset[] => [{ dx: 0, dy, align: 'center' }, { dx: -3, dy, align: 'left' }, { dx: 3, dy, align: 'right' }])
+  return Array.from({ length: 6 }, (_, row) => row * -(labelSize + 2.5) - 4).flatMap((dy): readonly LabelOffset[] => [{ dx: 0, dy, align: 'center' }, { dx: 4, dy, align: 'left' }, { dx: -4, dy, align: 'right' }])
 }
 
 /** In the order asked for; `plot` keeps labels inside, `taken` are boxes of points. A label for which nothing is free takes its last candidate that touches no other label. */

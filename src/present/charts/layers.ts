@@ -3,8 +3,8 @@
 import type { AxisDomain } from './axis-domain.ts'
 import { positionOn, scaleOf } from './axis-domain.ts'
 import type { LabelledPoint, LabelledValue } from './chart-input.ts'
-import { inks, pointSize, seriesInks, seriesShapes, textSize, ticksAlong, titleSize, valueLabels, type PlotFrame } from './house-style.ts'
-import { aroundPoint, alongLine, estimatedWidth, placeLabels, wrapped, type Box, type LabelRequest } from './label-placement.ts'
+import { inks, pointSize, textSize, ticksAlong, titleSize, valueLabels, type PlotFrame } from './house-style.ts'
+import { aroundPoint, alongLine, placeLabels, wrapped, type Box, type LabelRequest } from './label-placement.ts'
 
 export type Fragment = Readonly<Record<string, unknown>>
 export type Rows = readonly Readonly<Record<string, unknown>>[]
@@ -14,9 +14,10 @@ export function rowsOf<T extends object>(items: readonly T[]): Rows {
   return items.map((item) => Object.fromEntries(Object.entries(item)))
 }
 
-/** The encoding that bears an axis of numbers: field, scale and axis. */
+/** The encoding that bears an axis of numbers: field, scale and axis. The ends stand in the first two rows of the span. */
 export function valueChannel(channel: 'x' | 'y', name: string, title: string, frame: PlotFrame, domain: AxisDomain, more: Fragment = {}): Fragment {
-  return { ...field(name), scale: domain.logarithmic ? { type: 'log', nice: false } : { type: 'linear', nice: false, zero: false }, axis: valueAxis(channel, title, frame, domain, more) }
+  const ends = { expr: `[data('span')[0].${name}, data('span')[1].${name}]` }
+  return { ...field(name), scale: { domain: ends, nice: false, ...(domain.logarithmic ? { type: 'log' } : { type: 'linear', zero: false }) }, axis: valueAxis(channel, title, frame, domain, more) }
 }
 
 /** The encoding that bears an axis of names, in the order of the data. */
@@ -64,28 +65,6 @@ export function spanRows(x: AxisDomain, y: AxisDomain): Rows {
 
 export function field(name: string): Fragment {
   return { field: name, type: 'quantitative' }
-}
-
-/** How series are told apart: shape first, ink second. Without series, nothing. */
-export function seriesEncoding(names: readonly string[], frame: PlotFrame): Fragment {
-  if (names.length === 0) return {}
-  const shared = { field: 'series', type: 'nominal', sort: null, legend: { columns: legendColumns(names, frame.plotWidth) } }
-  return { stroke: { ...shared, scale: { range: seriesInks } }, fill: { ...shared, scale: { range: seriesInks } }, shape: { ...shared, scale: { range: seriesShapes } } }
-}
-
-export function legendColumns(names: readonly string[], width: number): number {
-  const widest = Math.max(...names.map((name) => estimatedWidth(name) + 26))
-  return Math.max(1, Math.min(names.length, Math.floor(width / widest)))
-}
-
-/** Names in order of appearance; values without one, beside values with one, are `other`. */
-export function seriesOf(points: readonly { readonly series?: string | undefined }[]): readonly string[] {
-  if (points.every((point) => point.series === undefined)) return []
-  return [...new Set(points.map((point) => point.series ?? 'other'))]
-}
-
-export function withSeries<T extends { readonly series?: string | undefined }>(points: readonly T[], names: readonly string[]): Rows {
-  return points.map((point) => (names.length === 0 ? point : { ...point, series: point.series ?? 'other' }))
 }
 
 /** Full outline and half-clear filling: of points that lie on one another, each is seen. */

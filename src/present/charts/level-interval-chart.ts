@@ -5,8 +5,9 @@ import { axisDomain, positionOn } from './axis-domain.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
+import { keyData, keyLayers, meanKeyLayers, seriesEncoding, seriesOf, withSeries } from './key.ts'
 import { aroundPoint, placeLabels } from './label-placement.ts'
-import { capped, category, excludedMark, field, labelLayer, limitLayers, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, ticksUp, valueChannel, withSeries, xOffset } from './layers.ts'
+import { capped, category, excludedMark, field, labelLayer, limitLayers, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, spanLayer, ticksUp, valueChannel, xOffset } from './layers.ts'
 
 export interface LevelIntervalChartInput {
   readonly xTitle: string
@@ -42,6 +43,7 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   )
 
   const series = seriesOf(points)
+  const spreadMeans = means.filter((each) => each.low !== undefined && each.high !== undefined)
   const x = category('level')
   const y = field('value')
   const specification = chartSpecification(frame, [
@@ -49,18 +51,20 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
     ...limitLayers(y),
     ...capped('intervals', { channel: 'y', across: { ...x, bandPosition: 0.66 } }),
     { data: { name: 'means' }, mark: meanMark, encoding: { x: { ...x, bandPosition: 0.56 }, x2: { field: 'level', bandPosition: 0.76 }, y: field('mean') } },
-    { data: { name: 'points' }, mark: pointMark, encoding: { x, xOffset, y, ...seriesEncoding(series, frame) } },
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, xOffset, y, ...seriesEncoding } },
     { data: { name: 'excluded' }, mark: excludedMark, encoding: { x, xOffset, y } },
     labelLayer('excludedLabels', { x, y }, { color: inks.excluded }),
+    ...keyLayers(), ...meanKeyLayers(),
   ])
   return {
     specification,
     data: {
       span: levels.flatMap((level) => [span.low, span.high].map((value) => ({ level: names.shown.get(level) ?? level, value }))),
       limits: rowsOf(limits), limitLabels: limits.map((limit, index) => ({ ...limit, ...placed[index] })),
-      intervals: rowsOf(means.filter((each) => each.low !== undefined && each.high !== undefined).map(shown)), means: rowsOf(means.map(shown)),
+      intervals: rowsOf(spreadMeans.map(shown)), means: rowsOf(means.map(shown)),
       points: withSeries(points.map((each, index) => ({ ...shown(each), offset: offsets.get(index) ?? 0 })), series),
       excluded: rowsOf(excluded.map((each, index) => ({ ...shown(each), offset: offsets.get(points.length + index) ?? 0 }))),
+      ...keyData(series, means.length === 0 ? 'none' : spreadMeans.length === 0 ? 'mean' : 'interval', frame),
       excludedLabels: excluded.map((each, index) => {
         const place = placed[limits.length + index]
         return { ...shown(each), ...place, dx: (place?.dx ?? 0) + (offsets.get(points.length + index) ?? 0) - band / 2 }

@@ -4,7 +4,8 @@ import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
 import type { ChartWidth, LabelledPoint, SeriesPoint } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
-import { excludedLayers, field, placedLabels, pointMark, rowsOf, seriesEncoding, seriesOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel, withSeries } from './layers.ts'
+import { keyLayers, keyRows, seriesEncoding, seriesOf, withSeries } from './key.ts'
+import { excludedLayers, field, placedLabels, pointMark, rowsOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
 
 export interface ResponseChartInput {
   readonly xTitle: string
@@ -32,9 +33,9 @@ export function responseChart(input: ResponseChartInput): Chart {
     spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
     { data: { name: 'band' }, mark: { type: 'area', color: inks.band, opacity: 1 }, encoding: { x, y: field('low'), y2: { field: 'high' } } },
     { data: { name: 'line' }, mark: { type: 'line', color: inks.data, strokeWidth: 1 }, encoding: { x, y } },
-    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding(names, frame) } },
-    ...excludedLayers(x, y),
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
+    ...excludedLayers(x, y), ...keyLayers(),
   ])
   const { excludedLabels } = placedLabels(frame, spans, { points: [...points, ...line], excluded, limits: [] })
-  return { specification, data: { span: spanRows(spans.x, spans.y), band: rowsOf(band), line: rowsOf(line), points: withSeries(points, names), excluded: rowsOf(excluded), excludedLabels } }
+  return { specification, data: { span: spanRows(spans.x, spans.y), band: rowsOf(band), line: rowsOf(line), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), excludedLabels } }
 }

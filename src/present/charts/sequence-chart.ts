@@ -5,7 +5,8 @@ import { axisDomain } from './axis-domain.ts'
 import { namesInOrder } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, plotFrame, seriesDashes } from './house-style.ts'
-import { category, field, pointMark, rowsOf, seriesEncoding, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
+import { keyLayers, keyRows, seriesEncoding } from './key.ts'
+import { category, field, pointMark, rowsOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
 
 export interface SequenceChartInput {
   readonly orderTitle: string
@@ -23,13 +24,13 @@ export function sequenceChart(input: SequenceChartInput): Chart {
     y: axisDomain([...points, ...line].map((each) => each.value), { ticks: ticksUp(frame), room: 0.06 }),
   }
   const conditions = namesInOrder(points.map((each) => each.condition), line.map((each) => each.condition))
-  const named = <T extends { readonly condition: string }>(items: readonly T[]) => conditions.flatMap((condition) => items.filter((item) => item.condition === condition)).map(({ condition, ...rest }) => ({ ...rest, series: condition, condition }))
+  const named = <T extends { readonly condition: string }>(items: readonly T[]) => conditions.flatMap((condition) => items.filter((item) => item.condition === condition)).map(({ condition, ...rest }) => ({ ...rest, series: condition }))
   const [x, y] = [field('order'), field('value')]
-  const told = seriesEncoding(conditions, frame)
   const specification = chartSpecification(frame, [
     spanLayer(valueChannel('x', 'x', input.orderTitle, frame, spans.x, { tickMinStep: 1 }), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
-    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...told } },
-    { data: { name: 'line' }, mark: { type: 'line', strokeWidth: 1 }, encoding: { x, y, stroke: told['stroke'], strokeDash: { ...category('condition'), legend: null, scale: { range: seriesDashes } } } },
+    { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
+    ...keyLayers(),
+    { data: { name: 'line' }, mark: { type: 'line', strokeWidth: 1 }, encoding: { x, y, stroke: seriesEncoding['stroke'], strokeDash: { ...category('series'), legend: null, scale: { range: seriesDashes } } } },
   ])
-  return { specification, data: { span: spanRows(spans.x, spans.y), points: rowsOf(named(points)), line: rowsOf(named(line)) } }
+  return { specification, data: { span: spanRows(spans.x, spans.y), key: keyRows(conditions, frame), points: rowsOf(named(points)), line: rowsOf(named(line)) } }
 }
