@@ -42,6 +42,7 @@ export function criteriaReader(part: DefinitionPart, measurands: readonly Measur
     schema: { type: 'object', additionalProperties: false, properties: Object.fromEntries(schemas), description: 'Acceptance criteria: metric → phrase' },
     read(node, reading) {
       if (node.kind !== 'map') return unexpected(node, reading, 'metric → phrase')
+      const isCut = node.entries.some((entry) => /^\d/.test(entry.key)) // a decimal comma made two keys of one phrase: its unit is the second
       let isComplete = reportUnknownKeys(node, Object.keys(part.metrics), reading)
       const criteria = node.entries.flatMap((entry): readonly Criterion[] => {
         const metric = Object.hasOwn(part.metrics, entry.key) ? part.metrics[entry.key] : undefined
@@ -60,7 +61,7 @@ export function criteriaReader(part: DefinitionPart, measurands: readonly Measur
           overrides: Object.fromEntries(special.map(({ key, value }) => [key, { limit: value.limit, text: value.text }])),
         }
         const places = new Map(special.map(({ key, value }) => [key, value.place]))
-        isComplete = checkUnits(criterion, metric, measurands, inner, (measurand) => places.get(measurand) ?? plain.place) && isComplete
+        isComplete = (isCut || checkUnits(criterion, metric, measurands, inner, (measurand) => places.get(measurand) ?? plain.place)) && isComplete
         return [criterion]
       })
       return isComplete ? criteria : undefined
@@ -86,7 +87,7 @@ export function checkUnits(criterion: Criterion, metric: Metric, measurands: rea
     const found = unit === '' ? 'no unit' : `the unit \`${unit}\``
     reading.report(diagnostic('definition/unit-mismatch', needsResponse
       ? `Unexpected criterion \`${typed}\`: \`${measurand.id}\` has no unit of response`
-      : `Unexpected unit of the limit \`${typed}\`: it has ${found}, and ${metric.label} of \`${measurand.id}\` has ${needed === '' ? 'none' : `\`${needed}\``}`, {
+      : `Unexpected unit of the limit \`${typed.trim()}\`: it has ${found}, and ${metric.label} of \`${measurand.id}\` has ${needed === '' ? 'none' : `\`${needed}\``}`, {
       place, actual: found, expected: needsResponse ? '`response:` of the measurand' : needed === '' ? 'a limit without unit' : `a limit in ${needed}`,
       mend: needsResponse ? `Add \`response:\` with its unit to the measurand \`${measurand.id}\`` : mended(typed, unit, needed, measurand.id, measurands.length),
     }))
@@ -98,5 +99,6 @@ function mended(typed: string, unit: string, needed: string, measurand: string, 
   const own = concerned > 1 ? `; measurands with other units need their own limit under \`for: { ${measurand}: … }\`` : ''
   if (needed === '') return `Write it without unit${own}`
   if (unit !== '') return `Convert the limit to ${needed}${own}`
+  if (!/^(at |above|below|between)/.test(typed)) return `Write the number with its unit, ${needed}${own}` // it follows from an option
   return `Write \`${typed.replace(/(\d)(?= and |$)/g, `$1 ${needed}`)}\`${own}`
 }

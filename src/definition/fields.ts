@@ -138,8 +138,11 @@ export function reportUnknownKeys(node: MapNode, known: readonly string[], readi
   const strangers = node.entries.filter((entry) => !known.includes(entry.key))
   for (const entry of strangers) {
     const guess = nearest(entry.key, known)
+    // `{ limit: at most 2,5 % }` is read as a second key `5 %`.
+    const isCutNumber = /^\d/.test(entry.key) && entry.value.kind === 'scalar' && entry.value.value === null
     reading.report(diagnostic('definition/unknown-key', `Unexpected key \`${entry.key}\`${reading.path === '' ? '' : ` in \`${reading.path}\``}`, {
-      place: entry.keyPlace, actual: entry.key, expected: `one of: ${known.join(', ')}`, mend: guess === undefined ? 'Remove the key, or write a known one' : `Write \`${guess}\``,
+      place: entry.keyPlace, actual: entry.key, expected: known.length === 0 ? 'no key' : `one of: ${known.join(', ')}`,
+      mend: isCutNumber ? 'A comma between `{` and `}` begins a new key: write the number with a point' : guess === undefined ? 'Remove the key, or write a known one' : `Write \`${guess}\``,
     }))
   }
   return strangers.length === 0

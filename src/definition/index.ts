@@ -30,7 +30,7 @@ export function readDefinition(source: { readonly file: string; readonly text: s
   }
   const root = tree.value
   if (root.kind !== 'map') {
-    unexpected(root, { ...reading, path: 'the study' }, 'keys such as `format:`, `report:` and `measurands:`')
+    unexpected(root, { ...reading, path: source.file }, 'keys such as `format:`, `report:` and `measurands:`')
     return { value: undefined, diagnostics }
   }
   reportUnknownKeys(root, Object.keys(studyFields), reading)

@@ -40,8 +40,9 @@ export function kindOf(node: StudyNode): string {
 }
 
 export function unexpected(node: StudyNode, reading: Reading, expected: string, mend?: string): undefined {
-  reading.report(diagnostic('definition/wrong-type', `Unexpected ${kindOf(node)} for \`${reading.path}\``, {
-    place: node.place, actual: kindOf(node), expected, mend: mend ?? `Write ${expected}`,
+  const found = kindOf(node)
+  reading.report(diagnostic('definition/wrong-type', found === 'nothing' ? `Expected ${expected} for \`${reading.path}\`` : `Unexpected ${found.replace(/^a /, '')} for \`${reading.path}\``, {
+    place: node.place, actual: found, expected, mend: mend ?? `Write ${expected}`,
   }))
   return undefined
 }

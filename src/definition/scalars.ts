@@ -102,7 +102,8 @@ function isCalendarDate(candidate: string): boolean {
 
 export function number(about: Described & { readonly minimum?: number; readonly maximum?: number; readonly integer?: true }): Reader<number> {
   const bounds = [...(about.minimum === undefined ? [] : [`of at least ${about.minimum}`]), ...(about.maximum === undefined ? [] : [`of at most ${about.maximum}`])].join(' and ')
-  const expected = `${about.integer ? 'a whole number' : 'a number'}${bounds === '' ? '' : ` ${bounds}`}`
+  const isFixed = about.minimum !== undefined && about.minimum === about.maximum
+  const expected = isFixed ? `the number ${about.minimum}` : `${about.integer ? 'a whole number' : 'a number'}${bounds === '' ? '' : ` ${bounds}`}`
   return {
     schema: described({
       type: about.integer ? 'integer' : 'number',

@@ -13,7 +13,7 @@ const longest = 2 * 1024 * 1024 // characters; a study with hundreds of measuran
 /** `place(from, to)` of offsets in the text; the underlined part ends with the line. */
 type PlaceOf = (from: number, to: number) => Place
 
-/** No value when the text is no YAML; a value beside errors when the rest can still be read. */
+/** No value when the text cannot be trusted; a value beside errors (a key that stands twice) when the rest can still be read. */
 export function readYaml(source: { readonly file: string; readonly text: string }): StageResult<StudyNode> {
   const text = source.text.replace(/^\uFEFF/, '')
   const lines = new LineCounter()
@@ -39,7 +39,7 @@ export function readYaml(source: { readonly file: string; readonly text: string 
   if (read.document?.contents == null) return refused([diagnostic('definition/empty-study', 'The study is empty', { place: start, actual: 'nothing but comments or blank lines', expected: 'a study definition', mend: 'Begin with `format: 1`' })])
   const diagnostics: Diagnostic[] = []
   const value = walk(read.document.contents, start, (found) => diagnostics.push(found), placeOf)
-  return { value, diagnostics }
+  return { value: diagnostics.some((each) => each.code === 'definition/yaml-feature') ? undefined : value, diagnostics }
 }
 
 function refused(diagnostics: readonly Diagnostic[]): StageResult<StudyNode> {
@@ -72,12 +72,12 @@ function documentOf(text: string, placeOf: PlaceOf): { readonly document?: Docum
   }
   tokens.push(...parser.end())
   const documents = [...new Composer({ version: '1.2', uniqueKeys: false, strict: true, merge: false, prettyErrors: false, logLevel: 'silent' }).compose(tokens)]
-  const told = new Set<number>() // one place, one diagnostic: what follows from an error is no news
+  const told = new Set<number | undefined>() // one line, one diagnostic: what follows from an error is no news
   const diagnostics = documents.flatMap((document) => [...document.errors, ...document.warnings]).flatMap((error) => {
-    const [from, to] = error.pos
-    if (told.has(from)) return []
-    told.add(from)
-    return [explainYamlError(error.code, placeOf(from, to), text.slice(from, from + 1))]
+    const place = placeOf(...error.pos)
+    if (told.has(place.line)) return []
+    told.add(place.line)
+    return [explainYamlError(error.code, place, text.slice(error.pos[0], error.pos[0] + 1))]
   })
   const second = documents[1]
   if (second !== undefined) {
@@ -103,7 +103,7 @@ function walk(node: unknown, at: Place, report: (found: Diagnostic) => void, pla
   const [from, to] = node.range ?? [0, 0]
   const place = placeOf(from, to)
   if (node.anchor !== undefined) report(feature(`anchor \`&${node.anchor}\``, place, 'Remove the anchor and write the value wherever it is needed'))
-  if (node.tag !== undefined && node.srcToken !== undefined) report(feature(`tag \`${node.tag}\``, place, 'Remove the tag; put a text into quotes instead'))
+  if (node.tag !== undefined) report(feature(`tag \`${node.tag.replace('tag:yaml.org,2002:', '!!')}\``, place, 'Remove the tag; put a text into quotes instead'))
   if (isMap(node)) {
     const seen = new Map<string, Place>()
     const entries = node.items.flatMap((item): readonly MapEntry[] => {
