@@ -37,6 +37,12 @@ export function asTyped(value: number): NumberNode {
   return { type: 'number', value, text: exponentText(withTrueMinus(String(value))) }
 }
 
+/** A measured value: as it stands when it was read, with seven significant digits when it is a mean of several. */
+export function asMeasured(value: number): NumberNode {
+  const shortest = asTyped(value)
+  return shortest.text.replace(/[^0-9]/g, '').length <= 8 ? shortest : printed(value, { significant: 7 })
+}
+
 /** A fraction of the record (0.95) as percent (95), without its sign. */
 export function asPercent(fraction: number): NumberNode {
   return { type: 'number', value: fraction, text: String(Number((fraction * 100).toPrecision(6))) }

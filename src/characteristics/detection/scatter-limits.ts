@@ -127,7 +127,8 @@ export function blankFindings(scatter: Pick<Scatter, 'value' | 'unit' | 'concent
   const about = { n: scatter.n, df: scatter.df, source: 'sample standard deviation', evidence: scatter.evidence }
   return [
     { ...about, metric: 'blank-standard-deviation', value: scatter.concentration, method: scatter.unit === 'response' ? 'standard deviation of blank responses over the slope' : 'standard deviation of blank results' },
-    ...(scatter.unit === 'response' ? [{ ...about, metric: 'blank-response-standard-deviation', value: scatter.value, method: 'standard deviation of blank responses' }] : []),
+    // The blanks stand first in the evidence; the slope has no part in their own scatter.
+    ...(scatter.unit === 'response' ? [{ ...about, evidence: scatter.evidence.slice(0, 1), metric: 'blank-response-standard-deviation', value: scatter.value, method: 'standard deviation of blank responses' }] : []),
   ]
 }
 

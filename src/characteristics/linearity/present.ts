@@ -3,7 +3,7 @@ import { column, excludedRow, figure, formula, joined, paragraph, row, sentence,
 import { deviationChart } from '../../present/charts/deviation-chart.ts'
 import { responseChart } from '../../present/charts/response-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asPercent, asTyped, columnDecimals, count, printed, probability } from '../../present/numbers.ts'
+import { asMeasured, asPercent, asTyped, count, printed, probability } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { LinearityDetail } from './detail.ts'
 
@@ -87,7 +87,7 @@ function errorFigure({ detail, measurand, prefix, verdicts }: Shown): readonly R
   if (points.length === 0) return []
   const judged = verdicts.find((verdict) => verdict.metric === 'back-calculation-error')
   const limit = judged?.limit
-  const limits = limit === undefined ? [] : limit.kind === 'between' ? [{ value: limit.low.value, label: 'lower limit' }, { value: limit.high.value, label: 'upper limit' }] : [{ value: limit.bound.value, label: judged?.criterion ?? '' }]
+  const limits = limit === undefined ? [] : limit.kind === 'between' ? [{ value: limit.low.value, label: 'lower limit' }, { value: limit.high.value, label: 'upper limit' }] : [{ value: limit.bound.value, label: judged?.criterion ?? '' }, { value: -limit.bound.value, label: '' }]
   return [figure({
     id: `${prefix}-back-calculated`, caption: sentence`Back-calculated error of every standard of ${measurand.name}, n = ${count(points.length)}`,
     alternative: `Back-calculated errors of ${points.length} standards of ${measurand.name} against level${limits.length === 0 ? '' : ', with the limit drawn'}.`,
@@ -96,13 +96,11 @@ function errorFigure({ detail, measurand, prefix, verdicts }: Shown): readonly R
 }
 
 function standards({ detail, measurand, prefix }: Shown): ReportBlock {
-  const residualDecimals = columnDecimals(detail.points.map((point) => point.residual), 3)
-  const foundDecimals = columnDecimals(detail.points.flatMap((point) => point.found ?? []), 5)
   const groups = detail.levels.map((level) => [
     ...detail.points.filter((point) => point.level === level.level).map((point) => row(
-      asTyped(point.level), asTyped(point.response), printed(point.residual, { decimals: residualDecimals }), point.found === undefined ? '' : printed(point.found, { decimals: foundDecimals }), point.error === undefined ? '' : printed(point.error, { decimals: 2 }),
+      asTyped(point.level), asMeasured(point.response), printed(point.residual, { significant: 3 }), point.found === undefined ? '' : printed(point.found, { significant: 4 }), point.error === undefined ? '' : printed(point.error, { decimals: 2 }),
     )),
-    ...detail.excluded.filter((each) => each.level === level.level).map((each) => excludedRow(asTyped(each.level), asTyped(each.response), '', '', textOf('excluded'))),
+    ...detail.excluded.filter((each) => each.level === level.level).map((each) => excludedRow(asTyped(each.level), asMeasured(each.response), '', '', textOf('excluded'))),
   ])
   return table({
     id: `${prefix}-standards`, caption: 'Every standard: response, residual, level read back and its error',

@@ -3,7 +3,7 @@ import { column, excludedRow, figure, joined, paragraph, row, sentence, table, t
 import { componentBarsChart } from '../../present/charts/component-bars-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asTyped, columnDecimals, count, degreesOfFreedom, printed } from '../../present/numbers.ts'
+import { asMeasured, asTyped, columnDecimals, count, degreesOfFreedom, printed } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { PrecisionDetail, PrecisionLevel } from './detail.ts'
 
@@ -71,8 +71,8 @@ function valuesTable(shown: Shown, level: PrecisionLevel): ReportBlock {
     id: `${prefixOf(shown, level)}-results`, caption: [...textOf('Results by run '), ...at(shown, level)],
     columns: [column('Run', { align: 'text', rowHeader: true }), column('n'), column('Results', { align: 'text', unit: shown.measurand.unit }), column('Mean', { unit: shown.measurand.unit })],
     rows: [
-      ...level.runs.map((run) => row(run.run === '' ? 'all' : run.run, count(run.values.length), joined(run.values.map((value) => [asTyped(value)]), '; '), printed(run.mean, { decimals }))),
-      ...level.excluded.map((each) => excludedRow(`${each.run}, excluded`, '', asTyped(each.value), '')),
+      ...level.runs.map((run) => row(run.run === '' ? 'all' : run.run, count(run.values.length), joined(run.values.map((value) => [asMeasured(value)]), '; '), printed(run.mean, { decimals }))),
+      ...level.excluded.map((each) => excludedRow(`${each.run}, excluded`, '', asMeasured(each.value), '')),
     ],
   })
 }

@@ -65,19 +65,18 @@ function notEvaluable(section: Section, assessment: RecordedAssessment): readonl
 function findingsTable(section: Section, findings: readonly Finding[], prefix: string, levelUnit: string): readonly ReportBlock[] {
   if (findings.length === 0) return []
   return [table({
-    id: `${prefix}-findings`, caption: sentence`Findings with interval, number of values and method`,
+    id: `${prefix}-findings`, caption: 'Findings with interval, number of values and degrees of freedom',
     columns: [
       column('Finding', { align: 'text', rowHeader: true }), column('Value', { align: 'text' }), column('Interval', { align: 'text' }),
-      column('n'), column('df'), column('Method', { align: 'text' }),
+      column('n'), column('df'),
     ],
     rows: findings.map((finding) => row(
       [...textOf(metricLabel(section, finding.characteristic, finding.metric)), ...where(finding, levelUnit)],
       [printed(finding.value), ...unitWords(finding.unit)],
       finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}`,
       finding.n === undefined ? '' : count(finding.n), finding.df === undefined ? '' : degreesOfFreedom(finding.df),
-      finding.interval === undefined ? finding.method : `${finding.method}; interval: ${finding.interval.method}`,
     )),
-    notes: intervalNotes(findings),
+    notes: [...intervalNotes(findings), [...textOf('Methods and sources: '), { type: 'reference', target: 'methods' }, ...textOf('.')]],
   })]
 }
 

@@ -83,11 +83,11 @@ export function rules(section: Section): readonly ReportBlock[] {
 function methodsTable(section: Section): readonly ReportBlock[] {
   const seen = new Map<string, readonly string[]>()
   for (const finding of section.record.findings) {
-    const key = JSON.stringify([finding.characteristic, finding.metric, finding.method, finding.source])
-    if (!seen.has(key)) seen.set(key, [`${titleOf(section, finding.characteristic)}: ${metricLabel(section, finding.characteristic, finding.metric)}`, finding.method, finding.source])
+    const key = JSON.stringify([finding.characteristic, finding.metric, finding.method, finding.source, finding.interval?.method])
+    if (!seen.has(key)) seen.set(key, [`${titleOf(section, finding.characteristic)}: ${metricLabel(section, finding.characteristic, finding.metric)}`, finding.method, finding.interval?.method ?? 'none', finding.source])
   }
   if (seen.size === 0) return []
-  return [table({ id: 'methods', caption: 'Statistical methods used, with their sources', columns: [column('Finding', { align: 'text', rowHeader: true }), column('Method', { align: 'text' }), column('Source', { align: 'text' })], rows: [...seen.values()].map((cells) => row(...cells)) })]
+  return [table({ id: 'methods', caption: 'Statistical methods used, with their sources', columns: [column('Finding', { align: 'text', rowHeader: true }), column('Method', { align: 'text' }), column('Interval', { align: 'text' }), column('Source', { align: 'text' })], rows: [...seen.values()].map((cells) => row(...cells)) })]
 }
 
 export function register(id: string, caption: string, entries: readonly RegisterEntry[]): readonly ReportBlock[] {
