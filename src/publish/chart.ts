@@ -21,8 +21,7 @@ export async function drawChart(chart: Chart, measure: MeasureText): Promise<Dra
   const logger = complainingLogger(complaints)
   measureTextWith(measure)
   const view = new vega.View(runtimeOf(chart.specification, logger), { renderer: 'none', logger, expr: expressions, locale: numberLocale as unknown as vega.LocaleFormatters })
-  // Copies, because Vega marks the rows that it takes in.
-  for (const [name, rows] of Object.entries(chart.data)) view.data(name, rows.map((row) => ({ ...row })))
+  for (const [name, rows] of Object.entries(chart.data)) view.data(name, rows.map((row) => checkedCopy(name, row)))
   await view.runAsync()
   const context = new RecordingContext(measure)
   const renderer = new untyped.CanvasRenderer()
@@ -31,6 +30,12 @@ export async function drawChart(chart: Chart, measure: MeasureText): Promise<Dra
   view.finalize()
   if (complaints.length > 0) throw new Error(`the chart library complains: ${complaints.join('; ')}`)
   return framed(context.operations, frameOf(chart.specification))
+}
+
+/** A copy, because Vega marks the rows that it takes in. It also takes a number that is none for zero, so that is refused here. */
+function checkedCopy(name: string, row: Readonly<Record<string, unknown>>): Record<string, unknown> {
+  for (const [field, value] of Object.entries(row)) if (typeof value === 'number' && !Number.isFinite(value)) throw new Error(`the chart has a point without a place: ${field} of ${name} is ${value}`)
+  return { ...row }
 }
 
 /** Members of Vega that its types do not know. */

@@ -39,7 +39,7 @@ function linearDomain(low: number, high: number, ticks: number, room: number, en
   const span = high > low ? high - low : Math.abs(high) > 0 ? Math.abs(high) * 0.2 : 1
   const padded = { low: low - room * span - (high > low ? 0 : span / 2), high: high + room * span + (high > low ? 0 : span / 2) }
   if (low >= 0 && padded.low < 0) padded.low = 0
-  if (high <= 0 && padded.high > 0) padded.high = 0
+  else if (high <= 0 && padded.high > 0) padded.high = 0
   if (ends === 'open') {
     if (low > 0 && low < 0.15 * high) padded.low = 0
     return { ...padded, logarithmic: false }

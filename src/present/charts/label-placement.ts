@@ -55,10 +55,12 @@ export function aroundPoint(): readonly LabelOffset[] {
   })
 }
 
-/** Along a level line, from its right end: on the side away from the data first, then the other side, then farther left. */
+/** Along a level line, from its right end: on the side away from the data first, then the other side, then farther left, then farther off. */
 export function alongLine(away: 'above' | 'below', width: number): readonly LabelOffset[] {
   const [first, second] = away === 'above' ? [-3, labelSize + 1.5] : [labelSize + 1.5, -3]
-  return [0, 0.25, 0.5, 0.75].flatMap((part): readonly LabelOffset[] => [first, second].map((dy) => ({ dx: -2 - part * width, dy, align: 'right' })))
+  const near = [0, 0.25, 0.5, 0.75].flatMap((part): readonly LabelOffset[] => [first, second].map((dy) => ({ dx: -2 - part * width, dy, align: 'right' })))
+  const far = [1, 2, 3, 4, 5, 6].flatMap((row): readonly LabelOffset[] => [first, second].map((dy) => ({ dx: -2, dy: dy + Math.sign(dy) * row * (labelSize + 1.5), align: 'right' })))
+  return [...near, ...far]
 }
 
 /** Above the top of a curve, in as many rows as it takes. */

@@ -3,7 +3,7 @@ import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
-import { placeLabels } from './label-placement.ts'
+import { estimatedWidth, placeLabels } from './label-placement.ts'
 import { field, labelLayer, limitLayers, limitRequests, pointBox, rowsOf, spanLayer, spanRows, ticksAcross, ticksUp, valueChannel } from './layers.ts'
 
 export interface TraceChartInput {
@@ -26,7 +26,11 @@ export function traceChart(input: TraceChartInput): Chart {
   const trace = points.map((point) => pointBox({ x: across(point.x), y: (1 - positionOn(spans.y, point.y)) * frame.plotHeight }))
   const rows = [-4, -14, -24, -34, -44, -54]
   const placed = placeLabels([
-    ...windows.map((window) => ({ text: window.label, x: across((window.from + window.to) / 2), y: 0, candidates: rows.map((dy) => ({ dx: 0, dy, align: 'center' as const })) })),
+    ...windows.map((window) => {
+      const [middle, half] = [across((window.from + window.to) / 2), estimatedWidth(window.label) / 2]
+      const dx = Math.max(half, Math.min(middle, frame.plotWidth - half)) - middle
+      return { text: window.label, x: middle, y: 0, candidates: rows.map((dy) => ({ dx, dy, align: 'center' as const })) }
+    }),
     ...limitRequests(frame, spans.y, lines),
   ], { left: 0, right: frame.plotWidth, top: -62, bottom: frame.plotHeight }, trace)
   const [x, y] = [field('x'), field('y')]
