@@ -41,10 +41,10 @@ function entry(heading: SectionHeading, item: ReturnType<typeof node>, context: 
   return {
     height, spaceBefore: depth === 1 ? 5 : 0, ...(depth === 1 ? { keepWithNext: 'must' } : {}),
     boxes: [
-      ...(number === '' ? [] : [at(number, left, baselineIn(style.leading, style.size), style.face, style.size)]),
+      ...(number === '' ? [] : [at(`${number} `, left, baselineIn(style.leading, style.size), style.face, style.size)]),
       ...lines.flatMap((line, index) => lineBoxes(line, textLeft, index * style.leading + baselineIn(style.leading, style.size))),
       ...(dotsTo - dotsFrom < 8 ? [] : [{ kind: 'rule', x: dotsFrom, y: lastBaseline, toX: dotsTo, toY: lastBaseline, width: 0.5, colour: colours.rule, dash: [0.5, 3] } as const]),
-      at(shown, page.textWidth - shownWidth, lastBaseline, styles.contents2.face, styles.contents2.size),
+      at(` ${shown}`, page.textWidth - shownWidth - context.shaping.width(' ', styles.contents2.face, styles.contents2.size), lastBaseline, styles.contents2.face, styles.contents2.size),
       { kind: 'link', x: 0, y: 0, width: page.textWidth, height, target: { kind: 'inside', id: heading.id }, words: `${number} to page ${shown}`.trim(), tag },
     ],
   }

@@ -47,8 +47,12 @@ export interface Line {
 
 type AnyInline = Inline | PhrasingContent
 
-/** A word after a number longer than this is no unit. */
-const unitLength = 10
+/** A unit after a number: short, or a quotient, product or power of units; and the short words that are none. */
+const unit = /^(?:[%‰°]\p{L}?|\p{L}{1,3}|\S*[\p{L}%][·/⁻²³]\S*)[.,;:)]*$/u
+const noUnit = /^(?:a|an|and|are|as|at|but|by|for|has|in|is|it|its|no|not|of|on|or|per|so|the|to|was)$/
+
+/** A number in running text. */
+const numeral = /^[<>≤≥±(]*[\u2212-]?\d[\d.,]*$/
 
 /** Sets inline nodes in lines no wider than `width`. At least one line, which may be empty. */
 export function setLines(inlines: readonly AnyInline[], style: TextStyle, tag: StructureNode | undefined, width: number, context: InlineContext): readonly Line[] {
@@ -187,11 +191,11 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
   }
   for (const fragment of fragments) {
     const { text } = fragment
-    for (const [token] of text.matchAll(/\n|[ \t]+|[^ \t\n]+/g)) {
+    for (const match of text.matchAll(/\n|[ \t]+|[^ \t\n]+/g)) {
+      const [token] = match
       if (token === '\n') close(0, true)
       else if (token.startsWith(' ') || token.startsWith('\t')) {
-        const isBound = holds && !fragment.isNumber && startsWithUnit(text)
-        if (isBound) add(fragment, '\u00a0')
+        if (holds && startsWithUnit(text.slice(match.index))) add(fragment, '\u00a0')
         else if (pieces.length > 0) close(context.shaping.width(' ', fragment.style.face, fragment.style.size))
         else if (words.length > 0) words.push({ pieces: [], width: 0, space: context.shaping.width(' ', fragment.style.face, fragment.style.size) })
       } else if (fragment.isNumber === true || token.length <= softBreakLength) add(fragment, token)
@@ -202,18 +206,17 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
           if (index < parts.length - 1) close(0)
         })
       }
-      holds = false
+      holds = fragment.isNumber === true || numeral.test(token)
     }
-    holds = fragment.isNumber === true
   }
   close(0)
   return words
 }
 
-/** ` mg/L of …` yes, ` measurements …` no. */
+/** ` mg/L of …` yes, ` of …` no. */
 function startsWithUnit(text: string): boolean {
   const word = /^ ([^ \n]+)/.exec(text)?.[1]
-  return word !== undefined && word.length <= unitLength
+  return word !== undefined && unit.test(word) && !noUnit.test(word)
 }
 
 function broken(words: readonly Word[], width: number, context: InlineContext): readonly Line[] {
@@ -284,10 +287,17 @@ function placed(words: readonly { readonly pieces: readonly Piece[]; readonly sp
       last.piece.style.colour === piece.style.colour && last.piece.tag === piece.tag && last.piece.isStruck === piece.isStruck) last.text += text
     else joined.push({ piece, text })
   }
+  let owed = false
   words.forEach((word, index) => {
-    for (const piece of word.pieces) append(piece, piece.text)
+    word.pieces.forEach((piece, at) => {
+      append(piece, owed && at === 0 ? ` ${piece.text}` : piece.text)
+    })
+    if (word.pieces.length > 0) owed = false
     const last = word.pieces.at(-1) ?? joined.at(-1)?.piece
-    if (last !== undefined && word.space > 0 && (index < words.length - 1 || !isLast)) append(last, ' ')
+    if (last === undefined || word.space === 0) return
+    // The space after a link belongs to what follows: it is nothing to click.
+    if (last.link !== undefined && index < words.length - 1) owed = true
+    else if (index < words.length - 1 || !isLast) append(last, ' ')
   })
   let x = 0
   const pieces = joined.map(({ piece, text }, index): PlacedPiece => {

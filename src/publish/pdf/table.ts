@@ -2,7 +2,7 @@
 // a table too wide is set smaller and is split by columns as the last resort. No cell is ever cut off.
 import type { ExhibitRow, ExhibitTable, Inline } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { lineBoxes, plainText, setLines } from './inline.ts'
+import { type Line, lineBoxes, plainText, setLines } from './inline.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, emboldened, page, styles, tinted } from './style.ts'
@@ -81,7 +81,7 @@ function headSlab(part: TablePart, row: StructureNode, context: BlockContext): S
     const tag = node('TH', row, { scope: 'Column' })
     const names = setLines([{ type: 'text', value: column.column.header }], style, tag, column.width, context)
     const units = column.column.unit === undefined ? [] : setLines([{ type: 'text', value: column.column.unit }], unitStyle, tag, column.width, context)
-    return { column, tag, lines: [...names, ...units] }
+    return { column, tag, lines: [...(units.length === 0 ? names : names.map(withSpace)), ...units] }
   })
   const count = Math.max(1, ...cells.map((cell) => cell.lines.length))
   const height = count * style.leading + 5
@@ -101,6 +101,11 @@ function headSlab(part: TablePart, row: StructureNode, context: BlockContext): S
       { kind: 'rule', x: 0, y: height - 0.5, toX: part.width, toY: height - 0.5, width: 0.5, colour: colours.rule },
     ],
   }
+}
+
+/** A space that is not seen, so that copied text keeps name and unit apart. */
+function withSpace(line: Line): Line {
+  return { ...line, pieces: line.pieces.map((piece, index) => (index === line.pieces.length - 1 && !piece.text.endsWith(' ') ? { ...piece, text: `${piece.text} ` } : piece)) }
 }
 
 const borders = {
