@@ -63,7 +63,7 @@ const chains: Readonly<Record<FaceName, readonly FaceName[]>> = {
 const facesWithoutAnchors: ReadonlySet<FaceName> = new Set(['serif', 'serif-italic', 'serif-bold'])
 
 /** A base character with all marks, joiners and variation selectors that follow it. */
-const cluster = /[\s\S][\p{M}\u200D\uFE00-\uFE0F]*/gu
+const cluster = /[\s\S](?:\p{M}|\u200D|[\uFE00-\uFE0F])*/gu
 
 /** Enough for a long report; the cache is dropped when full, so that memory stays bounded. */
 const cacheLimit = 60_000

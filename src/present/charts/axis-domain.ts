@@ -18,7 +18,7 @@ export function spansDecades(values: readonly number[]): boolean {
 
 export function axisDomain(values: readonly number[], options: { readonly ticks: number; readonly logarithmic?: boolean; readonly room?: number; readonly ends?: 'ticks' | 'open' }): AxisDomain {
   const [low, high] = values.length === 0 ? [0, 1] : [Math.min(...values), Math.max(...values)]
-  return options.logarithmic === true ? logarithmicDomain(low, high) : linearDomain(low, high, options.ticks, options.room ?? 0.04, options.ends ?? 'ticks')
+  return options.logarithmic === true ? logarithmicDomain(low, high) : linearDomain(low, high, options.ticks, options.room ?? 0.02, options.ends ?? 'ticks')
 }
 
 /** Less than this and a logarithmic axis names 1, 2 and 5 as well. */
