@@ -53,7 +53,7 @@ test('six of a kind are folded, five are not', () => {
 test('nothing from a file reaches the terminal raw', () => {
   const evil = 'a\u001b[31mred\u0007\u202e\u2028\u009b'
   const printed = printDiagnostics([diagnostic('definition/unknown-key', `Unexpected key \`${evil}\``, { place: { file: evil, sheet: evil, line: 1, column: 3, length: 4, cell: evil }, actual: evil, expected: evil, mend: evil, related: [{ message: evil, place: { file: evil } }] })], { sources: new Map([[evil, `x ${evil}`]]) })
-  expect(printed).not.toMatch(/[\u0000-\u0009\u000b-\u001f\u007f-\u009f\u2028\u202e]/)
+  expect(printed.replaceAll('\n', '')).not.toMatch(/[\p{Cc}\u2028\u202e]/u)
   expect(printed).toContain('\\u001b[31mred')
 })
 

@@ -27,7 +27,7 @@ export function checkNames(names: readonly Located<string>[], what: string, read
 function troubleOf(name: string): string | undefined {
   if (name.trim() !== name || name === '') return 'it begins or ends with a space, or is empty'
   if (/[/@\\]/.test(name)) return 'findings are numbered with `/` and `@`' // characteristic/measurand/metric@level
-  if (/[\u0000-\u001f\u007f]/.test(name)) return 'it holds an invisible character'
+  if (/\p{Cc}/u.test(name)) return 'it holds an invisible character'
   if (name in {}) return 'programs keep it for themselves' // constructor, toString, …
   return name.length > 100 ? 'it is longer than 100 characters' : undefined
 }

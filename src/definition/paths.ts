@@ -43,7 +43,7 @@ function path(describe: string, example: string, isGood: (plain: string | undefi
 
 /** Undefined for an absolute path, a drive, a backslash, or no file name. */
 function plainPath(typed: string): string | undefined {
-  if (typed.startsWith('/') || typed.startsWith('~') || /^[A-Za-z]:|\\|[\u0000-\u001f]|^[a-z]+:\/\//.test(typed)) return undefined
+  if (typed.startsWith('/') || typed.startsWith('~') || /^[A-Za-z]:|\\|\p{Cc}|^[a-z]+:\/\//u.test(typed)) return undefined
   const parts: string[] = []
   for (const part of typed.split('/')) {
     if (part === '..' && parts.length > 0 && parts.at(-1) !== '..') parts.pop()

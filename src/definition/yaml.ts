@@ -10,6 +10,8 @@ import { explainYamlError } from './yaml-errors.ts'
 const deepest = 40 // open collections; a study has about eight, and deeper text could exhaust the stack
 const longest = 2 * 1024 * 1024 // characters; a study with hundreds of measurands has some hundred thousand
 
+const marks: readonly string[] = ['\u0002', '\u0018', '\u001f'] // what the lexer adds for document, flow end and scalar: no text of the study
+
 /** `place(from, to)` of offsets in the text; the underlined part ends with the line. */
 type PlaceOf = (from: number, to: number) => Place
 
@@ -48,7 +50,7 @@ function refused(diagnostics: readonly Diagnostic[]): StageResult<StudyNode> {
 
 /** Controls and direction marks deceive the eye of whoever reviews the study; U+FFFD is what a wrong encoding leaves. */
 function controlCharacters(text: string, placeOf: PlaceOf): readonly Diagnostic[] {
-  return [...text.matchAll(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u0084\u0086-\u009f\u200e\u200f\u202a-\u202e\u2066-\u2069\ufeff\ufffd]/g)].map((match) => {
+  return [...text.matchAll(/(?![\t\n\r\u0085])[\p{Cc}\u200e\u200f\u202a-\u202e\u2066-\u2069\ufeff\ufffd]/gu)].map((match) => {
     const number = `U+${match[0].charCodeAt(0).toString(16).toUpperCase().padStart(4, '0')}`
     const [message, mend] = match[0] === '\ufffd'
       ? ['Unexpected bytes that are not UTF-8', 'Save the study as UTF-8']
@@ -68,7 +70,7 @@ function documentOf(text: string, placeOf: PlaceOf): { readonly document?: Docum
     if (parser.stack.length > deepest) {
       return { diagnostics: [diagnostic('definition/too-deep', 'The study is nested too deeply', { place: placeOf(offset, offset + 1), expected: `at most ${deepest} levels`, mend: 'Remove levels, or close brackets that are open' })] }
     }
-    offset += /^[\u0002\u001f\u0018]$/.test(lexeme) ? 0 : lexeme.replace(/^\ufeff/, '').length
+    offset += marks.includes(lexeme) ? 0 : lexeme.length
   }
   tokens.push(...parser.end())
   const documents = [...new Composer({ version: '1.2', uniqueKeys: false, strict: true, merge: false, prettyErrors: false, logLevel: 'silent' }).compose(tokens)]
