@@ -1,7 +1,7 @@
 // src/ and its packages → dist/: one command that runs without node_modules, with the fonts, their licences and the colour profile beside it.
 import { build } from 'esbuild'
 import { chmodSync, copyFileSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
-import { dirname, join } from 'node:path'
+import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { fontFiles, fontLicences } from './fonts.mjs'
 

@@ -105,7 +105,7 @@ function readOne(path: string, place: Diagnostic['place'], world: World, noticed
 
 function readTemplate(study: StudyDefinition, world: World, noticed: Diagnostic[]): ReadFile | undefined {
   const { value, place } = study.report.template
-  if (value.includes('/') || value.endsWith('.md')) return readOne(value, place, world, noticed)
+  if (value.includes('/') || value.endsWith('.md')) return readOne(value.replace(/^(\.\/)+/, ''), place, world, noticed)
   const shipped = world.template(value)
   if (shipped !== undefined) return { path: `templates/${value}.md`, bytes: shipped }
   noticed.push(diagnostic('present/unknown-template', `No template is named \`${value}\``, {

@@ -80,6 +80,14 @@ test('--json prints one document and nothing on standard error', () => {
   expect(printed.studies[0]?.diagnostics[0]).toMatchObject({ code: 'definition/unknown-choice', place: { file: 'study.yaml', line: 6, column: 9 } })
 })
 
+test('a character that no font has is refused by name, and nothing is written', () => {
+  const path = smallest((text) => text.replace('Dye in rinse water', 'Dye \u{1F9EA} in rinse water'))
+  const done = run('report', path)
+  expect(done.status, done.stderr).toBe(1)
+  expect(done.stderr).toMatch(/U\+1F9EA/)
+  expect(existsSync(join(path, '../out'))).toBe(false)
+})
+
 test('the schema is JSON Schema with a description for every key', () => {
   const schema = JSON.parse(run('schema').stdout) as Record<string, unknown>
   expect(schema['$schema']).toMatch(/json-schema/)

@@ -44,6 +44,8 @@ function sourcesOf(folder: string): ReadonlyMap<string, string> {
 
 /** Codes that no small folder can show, and where they are seen instead. */
 const shownElsewhere: Readonly<Record<string, string>> = {
+  'data/too-long': 'needs a line of a megabyte: test/bad-input.test.ts',
+  'present/unprintable-character': 'needs the fonts of the bundle: test/cli.test.ts',
   'definition/too-long': 'needs two megabytes: test/definition/yaml.test.ts',
 }
 

@@ -2,6 +2,7 @@
 // Each step that is taken is named in `chain`; a response outside the calibrated range gives no result.
 import type { Dataset } from '../data/dataset.ts'
 import type { DatasetSource, Measurand } from '../definition/study.ts'
+import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import type { StageResult } from '../diagnostics/stage-result.ts'
 import { mean } from '../statistics/describe.ts'
@@ -74,7 +75,7 @@ function recompute(request: ResultsRequest): StageResult<Measurements> {
   const values = units.value.values.flatMap((unit) => convert(unit) ?? [])
   const firstOutside = outside[0]
   if (firstOutside !== undefined) {
-    diagnostics.push(diagnostic('assess/outside-calibration', `${outside.length} responses of \`${measurand.id}\` in dataset \`${dataset.name}\` lie outside the calibrated range`, {
+    diagnostics.push(diagnostic('assess/outside-calibration', `${counted(outside.length, 'response')} of \`${measurand.id}\` in dataset \`${dataset.name}\` outside the calibrated range`, {
       place: firstOutside.cell.place, actual: firstOutside.cell.text, expected: `a response within the range of \`${calibration.block}\``,
       mend: 'Calibrate over the whole range of use, or dilute', related: outside.slice(1, 4).map((each) => ({ message: 'also outside', place: each.cell.place })),
     }))

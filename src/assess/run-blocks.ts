@@ -116,14 +116,12 @@ type DataAccess = Pick<AssessInput<unknown>, 'responses' | 'results' | 'observat
 
 function dataAccess(request: RunRequest, measurand: Measurand, block: Block, earlier: readonly RanBlock[], noticed: Diagnostic[]): DataAccess {
   const { study, datasets, catalogue, putBackExcluded } = request
-  const find = (name: string): { readonly dataset: Dataset; readonly source: DatasetSource } | undefined => {
+  // That a named dataset exists is settled when the study is read.
+  const find = (name: string): { readonly dataset: Dataset; readonly source: DatasetSource } => {
     const dataset = datasets.find((each) => each.name === name)
     const source = study.datasets.find((each) => each.name === name)
-    if (dataset !== undefined && source !== undefined) return { dataset, source }
-    noticed.push(diagnostic('assess/unknown-dataset', `\`${block.id}\` names the dataset \`${name}\`, which the study does not declare`, {
-      place: block.place, actual: name, expected: study.datasets.map((each) => each.name).join(', '), mend: 'Write the name of a dataset under `data:`',
-    }))
-    return undefined
+    if (dataset === undefined || source === undefined) throw new Error(`${block.id} reads the dataset ${name}, which the study does not declare`)
+    return { dataset, source }
   }
   const keep = (result: { readonly value: Measurements | undefined; readonly diagnostics: readonly Diagnostic[] }): Measurements | undefined => {
     noticed.push(...result.diagnostics)
@@ -132,7 +130,6 @@ function dataAccess(request: RunRequest, measurand: Measurand, block: Block, ear
   return {
     responses(name) {
       const found = find(name)
-      if (found === undefined) return undefined
       if (found.dataset.fields.includes('response')) return keep(independentUnits(found.dataset, found.source, measurand.id, 'response', putBackExcluded))
       noticed.push(diagnostic('assess/missing-field', `\`${block.id}\` needs responses, and dataset \`${name}\` maps no column for \`response\``, {
         place: found.source.place, expected: '`response:` under `columns:`', mend: 'Map the column that holds the response',
@@ -141,7 +138,6 @@ function dataAccess(request: RunRequest, measurand: Measurand, block: Block, ear
     },
     results(name) {
       const found = find(name)
-      if (found === undefined) return undefined
       const calibrations = earlier.flatMap((ran): readonly Calibration[] => {
         const part = catalogue.find((each) => each.id === ran.block.characteristic)
         if (part?.invert === undefined || ran.detail === undefined) return []
@@ -153,7 +149,7 @@ function dataAccess(request: RunRequest, measurand: Measurand, block: Block, ear
       return keep(resultsOf({ ...found, measurand, putBackExcluded, calibrations, blankMean }))
     },
     observations(name) {
-      return find(name)?.dataset.observations.filter((each) => each.measurand === measurand.id && (putBackExcluded || each.excluded === undefined)) ?? []
+      return find(name).dataset.observations.filter((each) => each.measurand === measurand.id && (putBackExcluded || each.excluded === undefined))
     },
     prior(characteristic) {
       return earlier.filter((ran) => ran.block.characteristic === characteristic)

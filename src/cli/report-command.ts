@@ -1,6 +1,6 @@
 // `assaywrit report`: one study → its dossier on disk. Drawing and PDF code is loaded only here, so that `check` starts fast.
 import { existsSync, readFileSync } from 'node:fs'
-import { dirname, join, resolve } from 'node:path'
+import { basename, dirname, join, resolve } from 'node:path'
 import { sha256 } from '../assess/digest.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import { hasErrors } from '../diagnostics/stage-result.ts'
@@ -22,10 +22,10 @@ export async function writeReport(studyPath: string, checked: Checked, out: stri
     return { diagnostics: [], dossier: undefined, diskRefused: false }
   }
   progress('drawing charts and pages')
-  const [{ publish }, { readAssets }] = await Promise.all([import('../publish/index.ts'), import('./assets.ts')])
+  const [{ publish }, { MissingGlyph }, { readAssets }] = await Promise.all([import('../publish/index.ts'), import('../publish/fonts.ts'), import('./assets.ts')])
   const encoder = new TextEncoder()
   const inputs = checked.files.map((file) => ({ path: file.path, role: file.role, bytes: file.bytes }))
-  const published = await publish(document, {
+  const published = await attempt(() => publish(document, {
     ...readAssets(),
     attachments: ({ markdown, tables, charts }) => {
       const files = contentFiles({ recordText, markdown, tables, charts, inputs })
@@ -35,7 +35,12 @@ export async function writeReport(studyPath: string, checked: Checked, out: stri
         { name: 'manifest.json', bytes: encoder.encode(manifestText(files)), relationship: 'Data' as const, description: 'size and SHA-256 of every file of the dossier' },
       ]
     },
-  })
+  }), (error) => (error instanceof MissingGlyph ? error : undefined))
+  if (published instanceof MissingGlyph) {
+    return { dossier: undefined, diskRefused: false, diagnostics: [diagnostic('present/unprintable-character', `No font of the report has the character \`${published.character}\``, {
+      place: { file: basename(studyPath) }, actual: `${published.character} (U+${(published.character.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')})`, expected: 'Latin, Greek, Cyrillic and the signs of science', mend: 'Write the text of the study, template or raw file with other characters',
+    })] }
+  }
   progress('writing the dossier')
   const { report } = record.study
   const place: DossierPlace = { parent: join(resolve(out ?? join(dirname(studyPath), 'out')), safeName(report.number)), name: `revision-${report.revision}` }
@@ -66,4 +71,15 @@ export async function writeReport(studyPath: string, checked: Checked, out: stri
 function safeName(number: string): string {
   const safe = number.replace(/[\u0000-\u001f<>:"/\\|?*]+/g, '-').replace(/^\.+|[. ]+$/g, '-')
   return safe === '' ? 'report' : safe
+}
+
+/** The value, or the expected error; any other error passes. */
+async function attempt<T, E>(work: () => Promise<T>, expected: (error: unknown) => E | undefined): Promise<T | E> {
+  try {
+    return await work()
+  } catch (error) {
+    const known = expected(error)
+    if (known === undefined) throw error
+    return known
+  }
 }

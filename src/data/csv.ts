@@ -8,6 +8,8 @@ export interface CsvRow {
   /** Line of its first character, from 1. */
   readonly line: number
   readonly cells: readonly string[]
+  /** Where each cell starts in its line, counted from 1; for a row of one line. */
+  readonly starts: readonly number[]
 }
 
 export interface CsvTable {
@@ -26,11 +28,12 @@ export function readCsv(text: string, file: string, declared: Delimiter | undefi
   }
   try {
     const records = parse(text, { delimiter: signs[delimiter], relax_column_count: true, skip_empty_lines: false, info: true, relax_quotes: false }) as unknown as readonly { readonly record: readonly string[]; readonly info: { readonly lines: number } }[]
+    const lines = text.split(/\r\n|\n|\r/)
     let line = 1
     const rows = records.map(({ record, info }): CsvRow => {
       const start = line
       line = info.lines + 1
-      return { line: start, cells: record }
+      return { line: start, cells: record, starts: cellStarts(lines[start - 1] ?? '', record) }
     })
     return { delimiter, rows }
   } catch (error) {
@@ -40,6 +43,16 @@ export function readCsv(text: string, file: string, declared: Delimiter | undefi
       place: { file, line, column: 1 }, actual: error.code === 'CSV_QUOTE_NOT_CLOSED' ? 'a quote that is not closed' : 'a quote inside a cell', expected: 'quotes around whole cells, doubled inside', mend: 'Export the file again, or mend the quote',
     }) }
   }
+}
+
+/** A quoted cell is longer in its line than in itself: by its quotes, and by each quote doubled inside. */
+function cellStarts(line: string, cells: readonly string[]): readonly number[] {
+  let at = 0
+  return cells.map((cell) => {
+    const start = at + 1
+    at += (line[at] === '"' ? cell.length + 2 + (cell.split('"').length - 1) : cell.length) + 1
+    return start
+  })
 }
 
 /**

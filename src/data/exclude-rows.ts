@@ -1,6 +1,7 @@
 // Exclusions of a study → rows marked as excluded. A selector matches exactly the number of source rows it says, or it is an error that
 // lists what it matches; an excluded row stays in the dataset with its number.
 import type { DatasetSource, Exclusion } from '../definition/study.ts'
+import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import { tidied } from './cells.ts'
 import type { Observation, SourceRow } from './dataset.ts'
@@ -32,8 +33,8 @@ export function excludeRows({ source, exclusions, rows, observations, headed }: 
       const wanted = exclusion.row.matches.map((each) => `${each.column} = ${each.text}`).join(', ')
       diagnostics.push(diagnostic('data/unmatched-exclusion', unused.length > 0
         ? `Exclusion ${exclusion.number} (${wanted}) takes out a row that dataset \`${source.name}\` does not use`
-        : `Exclusion ${exclusion.number} (${wanted}) matches ${matching.length} rows of dataset \`${source.name}\` instead of ${exclusion.row.rows}`, {
-        place: exclusion.place, actual: matching.length === 0 ? unknownColumns(exclusion, headed) : `${matching.length} rows`, expected: `${exclusion.row.rows} used row${exclusion.row.rows === 1 ? '' : 's'}`,
+        : `Exclusion ${exclusion.number} (${wanted}) matches ${counted(matching.length, 'row')} of dataset \`${source.name}\` instead of ${exclusion.row.rows}`, {
+        place: exclusion.place, actual: matching.length === 0 ? unknownColumns(exclusion, headed) : counted(matching.length, 'row'), expected: counted(exclusion.row.rows, 'used row'),
         mend: matching.length === 0 ? 'Correct the headings and texts of `row:`' : 'Add a column that tells the rows apart, or say `rows:` with the number meant',
         related: matching.slice(0, 6).map((index) => ({ message: 'matches', place: { file: headed[index]?.file ?? '', line: headed[index]?.line } })),
       }))

@@ -1,6 +1,7 @@
 // One raw file of a dataset → its rows with every mapped cell, and the observations they hold. Lines before the headings, rows of another
 // kind and footers are kept as "not used" with the rule that says so; nothing is skipped without a word.
 import type { DatasetSource, DecimalMark, FileSource, Measurand } from '../definition/study.ts'
+import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import { nearest } from '../diagnostics/nearest.ts'
 import type { Place } from '../diagnostics/place.ts'
@@ -59,14 +60,14 @@ export function readSourceFile(request: SourceFileRequest): SourceFileRead {
   }
   const preamble = table.rows.slice(0, table.rows.indexOf(headerRow)).filter((row) => row.cells.some((cell) => cell.trim() !== ''))
   if (preamble.length > 0 && file.headerRow === undefined) {
-    diagnostics.push(diagnostic('data/preamble', `${preamble.length} lines before the headings of \`${file.path}\` were skipped`, { place: { file: file.path, line: headerRow.line }, actual: `headings in line ${headerRow.line}` }))
+    diagnostics.push(diagnostic('data/preamble', `${counted(preamble.length, 'line')} before the headings of \`${file.path}\` skipped`, { place: { file: file.path, line: headerRow.line }, actual: `headings in line ${headerRow.line}` }))
   }
   const accepted = body.map((row) => ({ row, refused: refusal(row, headings, columns, request) }))
   const usable = accepted.filter((each) => each.refused === undefined).map((each) => each.row)
   const decimal = decimalOf(usable, columns, file, diagnostics)
   if (body.length === 0 || usable.length === 0) {
     diagnostics.push(diagnostic('data/no-rows', `No row of \`${file.path}\` is left for dataset \`${source.name}\``, {
-      place: { file: file.path, line: headerRow.line }, actual: body.length === 0 ? 'the headings only, no data' : `${body.length} rows, none accepted: ${accepted[0]?.refused ?? ''}`, expected: 'at least one row', mend: 'Correct `rows:` of the dataset, or the file',
+      place: { file: file.path, line: headerRow.line }, actual: body.length === 0 ? 'the headings only, no data' : `${counted(body.length, 'row')}, none accepted: ${accepted[0]?.refused ?? ''}`, expected: 'at least one row', mend: 'Correct `rows:` of the dataset, or the file',
     }))
   }
   if (decimal === undefined) return { rows: [], observations: [], headed: [], diagnostics }
@@ -107,7 +108,7 @@ function findHeader(rows: readonly CsvRow[], request: SourceFileRequest): Header
     return { problems: missing(needed, headingsOf(best), request, place) }
   }
   const headings = headingsOf(row)
-  const problems: Diagnostic[] = [...missing(needed, headings, request, { file: file.path, line: row.line, column: 1 })]
+  const problems = missing(needed, headings, request, { file: file.path, line: row.line, column: 1 })
   for (const heading of new Set(needed)) {
     if (headings.filter((each) => each === heading).length > 1) problems.push(diagnostic('data/repeated-heading', `The heading \`${heading}\` stands over two columns of \`${file.path}\``, { place: { file: file.path, line: row.line, column: 1 }, actual: heading, expected: 'each mapped heading once', mend: 'Rename one of the columns in the export, or map another heading' }))
   }
@@ -119,7 +120,7 @@ function held(row: CsvRow, needed: readonly string[]): number {
   return needed.filter((heading) => headings.includes(heading)).length
 }
 
-function missing(needed: readonly string[], headings: readonly string[], request: SourceFileRequest, place: Place): readonly Diagnostic[] {
+function missing(needed: readonly string[], headings: readonly string[], request: SourceFileRequest, place: Place): Diagnostic[] {
   return [...new Set(needed)].filter((heading) => !headings.includes(heading)).map((heading) => {
     const guess = nearest(heading, headings.filter((each) => each !== ''))
     const choice = Object.values(request.source.columns).find((each) => each.kind === 'one' && each.column === heading)
@@ -151,7 +152,7 @@ function decimalOf(rows: readonly CsvRow[], columns: readonly MappedColumn[], fi
   const texts = rows.flatMap((row) => numeric.map((column) => ({ text: row.cells[column.index] ?? '', row, column })))
   const sniffed = sniffDecimal(texts.map((each, at) => ({ text: each.text, at })))
   if ('decimal' in sniffed) return sniffed.decimal
-  const placeOf = (at: number): Place => ({ file: file.path, line: texts[at]?.row.line, column: (texts[at]?.column.index ?? 0) + 1 })
+  const placeOf = (at: number): Place => placeIn(file.path, texts[at]?.row, texts[at]?.column)
   const textOf = (at: number): string => texts[at]?.text ?? ''
   if ('ambiguous' in sniffed) {
     diagnostics.push(diagnostic('data/ambiguous-decimal', `\`${textOf(sniffed.ambiguous)}\` can be read in two ways`, { place: placeOf(sniffed.ambiguous), actual: textOf(sniffed.ambiguous), expected: 'a declared decimal mark', mend: 'Declare `decimal: point` or `decimal: comma` for the file' }))
@@ -166,13 +167,13 @@ function decimalOf(rows: readonly CsvRow[], columns: readonly MappedColumn[], fi
 
 function cellsOf(row: CsvRow, columns: readonly MappedColumn[], width: number, decimal: DecimalMark, { file, source }: SourceFileRequest, diagnostics: Diagnostic[]): Readonly<Record<string, Cell>> {
   if (row.cells.length < width || row.cells.slice(width).some((cell) => cell.trim() !== '')) {
-    diagnostics.push(diagnostic('data/broken-row', `Line ${row.line} of \`${file.path}\` has ${row.cells.length} cells, the headings have ${width}`, { place: { file: file.path, line: row.line, column: 1 }, actual: `${row.cells.length} cells`, expected: `${width} cells`, mend: 'Export the file again; a decimal comma in a comma-separated file or a cut last line does this' }))
+    diagnostics.push(diagnostic('data/broken-row', `Line ${row.line} of \`${file.path}\` has ${counted(row.cells.length, 'cell')}, the headings have ${width}`, { place: { file: file.path, line: row.line, column: 1 }, expected: counted(width, 'cell'), mend: 'Export the file again; a decimal comma in a comma-separated file or a cut last line does this' }))
   }
   const cells: Record<string, Cell> = {}
   for (const [field, value] of Object.entries(file.fixed)) cells[field] = fixedCell(field, value, file.place)
   for (const column of columns) {
     const text = row.cells[column.index] ?? ''
-    const place: Place = { file: file.path, line: row.line, column: column.index + 1 }
+    const place = placeIn(file.path, row, column)
     const start = { text, column: column.heading, place }
     if (!numberFields.has(column.field)) {
       const label = tidied(text)
@@ -189,6 +190,11 @@ function cellsOf(row: CsvRow, columns: readonly MappedColumn[], width: number, d
   return cells
 }
 
+function placeIn(file: string, row: CsvRow | undefined, column: MappedColumn | undefined): Place {
+  const index = column?.index ?? 0
+  return { file, line: row?.line, column: row?.starts[index] ?? 1, length: Math.max(1, row?.cells[index]?.length ?? 1) }
+}
+
 function fixedCell(field: string, value: string, place: Place): Cell {
   const start = { text: value, column: 'stated for the file', place }
   const number = Number(value)
@@ -198,7 +204,7 @@ function fixedCell(field: string, value: string, place: Place): Cell {
 function labelsOf(row: CsvRow, columns: readonly MappedColumn[], file: string): Readonly<Record<string, Cell>> {
   return Object.fromEntries(columns.map((column): [string, Cell] => {
     const text = row.cells[column.index] ?? ''
-    const start = { text, column: column.heading, place: { file, line: row.line, column: column.index + 1 } }
+    const start = { text, column: column.heading, place: placeIn(file, row, column) }
     return [column.key, tidied(text) === '' ? { ...start, kind: 'missing' } : { ...start, kind: 'label', value: tidied(text) }]
   }))
 }
@@ -214,7 +220,7 @@ function unreadable(text: string, read: ReturnType<typeof readNumber> & { readon
     'not finite': { message: 'a number too large to hold', mend: 'Correct the file' },
   }[read.why]
   return diagnostic(read.why === 'unit' ? 'data/unit-in-cell' : 'data/not-a-number', `Unexpected \`${text.trim().slice(0, 60)}\` in column \`${column.heading}\`: ${told.message}`, {
-    place: { ...place, length: 1 }, actual: text.trim().slice(0, 60), expected: `a number with a decimal ${mark}, \`<0.05\`, \`>500\`, ND, or an empty cell`, mend: told.mend,
+    place, actual: text.trim().slice(0, 60), expected: `a number with a decimal ${mark}, \`<0.05\`, \`>500\`, ND, or an empty cell`, mend: told.mend,
   })
 }
 
@@ -252,5 +258,5 @@ function noteStrangers(rows: readonly SourceRow[], file: string, diagnostics: Di
   const first = strangers[0]
   if (first === undefined) return
   const names = [...new Set(strangers.map((row) => row.cells['measurand']?.text.trim() ?? ''))]
-  diagnostics.push(diagnostic('data/unknown-measurand', `${strangers.length} rows of \`${file}\` name a measurand that the study does not hold`, { place: { file, line: first.line, column: 1 }, actual: names.slice(0, 8).join(', '), expected: 'ids or names of measurands', mend: 'Nothing, if these are meant to be left out; they are listed as not used' }))
+  diagnostics.push(diagnostic('data/unknown-measurand', `${counted(strangers.length, 'row')} of \`${file}\` with a measurand that the study does not hold`, { place: { file, line: first.line, column: 1 }, actual: names.slice(0, 8).join(', '), expected: 'ids or names of measurands', mend: 'Nothing, if these are meant to be left out; they are listed as not used' }))
 }

@@ -66,7 +66,8 @@ function printOne({ diagnostic, others }: FoldedDiagnostic, linesOf: (file: stri
   const frame = place === undefined || lines === undefined ? [] : codeFrame(lines, place)
   const said = (label: string, text: string | undefined): readonly string[] => (text === undefined || text === '' ? [] : [`  ${label}: ${harmless(text)}`])
   // What was found is read off the frame or the message; it is told apart only where neither shows it.
-  const isShown = frame.length > 0 || diagnostic.actual === undefined || diagnostic.message.includes(diagnostic.actual)
+  const shownLine = frame.length === 0 ? '' : (lines?.[(place?.line ?? 0) - 1] ?? '')
+  const isShown = diagnostic.actual === undefined || diagnostic.message.includes(diagnostic.actual) || shownLine.includes(diagnostic.actual.replace(/^`|`$/g, ''))
   return [
     [...(place === undefined ? [] : [paint('strong', placeText(place))]), paint(diagnostic.severity, diagnostic.severity), harmless(diagnostic.message), paint('faint', `[${diagnostic.code}]`)].join(' '),
     ...frame.map((line) => `  ${paint('faint', line)}`),

@@ -51,9 +51,20 @@ function blocksOf(part: TemplatePart, section: Section, annex: boolean, found: D
       }))
       return []
     }
-    case 'paragraph': return [{ type: 'textBlock', origin: 'template', children: part.pieces.map((piece) => inlineOf(piece, section, found)) }]
+    case 'paragraph': {
+      found.push(...typedNumbers(part))
+      return [{ type: 'textBlock', origin: 'template', children: part.pieces.map((piece) => inlineOf(piece, section, found)) }]
+    }
     case 'block': return printable(part.node)
   }
+}
+
+/** A result typed into a template would stay when the data change. */
+function typedNumbers(part: TemplatePart & { readonly kind: 'paragraph' }): readonly Diagnostic[] {
+  const text = part.pieces.map((piece) => ('text' in piece ? piece.text : '')).join('')
+  return [...text.matchAll(/\d[\d.,]*[ \u00a0\u202f]?(?:%|‰|[kmµn]?g\/|[kmµn]?g\b|[mµn]?mol\b|[mµ]?L\b)/g)].map((match) => diagnostic('present/typed-number', `\`${match[0]}\` is typed into the template`, {
+    place: part.place, actual: match[0], expected: 'a directive that takes the number from the record', mend: 'Replace it by a directive, or by words without the number',
+  }))
 }
 
 function printable(node: (TemplatePart & { readonly kind: 'block' })['node']): readonly MarkdownBlock[] {

@@ -1,6 +1,7 @@
 // The design of precision as found: fields that change together, and cells with fewer values than others.
 import type { AssessInput } from '../../assess/assessment-part.ts'
 import type { Measurement } from '../../assess/measurements.ts'
+import { counted } from '../../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../../diagnostics/diagnostic.ts'
 import type { PrecisionOptions } from './options.ts'
 
@@ -31,7 +32,7 @@ export function designGaps(values: readonly Measurement[], runOf: (each: Measure
   const short = counts.filter((each) => each.n < most)
   if (short.length === 0) return []
   const named = short.slice(0, 8).map((each) => `${each.run === '' ? 'all' : each.run}${each.level === undefined ? '' : ` at ${each.level}`}: ${each.n}`)
-  return [diagnostic('assess/design-gap', `${short.length} cells of the precision design of \`${input.measurand.id}\` hold fewer than ${most} values`, {
+  return [diagnostic('assess/design-gap', `${counted(short.length, 'cell')} of the precision design of \`${input.measurand.id}\` with fewer than ${most} values`, {
     place: input.block.place, actual: `${named.join('; ')}${short.length > 8 ? '; …' : ''}`, expected: `${most} values in each run at each level`, mend: 'Nothing is put in their place; degrees of freedom are counted from what is there',
   })]
 }

@@ -3,7 +3,6 @@ import type { CodeEntry } from './entry.ts'
 
 export const assessCodes = {
   'assess/too-few-values': { severity: 'warning', help: 'A statistic needs more values than the data hold, so the findings that need it are not evaluable' },
-  'assess/unknown-dataset': { severity: 'error', help: 'A characteristic names a dataset that the study does not declare' },
   'assess/missing-field': { severity: 'error', help: 'A characteristic needs a column that the dataset does not map' },
   'assess/censored-value': { severity: 'warning', help: 'A censored value stands where a number is needed, so its level is not evaluable' },
   'assess/pseudo-replication': { severity: 'error', help: 'A column tells repeated injections apart and the study does not say what the independent unit is' },

@@ -19,6 +19,5 @@ export const dataCodes = {
   'data/unknown-measurand': { severity: 'note', help: 'Rows name a measurand that the study does not hold; they are listed as not used' },
   'data/unmatched-exclusion': { severity: 'error', help: 'An exclusion does not match the rows it says' },
   'data/preamble': { severity: 'note', help: 'Lines before the headings were skipped' },
-  'data/footer': { severity: 'note', help: 'Rows without any mapped value were skipped' },
   'data/encoding': { severity: 'note', help: 'The encoding was found out from the bytes' },
 } as const satisfies Record<string, CodeEntry>
