@@ -100,8 +100,8 @@ function slabsOf(group: readonly ReportBlock[], before: readonly ReportBlock[] |
   if (figures.length > 0) return figureSlabs(figures, context)
   return group.flatMap((block): readonly Slab[] => {
     switch (block.type) {
-      case 'sectionHeading': return headingSlabs(block, context)
-      case 'textBlock': return textBlockSlabs(block, context, before?.some((each) => each.type === 'textBlock' && each.origin === 'user') === true)
+      case 'sectionHeading': return headingSlabs(block, block === headings.find((each) => each.annex === true && each.depth === 1), context)
+      case 'textBlock': return textBlockSlabs(block, before?.some((each) => each.type === 'textBlock' && each.origin === 'user') === true, context)
       case 'exhibitTable': return tableSlabs(block, context)
       case 'table': return tableSlabs(fromMarkdown(block), context)
       case 'exhibitFigure': return []

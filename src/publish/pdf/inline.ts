@@ -169,7 +169,7 @@ function linked(base: Fragment, link: NonNullable<Piece['link']>): Fragment {
 const softBreak = /[^/\-–@_.:]*[/\-–@_.:]+(?=[^/\-–@_.:\d])|[^/\-–@_.:]*[/@_]+(?=\d)|.+$/gsu
 
 /** Only words longer than this break at such places. */
-const softBreakLength = 16
+const softBreakLength = 14
 
 function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: StructureNode | undefined, context: InlineContext): readonly Word[] {
   const fragments = fragmentsOf(inlines, { text: '', style, rise: 0, tag }, context)

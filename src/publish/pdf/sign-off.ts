@@ -37,7 +37,7 @@ function personSlab(person: SignOffBlock['people'][number], spaceBefore: number,
   set(person.name, name, 0, width, node('P', group))
   if (person.position !== '') set(person.position, styles.table, 0, width, node('P', group))
   set(person.meaning, small, 0, width, node('P', group))
-  const height = Math.max(52, y + 7)
+  const height = Math.max(60, y + 7)
   const line = height - 17
   const dateLeft = page.textWidth - dateWidth
   boxes.push(

@@ -28,6 +28,8 @@ interface Wish {
   /** Narrowest without breaking inside a word. */
   readonly least: number
   readonly natural: number
+  /** Cells by their natural width, rounded up to whole points; the head counts as one more cell. */
+  readonly lengths: ReadonlyMap<number, number>
   /** Widths before and after the decimal mark. */
   readonly before: number
   readonly after: number
@@ -88,11 +90,14 @@ function wishesOf(table: ExhibitTable, style: TextStyle, context: BlockContext):
     let natural = 0
     let before = 0
     let after = 0
+    const lengths = new Map([[Math.ceil(header.natural), 1]])
     for (const row of rows) {
       const cell = row.cells[index] ?? []
       if (cell.length === 0) continue
       const cellStyle = row.tone === 'total' ? { ...style, face: style.bold } : style
       const extent = extentOf(cell, cellStyle, context)
+      const length = Math.ceil(extent.natural)
+      lengths.set(length, (lengths.get(length) ?? 0) + 1)
       const at = column.align === 'number' ? alignedAt(cell, cellStyle, context) : undefined
       if (at === undefined) {
         natural = Math.max(natural, extent.natural)
@@ -103,7 +108,7 @@ function wishesOf(table: ExhibitTable, style: TextStyle, context: BlockContext):
       }
     }
     least = Math.max(least, before + after)
-    return { column, index, least, natural: Math.max(least, natural, unit.natural, Math.min(header.natural, Math.max(natural, 76))), before, after }
+    return { column, index, least, natural: Math.max(least, natural, unit.natural, Math.min(header.natural, Math.max(natural, 76))), lengths, before, after }
   })
 }
 
@@ -128,31 +133,49 @@ function laidOut(wishes: readonly Wish[], style: TextStyle): TablePart {
   const columns = wishes.map((wish, index): ColumnLayout => {
     const width = widths[index] ?? 0
     const right = left + width
-    const numbers = wish.before + wish.after
-    // The block of numbers is centred below a head wider than itself, at most a little from the right.
-    const inset = wish.column.align === 'number' && numbers > 0 ? Math.max(0, Math.min(width - numbers, 0)) : 0
-    const layout = { column: wish.column, index: wish.index, left, right, width, ...(wish.column.align === 'number' ? { mark: right - inset - wish.after } : {}) }
+    const layout = { column: wish.column, index: wish.index, left, right, width, ...(wish.column.align === 'number' ? { mark: right - wish.after } : {}) }
     left = right + between
     return layout
   })
   return { columns, width: columns.at(-1)?.right ?? 0, style }
 }
 
-/** Least widths first, then the rest by what each column still wishes, evenly enough that no column starves. */
+/** Widths go down in steps of this. */
+const step = 4
+
+/**
+ * From the natural widths down to the room, each step where it costs the fewest additional lines for the width it frees: a column in
+ * which a few cells are long wraps those, rather than one in which every cell would break.
+ */
 function shared(wishes: readonly Wish[], room: number): readonly number[] {
-  const widths = wishes.map((wish) => wish.least)
-  let rest = room - widths.reduce((sum, width) => sum + width, 0)
-  // The square root tames one very long text beside several short ones.
-  for (let round = 0; round < 8 && rest > 0.5; round += 1) {
-    const pulls = wishes.map((wish, index) => Math.sqrt(Math.max(0, wish.natural - (widths[index] ?? 0))))
-    const total = pulls.reduce((sum, pull) => sum + pull, 0)
-    if (total === 0) break
-    const given = rest
-    pulls.forEach((pull, index) => {
-      const add = Math.min((given * pull) / total, (wishes[index]?.natural ?? 0) - (widths[index] ?? 0))
-      widths[index] = (widths[index] ?? 0) + add
-      rest -= add
+  const widths = wishes.map((wish) => Math.max(wish.least, Math.min(wish.natural, room)))
+  const costs = wishes.map((wish, index) => linesAt(wish, widths[index] ?? 0))
+  let excess = widths.reduce((sum, width) => sum + width, 0) - room
+  while (excess > 0.01) {
+    let best: { readonly index: number; readonly width: number; readonly cost: number; readonly penalty: number } | undefined
+    wishes.forEach((wish, index) => {
+      const width = widths[index] ?? 0
+      const narrower = Math.max(wish.least, width - Math.min(step, excess))
+      if (narrower > width - 0.01) return
+      const cost = linesAt(wish, narrower)
+      const penalty = (cost - (costs[index] ?? 0)) / (width - narrower)
+      if (best === undefined || penalty < best.penalty || (penalty === best.penalty && width > (widths[best.index] ?? 0))) best = { index, width: narrower, cost, penalty }
     })
+    if (best === undefined) break
+    excess -= (widths[best.index] ?? 0) - best.width
+    widths[best.index] = best.width
+    costs[best.index] = best.cost
   }
   return widths
+}
+
+/** About how many lines the cells of a column take at a width. */
+function linesAt(wish: Wish, width: number): number {
+  let lines = 0
+  for (const [natural, count] of wish.lengths) {
+    // Broken lines are not filled to their end, hence a little more.
+    const taken = Math.ceil((natural - 0.01) / width)
+    lines += count * (taken <= 1 ? 1 : Math.max(taken, (1.08 * natural) / width))
+  }
+  return lines
 }

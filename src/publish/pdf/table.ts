@@ -9,14 +9,21 @@ import { colours, emboldened, page, styles, tinted } from './style.ts'
 import { paragraphSlabs } from './text-slabs.ts'
 import { alignedAt, columnLayouts, type ColumnLayout, type TablePart } from './table-columns.ts'
 
-const padding = { above: 2.4, below: 2.4 } as const
+/** Above and below the lines of a row. Long tables are looked up, not read, and stand closer. */
+const padding = { short: 2.4, long: 1.3 } as const
+const longTable = 40
+
+interface Part extends TablePart {
+  readonly padding: number
+}
 
 /** Rows of more lines than `tallest` are cut into pieces of `piece` lines, since a page might not hold them. */
 const lines = { tallest: 18, piece: 6 } as const
 
 export function tableSlabs(table: ExhibitTable, context: BlockContext): readonly Slab[] {
   const spoken = withWords(table, context)
-  const parts = columnLayouts(spoken, context)
+  const rowCount = spoken.groups.reduce((count, group) => count + group.length, 0)
+  const parts = columnLayouts(spoken, context).map((part): Part => ({ ...part, padding: rowCount > longTable ? padding.long : padding.short }))
   return parts.flatMap((part, index) => partSlabs(spoken, part, { index, count: parts.length }, context))
 }
 
@@ -34,7 +41,7 @@ interface Position {
   readonly count: number
 }
 
-function partSlabs(table: ExhibitTable, part: TablePart, position: Position, context: BlockContext): readonly Slab[] {
+function partSlabs(table: ExhibitTable, part: Part, position: Position, context: BlockContext): readonly Slab[] {
   const tag = node('Table', context.root)
   const isLast = position.index === position.count - 1
   const head = headSlab(part, node('TR', node('THead', tag)), context)
@@ -74,7 +81,7 @@ function captionSlabs(table: ExhibitTable, parent: StructureNode, position: Posi
   return [...all, { height: 3, spaceBefore: 0, boxes: [], keepWithNext: 'must' }]
 }
 
-function headSlab(part: TablePart, row: StructureNode, context: BlockContext): Slab {
+function headSlab(part: Part, row: StructureNode, context: BlockContext): Slab {
   const style = { ...styles.tableHead, size: part.style.size, leading: part.style.leading - 0.5 }
   const unitStyle = tinted({ ...style, face: styles.table.face }, colours.secondary)
   const cells = part.columns.map((column) => {
@@ -114,7 +121,7 @@ const borders = {
   end: { width: 0.9, colour: colours.ink },
 } as const
 
-function rowSlabs(row: ExhibitRow, part: TablePart, rowTag: StructureNode, border: keyof typeof borders, context: BlockContext): readonly Slab[] {
+function rowSlabs(row: ExhibitRow, part: Part, rowTag: StructureNode, border: keyof typeof borders, context: BlockContext): readonly Slab[] {
   const base = row.tone === 'excluded' ? tinted(part.style, colours.faint) : row.tone === 'total' ? emboldened(part.style) : part.style
   const cells = part.columns.map((column) => {
     const tag = column.column.rowHeader === true ? node('TH', rowTag, { scope: 'Row' }) : node('TD', rowTag)
@@ -128,10 +135,10 @@ function rowSlabs(row: ExhibitRow, part: TablePart, rowTag: StructureNode, borde
   for (let from = 0; from < count; from += perSlab) {
     const to = Math.min(count, from + perSlab)
     const isEnd = to === count
-    const height = padding.above + (to - from) * base.leading + (isEnd ? padding.below : 0)
+    const height = part.padding * (isEnd ? 2 : 1) + (to - from) * base.leading
     const boxes = cells.flatMap((cell): readonly Box[] => [
       ...(from === 0 ? [{ kind: 'structure', tag: cell.tag } as const] : []),
-      ...cell.lines.slice(from, to).flatMap((line, index) => lineBoxes(line, cellLeft(cell, line, base, context), padding.above + index * base.leading + baselineIn(base.leading, base.size))),
+      ...cell.lines.slice(from, to).flatMap((line, index) => lineBoxes(line, cellLeft(cell, line, base, context), part.padding + index * base.leading + baselineIn(base.leading, base.size))),
     ])
     const line = borders[border]
     slabs.push({ height, spaceBefore: 0, boxes: isEnd ? [...boxes, { kind: 'rule', x: 0, y: height, toX: part.width, toY: height, ...line }] : boxes })
@@ -148,7 +155,7 @@ function cellLeft(cell: { readonly column: ColumnLayout; readonly lines: readonl
   return Math.max(column.left, Math.min(column.mark - before, column.right - line.width))
 }
 
-function emptySlab(part: TablePart, body: StructureNode, context: BlockContext): Slab {
+function emptySlab(part: Part, body: StructureNode, context: BlockContext): Slab {
   const row = node('TR', body)
   const [slab] = rowSlabs({ cells: [[{ type: 'text', value: 'no rows' }], ...part.columns.slice(1).map(() => [])] }, part, row, 'end', context)
   if (slab === undefined) throw new Error('a row without a slab')

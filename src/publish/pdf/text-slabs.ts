@@ -3,7 +3,7 @@
 import type { PhrasingContent } from 'mdast'
 import type { FormulaBlock, Inline, MarkdownBlock, SectionHeading, TextBlock } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { extentOf, type Line, lineBoxes, setLines } from './inline.ts'
+import { extentOf, type Line, lineBoxes, plainText, setLines } from './inline.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, page, styles, type TextStyle } from './style.ts'
@@ -43,7 +43,8 @@ function lineSlab(line: Line, setting: Setting, spaceBefore: number, keepWithNex
 
 const headingSpace = { 1: 26, 2: 18, 3: 12 } as const
 
-export function headingSlabs(heading: SectionHeading, context: BlockContext): readonly Slab[] {
+/** The first annex begins a page; the others follow one another. */
+export function headingSlabs(heading: SectionHeading, isFirstAnnex: boolean, context: BlockContext): readonly Slab[] {
   const style = styles[`heading${heading.depth}`]
   const tag = node(`H${heading.depth}`, context.root)
   const label = heading.number === undefined ? '' : heading.annex === true && heading.depth === 1 ? `Annex ${heading.number}` : heading.number
@@ -59,15 +60,18 @@ export function headingSlabs(heading: SectionHeading, context: BlockContext): re
     ],
   }))
   const space: Slab = { height: heading.depth === 1 ? 5 : 2, spaceBefore: 0, boxes: [], keepWithNext: 'must' }
-  return [...(heading.annex === true && heading.depth === 1 ? [{ height: 0, spaceBefore: 0, boxes: [], breaksPage: true } as const] : []), ...slabs, space]
+  return [...(isFirstAnnex ? [{ height: 0, spaceBefore: 0, boxes: [], breaksPage: true } as const] : []), ...slabs, space]
 }
 
 const sideRule = { indent: 12, width: 2 } as const
 
-export function textBlockSlabs(block: TextBlock, context: BlockContext, follows: boolean): readonly Slab[] {
+/** `follows`: the block before is in the user's own words. */
+export function textBlockSlabs(block: TextBlock, follows: boolean, context: BlockContext): readonly Slab[] {
   if (block.children.length === 0) return []
   if (block.origin !== 'user') {
-    return paragraphSlabs(block.children, { style: styles.body, tag: node('P', context.root), left: 0, width: page.measure, spaceBefore: 6 }, context)
+    // What ends in a colon announces what comes next.
+    const announces = plainText(block.children.slice(-1), context).endsWith(':')
+    return paragraphSlabs(block.children, { style: styles.body, tag: node('P', context.root), left: 0, width: page.measure, spaceBefore: follows ? 10 : 6, ...(announces ? { keepWithNext: 'must' } : {}) }, context)
   }
   const quote = node('BlockQuote', context.root)
   const label: readonly Slab[] = follows ? [] : paragraphSlabs(
