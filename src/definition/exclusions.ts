@@ -37,7 +37,7 @@ const one = located(object({
   reference: optional(text({ describe: 'Number of the deviation or investigation' })),
   'requested-by': required(located(text({ describe: 'Id of the person who asks' }))),
   'approved-by': required(located(text({ describe: 'Id of another person, who approves' }))),
-  date: required(date({ describe: 'Date of the approval' })),
+  date: required(located(date({ describe: 'Date of the approval' }))),
 }, { describe: 'One exclusion' }))
 
 export const exclusionsReader = listOf(one, { describe: 'Rows taken out; every result is shown with and without them' })
@@ -47,12 +47,13 @@ type ReadExclusions = ReadBy<typeof exclusionsReader>
 export function exclusionsOf(read: ReadExclusions): readonly Exclusion[] {
   return read.map(({ value, place }, index) => ({
     number: index + 1, dataset: value.data, row: value.row.value, measurands: value.measurands?.map((each) => each.value), class: value.class, reason: value.reason, reference: value.reference,
-    requestedBy: value['requested-by'].value, approvedBy: value['approved-by'].value, date: value.date, place,
+    requestedBy: value['requested-by'].value, approvedBy: value['approved-by'].value, date: value.date.value, place,
   }))
 }
 
 export interface KnownToExclusions {
   readonly people: readonly Person[] | undefined
+  readonly reportDate: string | undefined
   readonly measurands: ReadonlySet<string>
   readonly datasets: readonly DatasetSource[]
 }
@@ -65,6 +66,10 @@ export function checkExclusions(read: ReadExclusions, known: KnownToExclusions, 
     }
     if (requested.value === approved.value) {
       reading.report(diagnostic('definition/same-person', `Unexpected approval of exclusion ${index + 1} by \`${approved.value}\`, who requested it`, { place: approved.place, actual: approved.value, expected: 'another person than the one who requested it', mend: 'Have another person approve it, and write their id' }))
+    }
+    // Dates as year-month-day are in order when their texts are.
+    if (known.reportDate !== undefined && value.date.value > known.reportDate) {
+      reading.report(diagnostic('definition/contradiction', `Unexpected date \`${value.date.value}\` of exclusion ${index + 1}: the report is dated ${known.reportDate}`, { place: value.date.place, actual: value.date.value, expected: 'a day not later than the report', mend: 'Correct one of the two dates' }))
     }
     for (const measurand of value.measurands ?? []) checkKnown(measurand, known.measurands, 'measurand', 'under `measurands`', reading)
     const dataset = known.datasets.find((each) => each.name === value.data.value)

@@ -75,7 +75,7 @@ function checkReferences({ root, read, references, catalogue }: Referring, readi
   if (people !== undefined) checkPeople(people, reading)
   const datasets = read.data === undefined ? [] : datasetsOf(read.data)
   checkDatasets(datasets, { measurands, blocks: blockNames(valueAt(root, 'characteristics')) }, reading)
-  checkExclusions(read.exclusions ?? [], { people: people === undefined ? undefined : Object.values(people).flat(), measurands, datasets }, reading)
+  checkExclusions(read.exclusions ?? [], { people: people === undefined ? undefined : Object.values(people).flat(), reportDate: read.report?.date, measurands, datasets }, reading)
   checkPromises({ design: designOf(read.design ?? []), notPerformed: read['not-performed'] ?? [], asked: keysAt(root, 'characteristics'), catalogue }, reading)
 }
 

@@ -1,6 +1,8 @@
 // The whole of a study is read: every key, every default named, every number as typed; and whatever is damaged, errors come instead of a throw.
+import { readFileSync } from 'node:fs'
 import { expect, test } from 'vitest'
 import fc from 'fast-check'
+import { catalogue } from '../../src/characteristics/index.ts'
 import { readDefinition } from '../../src/definition/index.ts'
 import type { StudyDefinition } from '../../src/definition/study.ts'
 import { hasErrors } from '../../src/diagnostics/stage-result.ts'
@@ -97,3 +99,20 @@ function expectTold(text: string): void {
     expect(each.place?.line ?? 0, each.message).toBeLessThanOrEqual(lines.length)
   }
 }
+
+test('a study with one of everything is read with the catalogue of the program', () => {
+  const path = new URL('../../fixtures/definition/every-part/study.yaml', import.meta.url)
+  const { value, diagnostics } = readDefinition({ file: 'study.yaml', text: readFileSync(path, 'utf8') }, catalogue)
+  expect(printDiagnostics(diagnostics, { sources: new Map() })).toBe('')
+  expect(value?.blocks.map((block) => block.id)).toEqual(['linearity', 'range', 'detection', 'accuracy', 'precision', 'comparison'])
+  expect(value?.blocks.map((block) => block.criteria.length)).toEqual([2, 2, 2, 1, 2, 1])
+})
+
+test('five hundred measurands take no longer than a moment', () => {
+  const many = Array.from({ length: 500 }, (_, index) => `  m${index}: { unit: mg/L, response: µS·min }\n`).join('')
+  const text = exampleStudy.replace(/ {2}chloride: \{.*\n/, (line) => line + many)
+  read(text)
+  const start = performance.now()
+  read(text)
+  expect(performance.now() - start).toBeLessThan(1000) // milliseconds; some 50 alone on a quiet machine
+})
