@@ -34,6 +34,36 @@ export function positionOn(domain: AxisDomain, value: number): number {
   return (scaled(value) - scaled(domain.low)) / (scaled(domain.high) - scaled(domain.low))
 }
 
+export interface AxisTick {
+  readonly value: number
+  readonly text: string
+}
+
+/** Ticks of a linear axis where the chart draws them as data, in the style of the axes of the library. */
+export function axisTicks(domain: AxisDomain, count: number): readonly AxisTick[] {
+  const step = tickStep(domain.low, domain.high, count)
+  const first = Math.ceil(domain.low / step - 1e-6)
+  const last = Math.floor(domain.high / step + 1e-6)
+  return Array.from({ length: last - first + 1 }, (_, index) => {
+    const value = Number(((first + index) * step).toPrecision(12))
+    return { value, text: tickText(value, step) }
+  })
+}
+
+function tickText(value: number, step: number): string {
+  const magnitude = Math.abs(value)
+  const sign = value < 0 ? '\u2212' : ''
+  if (value === 0) return '0'
+  if (magnitude >= 1e7 || magnitude < 1e-4) {
+    const [mantissa = '', exponent = ''] = magnitude.toExponential(2).split('e')
+    return `${sign}${String(Number(mantissa))} × 10${[...exponent].map((letter) => raised[letter] ?? '').join('')}`
+  }
+  const [whole = '', fraction] = magnitude.toFixed(Math.max(0, -Math.floor(Math.log10(step) + 1e-9))).split('.')
+  return sign + whole.replace(/\B(?=(\d{3})+$)/g, '\u2009') + (fraction === undefined ? '' : `.${fraction}`)
+}
+
+const raised: Readonly<Record<string, string>> = { '-': '⁻', ...Object.fromEntries([...'⁰¹²³⁴⁵⁶⁷⁸⁹'].map((letter, digit) => [String(digit), letter])) }
+
 /** Room at both ends, then outwards to the next tick unless the ends are open; an axis starts at zero when it starts near it, and does not cross it for nothing. */
 function linearDomain(low: number, high: number, ticks: number, room: number, ends: 'ticks' | 'open'): AxisDomain {
   const span = high > low ? high - low : Math.abs(high) > 0 ? Math.abs(high) * 0.2 : 1

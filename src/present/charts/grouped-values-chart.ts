@@ -1,13 +1,14 @@
 // Single values by group (run, day, analyst, instrument) with group means, and one panel a level where there are several. Each
-// panel has its own value axis, because levels are often decades apart.
+// panel has its own value axis, because levels are often decades apart; all stand in one plot, with their places worked out here
+// (`down`, in points), since separate plots would cost several times the work.
 import type { Chart } from '../document.ts'
-import { axisDomain, positionOn, type AxisDomain } from './axis-domain.ts'
+import { axisDomain, axisTicks, positionOn } from './axis-domain.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
-import { chartSpecification, inks, panelledSpecification, plotFrame, titleSize, type PlotFrame } from './house-style.ts'
+import { chartSpecification, inks, plotFrame, textSize, titleSize, type PlotFrame } from './house-style.ts'
 import { keyData, keyLayers, meanKeyLayers, seriesEncoding, seriesOf } from './key.ts'
-import { category, excludedMark, field, type Fragment, labelLayer, limitMark, limitRequests, meanMark, nameChannel, pointBox, pointMark, type Rows, ticksUp, valueChannel, xOffset } from './layers.ts'
 import { aroundPoint, placeLabels } from './label-placement.ts'
+import { category, excludedMark, labelLayer, limitMark, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, ticksUp, titleLines, xOffset, type Rows } from './layers.ts'
 
 export interface GroupedValuesChartInput {
   readonly groupTitle: string
@@ -22,89 +23,100 @@ export interface GroupedValuesChartInput {
 }
 
 export function groupedValuesChart(input: GroupedValuesChartInput): Chart {
-  const panels = namesInOrder(input.values.map(panelOf), input.excluded.map(panelOf), input.means.map(panelOf))
+  const { values, excluded, means } = input
+  const panels = namesInOrder(values.map(panelOf), excluded.map(panelOf), means.map(panelOf))
+  const groups = namesInOrder(values.map((each) => each.group), excluded.map((each) => each.group), means.map((each) => each.group))
   const frame = plotFrame(input.width, panels.length > 1 ? { height: panelHeight(panels.length) } : {})
-  const groups = namesInOrder(input.values.map((each) => each.group), input.excluded.map((each) => each.group), input.means.map((each) => each.group))
   const names = namesBelow(groups, frame.plotWidth)
-  const series = seriesOf(input.values)
+  const series = seriesOf(values)
+  const shown = (group: string): string => names.shown.get(group) ?? group
+  const layout: Layout = { frame, groups, shown, series }
+  const parts = panels.map((panel, index) => panelRows(input, panel, index * (frame.plotHeight + panelGap), layout))
+  const key = keyData(series, means.length === 0 ? 'none' : 'mean', frame)
+  const raised = (rows: Rows): Rows => (panels.length > 1 ? rows.map((row) => ({ ...row, down: Number(row['down']) - 14 })) : rows)
+  return {
+    specification: specification({ ...frame, plotHeight: panels.length * frame.plotHeight + (panels.length - 1) * panelGap }, input.groupTitle, names.axis),
+    data: {
+      span: groups.map((group) => ({ group: shown(group) })),
+      ...Object.fromEntries(partNames.map((name) => [name, parts.flatMap((part): Rows => part[name])])),
+      panels: panels.map((panel, index) => ({ name: panel, title: titleLines(input.yTitle, frame.plotHeight + 16), down: index * (frame.plotHeight + panelGap), middle: index * (frame.plotHeight + panelGap) + frame.plotHeight / 2 })),
+      key: raised(key.key), meanKey: raised(key.meanKey), intervalKey: [],
+    },
+  }
+}
+
+/** Room for the name of the level above each panel but the first. */
+const panelGap = 26
+
+/** Lower where there are many, so that all of them stay on one page. */
+function panelHeight(panels: number): number {
+  return Math.max(36, Math.min(104, Math.floor(600 / panels) - panelGap))
+}
+
+function specification(frame: PlotFrame, groupTitle: string, groupAxis: Readonly<Record<string, unknown>>): Chart['specification'] {
   const x = category('group')
-  const y = field('value')
-  const only = (role: string): Fragment => ({ transform: [{ filter: `datum.role == '${role}'` }] })
-  const labels = (role: string, encoding: Fragment, color: string): Fragment => ({ ...only(role), ...withoutData(labelLayer('', { y, ...encoding }, { color })) })
-  const layer: readonly Fragment[] = [
-    { ...only('span'), mark: { type: 'point', opacity: 0 }, encoding: { x: nameChannel('group', { title: input.groupTitle, ...names.axis }), y: { ...valueChannel('y', 'value', input.yTitle, frame, { low: 0, high: 1, logarithmic: false }), scale: { type: 'linear', zero: false, nice: false } } } },
-    { ...only('overall'), mark: { type: 'rule', color: inks.axis, strokeWidth: 0.8 }, encoding: { y } },
-    { ...only('limit'), mark: limitMark, encoding: { y } },
-    { ...only('mean'), mark: meanMark, encoding: { x: { ...x, bandPosition: 0.2 }, x2: { field: 'group', bandPosition: 0.8 }, y } },
-    { ...only('value'), mark: pointMark, encoding: { x, xOffset, y, ...seriesEncoding } },
-    { ...only('excluded'), mark: excludedMark, encoding: { x, xOffset, y } },
-    labels('excludedLabel', { x }, inks.excluded), labels('limitLabel', { x: { value: 'width' } }, inks.limit), labels('overallLabel', { x: { value: 'width' } }, inks.quiet),
-    ...[...keyLayers(), ...meanKeyLayers()].map((each) => ({ ...each, ...only((each['data'] as { readonly name: string }).name) })).map(withoutData),
-    { ...only('panelName'), mark: { type: 'text', align: 'left', baseline: 'alphabetic', fontWeight: 'bold', fontSize: titleSize, color: inks.text, x: 0, y: -5 }, encoding: { text: { field: 'panel', type: 'nominal' } } },
-  ]
-  const rows = panels.flatMap((panel) => panelRows(input, panel, { frame, groups, shown: names.shown, series, panels }))
-  const specification = panels.length > 1
-    ? panelledSpecification(frame, { field: 'panel', data: 'values', layer })
-    : { ...chartSpecification(frame, layer), data: { name: 'values' } }
-  return { specification, data: { values: rows } }
+  const y = { field: 'down', type: 'quantitative', scale: null, axis: null }
+  const text = (color: string, mark: Readonly<Record<string, unknown>>): Readonly<Record<string, unknown>> => ({ type: 'text', color, fontSize: textSize, ...mark })
+  return chartSpecification(frame, [
+    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: nameChannel('group', { title: groupTitle, ...groupAxis }) } },
+    { data: { name: 'ticks' }, mark: { type: 'rule', color: inks.grid, strokeWidth: 0.5 }, encoding: { y } },
+    { data: { name: 'ticks' }, mark: text(inks.quiet, { align: 'right', baseline: 'middle', x: -5 }), encoding: { y, text: { field: 'text', type: 'nominal' } } },
+    { data: { name: 'panels' }, mark: text(inks.text, { align: 'left', baseline: 'alphabetic', fontWeight: 'bold', fontSize: titleSize, x: 0, dy: -6 }), encoding: { y, text: { field: 'name', type: 'nominal' } } },
+    { data: { name: 'panels' }, mark: text(inks.text, { align: 'center', baseline: 'line-bottom', angle: 270, fontSize: titleSize, x: 18 - frame.left, y: { expr: 'datum.middle' } }), encoding: { text: { field: 'title', type: 'nominal' } } },
+    { data: { name: 'overall' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.8 }, encoding: { y } },
+    { data: { name: 'limits' }, mark: limitMark, encoding: { y } },
+    { data: { name: 'means' }, mark: meanMark, encoding: { x: { ...x, bandPosition: 0.2 }, x2: { field: 'group', bandPosition: 0.8 }, y } },
+    { data: { name: 'values' }, mark: pointMark, encoding: { x, xOffset, y, ...seriesEncoding } },
+    { data: { name: 'excluded' }, mark: excludedMark, encoding: { x, xOffset, y } },
+    labelLayer('excludedLabels', { x, y }, { color: inks.excluded }), labelLayer('limitLabels', { x: { value: 'width' }, y }, { color: inks.limit }), labelLayer('overallLabels', { x: { value: 'width' }, y }, { color: inks.quiet }),
+    ...keyLayers(), ...meanKeyLayers(),
+  ])
 }
 
 interface Layout {
   readonly frame: PlotFrame
   readonly groups: readonly string[]
-  readonly shown: ReadonlyMap<string, string>
+  readonly shown: (group: string) => string
   readonly series: readonly string[]
-  readonly panels: readonly string[]
 }
 
-/** Everything of one panel in one dataset, told apart by role, because panels are cut from one dataset only. */
-function panelRows(input: GroupedValuesChartInput, panel: string, { frame, groups, shown, series, panels }: Layout): Rows {
+const partNames = ['ticks', 'overall', 'limits', 'means', 'values', 'excluded', 'excludedLabels', 'limitLabels', 'overallLabels'] as const
+type PanelRows = Readonly<Record<(typeof partNames)[number], Rows>>
+
+function panelRows(input: GroupedValuesChartInput, panel: string, top: number, { frame, groups, shown, series }: Layout): PanelRows {
   const here = <T extends { readonly panel?: string | undefined }>(items: readonly T[]): readonly T[] => items.filter((item) => panelOf(item) === panel)
   const [values, excluded, means] = [here(input.values), here(input.excluded), here(input.means)]
   const limits = input.limits.filter((limit) => limit.panel === undefined || limit.panel === panel)
   const overall = input.overall === undefined ? [] : [{ value: input.overall, label: 'overall mean' }]
-  const span = axisDomain([...values.map((each) => each.value), ...excluded.map((each) => each.value), ...means.map((each) => each.mean), ...[...limits, ...overall].map((each) => each.value)], { ticks: ticksUp(frame), room: 0.09 })
-  const named = (group: string): string => shown.get(group) ?? group
+  const span = axisDomain([...[...values, ...excluded, ...limits, ...overall].map((each) => each.value), ...means.map((each) => each.mean)], { ticks: ticksUp(frame), room: 0.09 })
+  const height = (value: number): number => (1 - positionOn(span, value)) * frame.plotHeight
   const band = frame.plotWidth / Math.max(1, groups.length)
-  const marks = groups.flatMap((group) => {
-    const inGroup = [...values.filter((each) => each.group === group).map((each) => ({ role: 'value', ...each })), ...excluded.filter((each) => each.group === group).map((each) => ({ role: 'excluded', ...each }))]
-    const offsets = spread(inGroup.map((each) => heightOf(span, frame, each.value)), band * 0.36)
-    return inGroup.map((each, index) => ({ ...each, offset: band / 2 + (offsets[index] ?? 0), at: { x: (groups.indexOf(group) + 0.5) * band + (offsets[index] ?? 0), y: heightOf(span, frame, each.value) } }))
+  const offsets = groups.map((group) => {
+    const marks = [...values, ...excluded].filter((each) => each.group === group)
+    return new Map(spread(marks.map((each) => height(each.value)), band * 0.36).map((offset, index) => [marks[index], band / 2 + offset]))
   })
-  const hollow = marks.flatMap((mark) => ('label' in mark ? [mark] : []))
-  const requests = [...limitRequests(frame, span, [...limits, ...overall]), ...hollow.map((mark) => ({ text: mark.label, ...mark.at, candidates: aroundPoint() }))]
-  const offsets = placeLabels(requests, { left: 0, right: frame.plotWidth, top: -6, bottom: frame.plotHeight }, marks.map((mark) => pointBox(mark.at)))
-  const key = panels.indexOf(panel) > 0 ? undefined : keyData(series, input.means.length === 0 ? 'none' : 'mean', frame)
-  const keyRole = (role: 'key' | 'meanKey'): Rows => (key?.[role] ?? []).map((each) => ({ role, panel, ...each, ...(panels.length > 1 ? { down: Number(each['down']) - 14 } : {}) }))
-  return [
-    ...keyRole('key'), ...keyRole('meanKey'), ...(panels.length > 1 ? [{ role: 'panelName', panel }] : []),
-    ...groups.flatMap((group) => [span.low, span.high].map((value) => ({ role: 'span', panel, panelOrder: panels.indexOf(panel), group: named(group), value }))),
-    ...overall.map((each) => ({ role: 'overall', panel, ...each })),
-    ...limits.map((each) => ({ role: 'limit', ...each, panel })),
-    ...means.map((each) => ({ role: 'mean', panel, group: named(each.group), value: each.mean })),
-    ...marks.map(({ at: _, ...mark }) => ({ ...mark, panel, group: named(mark.group), ...(mark.role === 'value' ? { series: series.length === 0 ? '' : ('series' in mark ? mark.series : undefined) ?? 'other' } : {}) })),
-    ...limits.map((each, index) => ({ role: 'limitLabel', panel, value: each.value, label: each.label, ...offsets[index] })),
-    ...overall.map((each, index) => ({ role: 'overallLabel', panel, ...each, ...offsets[limits.length + index] })),
-    ...hollow.map((mark, index) => {
-      const place = offsets[limits.length + overall.length + index]
-      return { role: 'excludedLabel', panel, group: named(mark.group), value: mark.value, label: mark.label, ...place, dx: (place?.dx ?? 0) + mark.offset - band / 2 }
+  const offsetOf = (mark: (typeof values)[number]): number => offsets[groups.indexOf(mark.group)]?.get(mark) ?? band / 2
+  const at = (mark: (typeof values)[number]): { readonly x: number; readonly y: number } => ({ x: groups.indexOf(mark.group) * band + offsetOf(mark), y: height(mark.value) })
+  const placed = placeLabels(
+    [...limitRequests(frame, span, [...limits, ...overall]), ...excluded.map((each) => ({ text: each.label, ...at(each), candidates: aroundPoint() }))],
+    { left: 0, right: frame.plotWidth, top: 0, bottom: frame.plotHeight }, [...values, ...excluded].map((each) => pointBox(at(each))),
+  )
+  const level = <T extends { readonly value: number }>(each: T): T & { readonly down: number } => ({ ...each, down: top + height(each.value) })
+  return {
+    ticks: axisTicks(span, ticksUp(frame)).map(({ value, text }) => ({ down: top + height(value), text })),
+    overall: overall.map(level), limits: rowsOf(limits.map(level)),
+    means: means.map((each) => ({ mean: each.mean, group: shown(each.group), down: top + height(each.mean) })),
+    values: values.map((each) => ({ ...level(each), group: shown(each.group), offset: offsetOf(each), series: series.length === 0 ? '' : each.series ?? 'other' })),
+    excluded: excluded.map((each) => ({ ...level(each), group: shown(each.group), offset: offsetOf(each) })),
+    limitLabels: limits.map((each, index) => ({ ...level(each), ...placed[index] })),
+    overallLabels: overall.map((each, index) => ({ ...level(each), ...placed[limits.length + index] })),
+    excludedLabels: excluded.map((each, index) => {
+      const place = placed[limits.length + overall.length + index]
+      return { ...level(each), group: shown(each.group), ...place, dx: (place?.dx ?? 0) + offsetOf(each) - band / 2 }
     }),
-  ]
+  }
 }
 
 function panelOf(item: { readonly panel?: string | undefined }): string {
   return item.panel ?? ''
-}
-
-function heightOf(span: AxisDomain, frame: PlotFrame, value: number): number {
-  return (1 - positionOn(span, value)) * frame.plotHeight
-}
-
-function withoutData({ data: _, ...rest }: Fragment): Fragment {
-  return rest
-}
-
-/** Lower where there are many, so that all of them stay on one page. */
-function panelHeight(panels: number): number {
-  return Math.max(36, Math.min(104, Math.floor(600 / panels) - 26))
 }

@@ -62,19 +62,6 @@ export function chartSpecification(frame: PlotFrame, layer: readonly Fragment[],
   }
 }
 
-const panelGap = 26
-
-/** Panels below one another, each with its own value axis and room for the name of its level above it. */
-export function panelledSpecification(frame: PlotFrame, options: { readonly field: string; readonly data: string; readonly layer: readonly Fragment[] }): Fragment {
-  return {
-    usermeta: { frame: { left: frame.left, width: frame.total } },
-    background: null, padding: 0, autosize: 'none', data: { name: options.data }, bounds: 'flush', spacing: panelGap,
-    facet: { row: { field: options.field, type: 'nominal', sort: { field: 'panelOrder', op: 'min' }, header: { labels: false, title: null } } },
-    spec: { width: frame.plotWidth, height: frame.plotHeight, layer: options.layer },
-    resolve: { scale: { y: 'independent' } }, config: houseConfig,
-  }
-}
-
 const font = 'Source Sans 3'
 
 export const houseConfig = {
