@@ -21,9 +21,8 @@ export function readYaml(source: { readonly file: string; readonly text: string 
   const lines = new LineCounter()
   const placeOf: PlaceOf = (from, to) => {
     const { line, col } = lines.linePos(Math.min(from, text.length))
-    const lineEnd = /[\r\n]|$/g
-    lineEnd.lastIndex = from
-    const end = lineEnd.exec(text)?.index ?? text.length
+    const next = lines.lineStarts[line] ?? text.length + 1
+    const end = text[next - 2] === '\r' ? next - 2 : next - 1
     return { file: source.file, line: Math.max(1, line), column: Math.max(1, col), length: Math.max(1, Math.min(to, end) - from) }
   }
   const start: Place = { file: source.file, line: 1, column: 1 }
