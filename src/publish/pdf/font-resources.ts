@@ -1,7 +1,8 @@
 // Faces → fonts of the PDF, each embedded at its first use, and texts → arrays of glyphs with their shifts. Words are encoded once.
 import type { FaceName, FontFaces } from '../fonts.ts'
-import { figureCharacters, isFigure, plainFigures } from './shaping.ts'
+import { type PairSetting, pairSetting } from './pair-setting.ts'
 import type { PdfDocument, PdfFont, PdfReference } from './pdfkit-augmented.d.ts'
+import { wordsAndSpaces } from './shaping.ts'
 
 export interface ShownText {
   /** Name of the font resource. */
@@ -22,55 +23,31 @@ interface EncodedPiece {
 }
 
 export function fontResources(pdf: PdfDocument, faces: FontFaces): FontResources {
-  const fonts = new Map<FaceName, PdfFont>()
-  const words = new Map<string, readonly EncodedPiece[]>()
-  const figures = new Map<FaceName, ReadonlyMap<string, string> | undefined>()
+  const opened = new Map<FaceName, OpenedFont>()
   let used = new Map<string, PdfReference>()
 
-  function fontOf(face: FaceName): PdfFont {
-    const known = fonts.get(face)
+  function openedFont(face: FaceName): OpenedFont {
+    const known = opened.get(face)
     if (known !== undefined) return known
     pdf.font(faces.font(face))
-    fonts.set(face, pdf._font)
-    return pdf._font
-  }
-
-  function figureGlyphs(face: FaceName): ReadonlyMap<string, string> | undefined {
-    if (figures.has(face)) return figures.get(face)
-    const glyphs = plainFigures(faces, face) === undefined ? undefined : new Map([...figureCharacters].map((character) => [character, fontOf(face).encode(character)[0].join('')]))
-    figures.set(face, glyphs)
-    return glyphs
-  }
-
-  function encodedWord(word: string, face: FaceName): readonly EncodedPiece[] {
-    const glyphs = isFigure.test(word) ? figureGlyphs(face) : undefined
-    if (glyphs !== undefined) {
-      let array = ''
-      for (const character of word) array += glyphs.get(character) ?? ''
-      return [{ array: `<${array}>`, rise: 0 }]
-    }
-    const key = `${face} ${word}`
-    const known = words.get(key)
-    if (known !== undefined) return known
-    const made = encode(word, fontOf(face))
-    words.set(key, made)
+    const made = { font: pdf._font, pairs: pairSetting(faces, face), glyphs: new Map<string, string>(), words: new Map<string, readonly EncodedPiece[]>() }
+    opened.set(face, made)
     return made
   }
 
   return {
     shown(text, face) {
-      const font = fontOf(face)
-      used.set(font.id, font.ref())
+      const chosen = openedFont(face)
+      used.set(chosen.font.id, chosen.font.ref())
       const pieces: { array: string; rise: number }[] = []
-      // Words and spaces apart, as they are measured.
-      for (const [word] of text.matchAll(/[^ ]+| +/g)) {
-        for (const piece of encodedWord(word, face)) {
+      for (const word of wordsAndSpaces(text)) {
+        for (const piece of encodedWord(word, chosen)) {
           const last = pieces.at(-1)
           if (last !== undefined && last.rise === piece.rise) last.array += ` ${piece.array}`
           else pieces.push({ ...piece })
         }
       }
-      return { name: font.id, pieces: pieces.map(({ array, rise }) => ({ array: array.replaceAll('> <', ''), rise })) }
+      return { name: chosen.font.id, pieces: pieces.map(({ array, rise }) => ({ array: array.replaceAll('> <', ''), rise })) }
     },
     taken() {
       const taken = used
@@ -78,6 +55,40 @@ export function fontResources(pdf: PdfDocument, faces: FontFaces): FontResources
       return taken
     },
   }
+}
+
+interface OpenedFont {
+  readonly font: PdfFont
+  readonly pairs: PairSetting
+  /** Glyph numbers of single letters. */
+  readonly glyphs: Map<string, string>
+  readonly words: Map<string, readonly EncodedPiece[]>
+}
+
+function encodedWord(word: string, opened: OpenedFont): readonly EncodedPiece[] {
+  const known = opened.words.get(word)
+  if (known !== undefined) return known
+  const shifts = opened.pairs.shifts(word)
+  const made = shifts === undefined ? encode(word, opened.font) : [{ array: pairArray(word, shifts, opened), rise: 0 }]
+  opened.words.set(word, made)
+  return made
+}
+
+function pairArray(word: string, shifts: readonly number[], { font, glyphs }: OpenedFont): string {
+  let array = '<'
+  for (let index = 0; index < word.length; index += 1) {
+    const letter = word.charAt(index)
+    let glyph = glyphs.get(letter)
+    if (glyph === undefined) {
+      glyph = font.encode(letter)[0].join('')
+      glyphs.set(letter, glyph)
+    }
+    array += glyph
+    const shift = Math.round(shifts[index] ?? 0)
+    // A positive number in the array moves to the left.
+    if (shift !== 0) array += `> ${-shift} <`
+  }
+  return `${array}>`
 }
 
 function encode(word: string, font: PdfFont): readonly EncodedPiece[] {
@@ -91,7 +102,6 @@ function encode(word: string, font: PdfFont): readonly EncodedPiece[] {
     if (pieces.at(-1)?.rise !== rise || pieces.length === 0) pieces.push({ array: '', rise })
     const piece = pieces.at(-1)
     if (piece === undefined) return
-    // A positive number in the array moves to the left.
     shift -= position.xOffset
     const lead = Math.round(shift) === 0 ? '' : `${Math.round(shift)} `
     piece.array += `${piece.array === '' ? '' : ' '}${lead}<${glyph}>`

@@ -1,6 +1,6 @@
-// Text → runs with their widths, word by word and each word once. Plain figures are summed from their glyphs where the face is seen to
-// set them apart from each other (no kerning, no ligature): tables are full of numbers that occur only once.
+// Text → runs with their widths, word by word. Words of plain letters are summed from their pairs; all others are laid out once.
 import type { FaceName, FontFaces, TextRun } from '../fonts.ts'
+import { type PairSetting, pairSetting } from './pair-setting.ts'
 
 export interface ShapedRun extends TextRun {
   /** In units of the font size. */
@@ -17,67 +17,44 @@ export interface Shaping {
   width(text: string, face: FaceName, size: number): number
 }
 
-/** Characters of figures in tables. */
-export const figureCharacters = '0123456789.\u2212'
-export const isFigure = /^[0-9.\u2212]+$/
+interface FaceCache {
+  readonly words: Map<string, readonly ShapedRun[]>
+  readonly pairs: PairSetting
+}
 
 export function shaping(fonts: FontFaces): Shaping {
-  const words = new Map<FaceName, Map<string, readonly ShapedRun[]>>()
-  const figures = new Map<FaceName, ReadonlyMap<string, number> | undefined>()
+  const faces = new Map<FaceName, FaceCache>()
 
-  function figureWidths(face: FaceName): ReadonlyMap<string, number> | undefined {
-    if (figures.has(face)) return figures.get(face)
-    const found = plainFigures(fonts, face)
-    figures.set(face, found)
-    return found
+  function cacheOf(face: FaceName): FaceCache {
+    const known = faces.get(face)
+    if (known !== undefined) return known
+    const made = { words: new Map<string, readonly ShapedRun[]>(), pairs: pairSetting(fonts, face) }
+    faces.set(face, made)
+    return made
   }
 
   function word(text: string, face: FaceName): readonly ShapedRun[] {
-    let known = words.get(face)
-    if (known === undefined) words.set(face, (known = new Map()))
-    const before = known.get(text)
-    if (before !== undefined) return before
-    if (isFigure.test(text)) {
-      const widths = figureWidths(face)
-      if (widths !== undefined) {
-        let width = 0
-        for (const character of text) width += widths.get(character) ?? 0
-        return [{ face, text, width }]
-      }
-    }
-    const made = fonts.runs(text, face).map((run): ShapedRun => ({ ...run, width: fonts.measure(run.text, run.face, 1) }))
-    known.set(text, made)
+    const { words, pairs } = cacheOf(face)
+    const known = words.get(text)
+    if (known !== undefined) return known
+    const plain = pairs.width(text)
+    const made = plain === undefined ? fonts.runs(text, face).map((run): ShapedRun => ({ ...run, width: fonts.measure(run.text, run.face, 1) })) : [{ face, text, width: plain }]
+    words.set(text, made)
     return made
   }
 
   return {
     fonts, word,
-    isWhole(text, face) {
-      return isFigure.test(text) ? figureWidths(face) !== undefined || word(text, face).every((run) => run.face === face) : [...text.matchAll(/[^ ]+| +/g)].every(([part]) => word(part, face).every((run) => run.face === face))
-    },
+    isWhole: (text, face) => wordsAndSpaces(text).every((part) => word(part, face).every((run) => run.face === face)),
     width(text, face, size) {
-      if (!text.includes(' ')) return sum(word(text, face)) * size
       let width = 0
-      for (const [part] of text.matchAll(/[^ ]+| +/g)) width += sum(word(part, face))
+      for (const part of wordsAndSpaces(text)) for (const run of word(part, face)) width += run.width
       return width * size
     },
   }
 }
 
-function sum(runs: readonly ShapedRun[]): number {
-  let width = 0
-  for (const run of runs) width += run.width
-  return width
-}
-
-/** Widths of the figures, if every pair of them stands at its own widths; else undefined. */
-export function plainFigures(fonts: FontFaces, face: FaceName): ReadonlyMap<string, number> | undefined {
-  const characters = [...figureCharacters]
-  if (fonts.missing(figureCharacters, face).length > 0 || fonts.runs(figureCharacters, face).some((run) => run.face !== face)) return undefined
-  const widths = new Map(characters.map((character) => [character, fonts.measure(character, face, 1)]))
-  // Every ordered pair follows somewhere in this text.
-  const pairs = characters.map((first) => characters.map((second) => first + second).join('')).join('')
-  const together = fonts.measure(pairs, face, 1)
-  const apart = [...pairs].reduce((total, character) => total + (widths.get(character) ?? 0), 0)
-  return Math.abs(together - apart) < 1e-9 ? widths : undefined
+/** Words and spaces are measured and drawn apart, so that both agree. */
+export function wordsAndSpaces(text: string): readonly string[] {
+  return text.includes(' ') ? (text.match(/[^ ]+| +/g) ?? []) : text === '' ? [] : [text]
 }
