@@ -14,6 +14,8 @@ import type { StudyDefinition } from './definition/study.ts'
 import { diagnostic, type Diagnostic } from './diagnostics/diagnostic.ts'
 import { hasErrors } from './diagnostics/stage-result.ts'
 import { present } from './present/index.ts'
+import { templateProblems } from './present/template-problems.ts'
+import { parseTemplate } from './present/template.ts'
 import type { ReportDocument } from './present/document.ts'
 
 export interface ReadFile {
@@ -36,13 +38,18 @@ export interface World {
 export interface Checked {
   readonly study: StudyDefinition | undefined
   readonly record: StudyRecord | undefined
-  /** Canonical JSON of the record and its SHA-256. */
-  readonly recordText: string | undefined
-  readonly digest: string | undefined
-  readonly document: ReportDocument | undefined
   readonly diagnostics: readonly Diagnostic[]
   /** Every byte read, study first. */
   readonly files: readonly (ReadFile & { readonly role: InputFile['role'] })[]
+  /** Told by the report command only: a check needs no document. There exactly when nothing is wrong. */
+  readonly tell?: () => Told
+}
+
+export interface Told {
+  /** Canonical JSON of the record and its SHA-256. */
+  readonly recordText: string
+  readonly digest: string
+  readonly document: ReportDocument
 }
 
 /** Reads everything and says everything; writes nothing. `record` is there exactly when there is no error before the report. */
@@ -50,7 +57,7 @@ export function check(studyFile: ReadFile, world: World): Checked {
   const files: (ReadFile & { readonly role: InputFile['role'] })[] = [{ ...studyFile, role: 'study' }]
   const definition = readDefinition({ file: studyFile.path, text: decoded(studyFile.bytes) }, catalogue)
   const noticed: Diagnostic[] = [...definition.diagnostics]
-  const nothing = { study: definition.value, record: undefined, recordText: undefined, digest: undefined, document: undefined, files }
+  const nothing = { study: definition.value, record: undefined, files }
   const study = definition.value
   if (study === undefined) return { ...nothing, diagnostics: noticed }
 
@@ -72,11 +79,17 @@ export function check(studyFile: ReadFile, world: World): Checked {
   const record = assessed.value
   if (record === undefined || template === undefined) return { ...nothing, diagnostics: noticed }
 
-  const recordText = canonicalJson(record)
-  const digest = sha256(recordText)
-  const told = present({ record, digest, template: { file: template.path, text: decoded(template.bytes) } }, catalogue)
-  noticed.push(...told.diagnostics)
-  return { study, record, recordText, digest, document: told.value, diagnostics: noticed, files }
+  const parts = parseTemplate({ file: template.path, text: decoded(template.bytes) })
+  noticed.push(...templateProblems(parts, record.study))
+  if (hasErrors(noticed)) return { study, record, diagnostics: noticed, files }
+  return {
+    study, record, diagnostics: noticed, files,
+    tell() {
+      const recordText = canonicalJson(record)
+      const digest = sha256(recordText)
+      return { recordText, digest, document: present({ record, digest, parts }, catalogue) }
+    },
+  }
 }
 
 /** UTF-8 with or without byte order mark; a study in another encoding shows as characters that YAML refuses. */

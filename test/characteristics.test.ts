@@ -64,8 +64,8 @@ describe.each(cases)('$characteristic: $name', ({ characteristic, folder }) => {
 
   if (existsSync(join(folder, 'section.md')) || (expected.findings ?? []).length > 0) {
     test('reads as approved', () => {
-      if (checked.document === undefined) throw new Error('no document')
-      expectApproved(join(folder, 'section.md'), sectionOf(checked.document, characteristic))
+      if (checked.tell === undefined) throw new Error('no document')
+      expectApproved(join(folder, 'section.md'), sectionOf(checked.tell().document, characteristic))
     })
   }
 })

@@ -25,8 +25,8 @@ function checked(study: GeneratedStudy, replaced?: ReadonlyMap<string, string>):
 }
 
 function complete(result: Checked): { readonly record: StudyRecord; readonly document: ReportDocument } {
-  if (result.record === undefined || result.document === undefined) throw new Error(result.diagnostics.map((each) => `${each.code} ${each.message} ${each.place?.file}:${each.place?.line}`).join('\n'))
-  return { record: result.record, document: result.document }
+  if (result.record === undefined || result.tell === undefined) throw new Error(result.diagnostics.map((each) => `${each.code} ${each.message} ${each.place?.file}:${each.place?.line}`).join('\n'))
+  return { record: result.record, document: result.tell().document }
 }
 
 /** Every number and every text anywhere in the record. */

@@ -26,7 +26,7 @@ export function assess(request: AssessRequest, catalogue: readonly AssessableCha
   const ran = runBlocks({ ...run, putBackExcluded: false, measurands: study.measurands })
   const touched = new Set(datasets.flatMap((dataset) => dataset.observations.filter((each) => each.excluded !== undefined).map((each) => each.measurand)))
   const affected = study.measurands.filter((measurand) => touched.has(measurand.id))
-  const putBack = affected.length === 0 ? [] : runBlocks({ ...run, putBackExcluded: true, measurands: affected })
+  const putBack = affected.length === 0 ? [] : runBlocks({ ...run, putBackExcluded: true, measurands: affected, inForce: ran })
   const diagnostics = withoutRepeats(ran.flatMap((each) => each.diagnostics))
   if (hasErrors(diagnostics)) return { value: undefined, diagnostics }
   const verdicts = ran.flatMap((each) => each.verdicts)

@@ -25,6 +25,8 @@ export interface RanBlock {
   readonly notEvaluable: readonly NotEvaluable[]
   readonly design: Readonly<Record<string, number>>
   readonly diagnostics: readonly Diagnostic[]
+  /** What it read: datasets, and blocks before it whose outcome it could see. */
+  readonly read: { readonly datasets: ReadonlySet<string>; readonly blocks: ReadonlySet<string> }
 }
 
 export interface RunRequest {
@@ -33,6 +35,8 @@ export interface RunRequest {
   readonly catalogue: readonly AssessableCharacteristic[]
   /** Runs as if nothing had been excluded. */
   readonly putBackExcluded: boolean
+  /** The same with the exclusions in force: what no excluded row reaches is taken from here. */
+  readonly inForce?: readonly RanBlock[]
   readonly measurands: readonly Measurand[]
 }
 
@@ -66,14 +70,23 @@ function runMeasurand(request: RunRequest, measurand: Measurand, ordered: readon
   for (const block of ordered) {
     const part = request.catalogue.find((each) => each.id === block.characteristic)
     if (part === undefined) throw new Error(`no characteristic ${block.characteristic} in the catalogue`)
-    if (block.measurands.includes(measurand.id)) ran.push(runBlock(request, measurand, block, part, ran))
+    if (!block.measurands.includes(measurand.id)) continue
+    const before = request.inForce?.find((each) => each.block.id === block.id && each.measurand === measurand.id)
+    ran.push(before !== undefined && isOutOfReach(before, request, ran) ? before : runBlock(request, measurand, block, part, ran))
   }
   return ran
 }
 
+/** No excluded row in what it read, and every block before it came out the same. */
+function isOutOfReach(before: RanBlock, { datasets, inForce = [] }: RunRequest, ran: readonly RanBlock[]): boolean {
+  const touched = (name: string): boolean => datasets.some((dataset) => dataset.name === name && dataset.observations.some((each) => each.excluded !== undefined && each.measurand === before.measurand))
+  return ![...before.read.datasets].some(touched) && [...before.read.blocks].every((id) => ran.some((each) => each.block.id === id && inForce.includes(each)))
+}
+
 function runBlock(request: RunRequest, measurand: Measurand, block: Block, part: AssessableCharacteristic, earlier: readonly RanBlock[]): RanBlock {
   const noticed: Diagnostic[] = []
-  const output = part.assess({ block, measurand, confidence: request.study.rules.confidence, ...dataAccess(request, measurand, block, earlier, noticed) })
+  const read = { datasets: new Set<string>(), blocks: new Set<string>() }
+  const output = part.assess({ block, measurand, confidence: request.study.rules.confidence, ...dataAccess(request, measurand, block, earlier, noticed, read) })
   const findings = output.findings.map((draft): Finding => {
     const metric = part.metrics[draft.metric]
     if (metric === undefined) throw new Error(`${part.id} reported the metric ${draft.metric}, which it does not declare`)
@@ -86,7 +99,7 @@ function runBlock(request: RunRequest, measurand: Measurand, block: Block, part:
   const verdicts = judgeAll(request.study, block, measurand, part, findings, output.notEvaluable, output.detail === undefined)
   return {
     block, measurand: measurand.id, title: part.title, detail: output.detail, findings, verdicts, notEvaluable: output.notEvaluable,
-    design: output.design, diagnostics: [...noticed, ...output.diagnostics],
+    design: output.design, diagnostics: [...noticed, ...output.diagnostics], read,
   }
 }
 
@@ -114,12 +127,15 @@ function judgeAll(
 
 type DataAccess = Pick<AssessInput<unknown>, 'responses' | 'results' | 'observations' | 'prior'>
 
-function dataAccess(request: RunRequest, measurand: Measurand, block: Block, earlier: readonly RanBlock[], noticed: Diagnostic[]): DataAccess {
+function dataAccess(
+  request: RunRequest, measurand: Measurand, block: Block, earlier: readonly RanBlock[], noticed: Diagnostic[], read: { readonly datasets: Set<string>; readonly blocks: Set<string> },
+): DataAccess {
   const { study, datasets, catalogue, putBackExcluded } = request
   // That a named dataset exists is settled when the study is read.
   const find = (name: string): { readonly dataset: Dataset; readonly source: DatasetSource } => {
     const dataset = datasets.find((each) => each.name === name)
     const source = study.datasets.find((each) => each.name === name)
+    read.datasets.add(name)
     if (dataset === undefined || source === undefined) throw new Error(`${block.id} reads the dataset ${name}, which the study does not declare`)
     return { dataset, source }
   }
@@ -138,10 +154,11 @@ function dataAccess(request: RunRequest, measurand: Measurand, block: Block, ear
     },
     results(name) {
       const found = find(name)
-      const calibrations = earlier.flatMap((ran): readonly Calibration[] => {
+      const calibrations = !found.dataset.fields.includes('response') ? [] : earlier.flatMap((ran): readonly Calibration[] => {
         const part = catalogue.find((each) => each.id === ran.block.characteristic)
         if (part?.invert === undefined || ran.detail === undefined) return []
         const { detail } = ran
+        read.blocks.add(ran.block.id)
         return [{ block: ran.block.id, name: ran.block.name, invert: (response) => part.invert?.(detail, response) ?? { outside: 'below' } }]
       })
       const blank = found.source.subtractBlank === undefined ? undefined : find(found.source.subtractBlank.value)
@@ -152,8 +169,9 @@ function dataAccess(request: RunRequest, measurand: Measurand, block: Block, ear
       return find(name).dataset.observations.filter((each) => each.measurand === measurand.id && (putBackExcluded || each.excluded === undefined))
     },
     prior(characteristic) {
-      return earlier.filter((ran) => ran.block.characteristic === characteristic)
-        .map((ran): PriorAssessment => ({ block: ran.block.id, detail: ran.detail, findings: ran.findings, verdicts: ran.verdicts }))
+      const before = earlier.filter((ran) => ran.block.characteristic === characteristic)
+      for (const ran of before) read.blocks.add(ran.block.id)
+      return before.map((ran): PriorAssessment => ({ block: ran.block.id, detail: ran.detail, findings: ran.findings, verdicts: ran.verdicts }))
     },
   }
 }

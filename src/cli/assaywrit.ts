@@ -4,7 +4,6 @@ import { catalogue } from '../characteristics/index.ts'
 import { studySchema } from '../definition/schema.ts'
 import type { Diagnostic } from '../diagnostics/diagnostic.ts'
 import { diagnosticsAsJson, printDiagnostics } from '../diagnostics/print.ts'
-import { hasErrors } from '../diagnostics/stage-result.ts'
 import { commandHelp, type Command, generalHelp, readArguments } from './arguments.ts'
 import { checkStudy } from './check-command.ts'
 import { type ExitCode, exitCodes } from './outcome.ts'
@@ -57,7 +56,7 @@ async function studies(command: Command & { readonly command: 'check' | 'report'
 async function oneStudy(study: string, command: Command & { readonly command: 'check' | 'report' }): Promise<StudyOutcome> {
   progress(`reading ${study}`)
   const { checked, diagnostics, sources } = checkStudy(study)
-  const failed = checked?.record === undefined || checked.document === undefined || hasErrors(diagnostics)
+  const failed = checked?.record === undefined || checked.tell === undefined
   const overall = failed ? undefined : checked.record.overall.verdict
   if (failed || checked === undefined || command.command === 'check') {
     progress()

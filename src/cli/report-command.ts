@@ -3,7 +3,6 @@ import { existsSync, readFileSync } from 'node:fs'
 import { basename, dirname, join, resolve } from 'node:path'
 import { sha256 } from '../assess/digest.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
-import { hasErrors } from '../diagnostics/stage-result.ts'
 import type { Checked } from '../pipeline.ts'
 import { contentFiles, inputPath, manifestText } from './dossier-files.ts'
 import { DossierRefused, type DossierPlace, dossierPath, replaceDossier, underLock } from './dossier-folder.ts'
@@ -17,10 +16,9 @@ export interface Reported {
 }
 
 export async function writeReport(studyPath: string, checked: Checked, out: string | undefined, progress: (step: string) => void): Promise<Reported> {
-  const { record, recordText, digest, document } = checked
-  if (record === undefined || recordText === undefined || digest === undefined || document === undefined || hasErrors(checked.diagnostics)) {
-    return { diagnostics: [], dossier: undefined, diskRefused: false }
-  }
+  const { record, tell } = checked
+  if (record === undefined || tell === undefined) return { diagnostics: [], dossier: undefined, diskRefused: false }
+  const { recordText, digest, document } = tell()
   progress('drawing charts and pages')
   const [{ publish }, { MissingGlyph }, { readAssets }] = await Promise.all([import('../publish/index.ts'), import('../publish/fonts.ts'), import('./assets.ts')])
   const encoder = new TextEncoder()
