@@ -60,11 +60,11 @@ test('draws the same bytes again, in another order', async () => {
   for (const { kind, name, path } of [...cases].reverse()) expect(await picture(kind, name, path)).toBe(forwards.get(path))
 })
 
-test('two charts of one kind with the same titles share a specification', () => {
-  const titles = { xTitle: 'Level (mg/L)', yTitle: 'Response' }
-  const few = chartKinds['response']?.({ ...titles, points: [{ x: 1, y: 2 }, { x: 2, y: 4.1 }], excluded: [], line: [] })
-  const many = chartKinds['response']?.({ ...titles, points: [1, 2, 3, 4].map((x) => ({ x, y: 5 * x, series: `day ${x}` })), excluded: [{ x: 2, y: 30, label: 'E1' }], line: [{ x: 1, y: 5 }, { x: 4, y: 20 }] })
+test('charts of one kind share a specification, whatever their titles, series and exclusions', () => {
+  const few = chartKinds['response']?.({ xTitle: 'Level (mg/L)', yTitle: 'Response', points: [{ x: 1, y: 2 }, { x: 2, y: 4.1 }], excluded: [], line: [] })
+  const many = chartKinds['response']?.({ xTitle: 'Other level (µg/L)', yTitle: 'Area', points: [1, 2, 3, 4].map((x) => ({ x, y: 5 * x, series: `day ${x}` })), excluded: [{ x: 2, y: 30, label: 'E1' }], line: [{ x: 1, y: 5 }, { x: 4, y: 20 }] })
   expect(JSON.stringify(few?.specification)).toBe(JSON.stringify(many?.specification))
+  for (const { kind, path } of cases) expect(JSON.stringify(chartOf(kind, inputOf(path)).specification), kind).not.toMatch(/"title":"/)
 })
 
 test('refuses a point without a place', async () => {

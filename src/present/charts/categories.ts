@@ -1,5 +1,6 @@
 // Names of categories along an axis: wrapped or turned so that all of them can be read, and values of one category spread
 // sideways so that none hides another.
+import { belowLabels } from './axis-titles.ts'
 import type { ChartWidth } from './chart-input.ts'
 import type { Fragment } from './layers.ts'
 import { estimatedWidth, wrapped as wrap } from './label-placement.ts'
@@ -13,6 +14,8 @@ export interface CategoryNames {
   readonly axis: Fragment
   /** Width of the widest line. */
   readonly width: number
+  /** Baseline of a title below them, under the foot of the plot. */
+  readonly below: number
 }
 
 /** Names below a plot: wrapped where the words fit into their band, else turned. */
@@ -20,18 +23,23 @@ export function namesBelow(names: readonly string[], plotWidth: number): Categor
   const band = plotWidth / Math.max(1, names.length)
   const wrapped = new Map(names.map((name) => [name, wrap(name, band - 5)]))
   const fits = [...wrapped.values()].every((lines) => lines.length <= 3 && lines.every((line) => estimatedWidth(line) <= band - 3))
-  const turned = band < lineGap * 1.6 ? { labelAngle: -90, labelBaseline: 'middle', labelOverlap: 'greedy' } : { labelAngle: -45, labelBaseline: 'top', labelOverlap: false }
-  return names.length > 0 && fits
-    ? { shown: joined(wrapped), axis: { labelAngle: 0, labelOverlap: false, ...brokenLines }, width: band }
-    : { shown: joined(new Map(names.map((name) => [name, wrap(name, 110)]))), axis: { ...turned, labelAlign: 'right', ...brokenLines }, width: band }
+  if (fits) {
+    const lines = Math.max(1, ...[...wrapped.values()].map((each) => each.length))
+    return { shown: joined(wrapped), axis: { labelAngle: 0, labelOverlap: false, ...brokenLines }, width: band, below: belowLabels + (lines - 1) * lineGap }
+  }
+  const long = new Map(names.map((name) => [name, wrap(name, 110)]))
+  const width = widestOf(long)
+  const lines = Math.max(...[...long.values()].map((each) => each.length))
+  return band < lineGap * 1.6
+    ? { shown: joined(long), axis: { labelAngle: -90, labelBaseline: 'middle', labelOverlap: 'greedy', labelAlign: 'right', ...brokenLines }, width, below: width + 18 }
+    : { shown: joined(long), axis: { labelAngle: -45, labelBaseline: 'top', labelOverlap: false, labelAlign: 'right', ...brokenLines }, width, below: (width + lines * lineGap) * Math.SQRT1_2 + 18 }
 }
 
 /** Names to the left of a plot, wrapped so that the larger part is left to the plot. */
 export function namesBeside(names: readonly string[], chart: ChartWidth = 'full'): CategoryNames {
   const widest = chart === 'full' ? 150 : 78
   const wrapped = new Map(names.map((name) => [name, wrap(name, widest)]))
-  const width = Math.max(0, ...[...wrapped.values()].flat().map((line) => estimatedWidth(line)))
-  return { shown: joined(wrapped), axis: { labelOverlap: false, ...brokenLines }, width }
+  return { shown: joined(wrapped), axis: { labelOverlap: false, ...brokenLines }, width: widestOf(wrapped), below: belowLabels }
 }
 
 /** Room to the left of a plot, in coarse steps so that charts of one kind share a specification. */
@@ -48,6 +56,10 @@ export function namesInOrder(...lists: readonly (readonly string[])[]): readonly
 }
 
 const brokenLines: Fragment = { labelExpr: "split(datum.label, '\\n')", labelLineHeight: lineGap }
+
+function widestOf(names: ReadonlyMap<string, readonly string[]>): number {
+  return Math.max(0, ...[...names.values()].flat().map((line) => estimatedWidth(line)))
+}
 
 function joined(wrapped: ReadonlyMap<string, readonly string[]>): ReadonlyMap<string, string> {
   return new Map([...wrapped].map(([name, lines]) => [name, lines.join('\n')]))

@@ -1,6 +1,7 @@
 // Components (of variance, of uncertainty, of an effect) as horizontal bars from zero, with their intervals.
 import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { linesOf, namesBeside, roomBeside } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
@@ -21,7 +22,8 @@ export function componentBarsChart(input: ComponentBarsChartInput): Chart {
   const shown = bars.map((bar) => ({ ...bar, component: names.shown.get(bar.component) ?? bar.component }))
   const y = category('component')
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span, { grid: true }), nameChannel('component', { title: null, grid: false, ...names.axis })),
+    spanLayer(valueChannel('x', 'value', frame, span, { grid: true }), nameChannel('component', { grid: false, ...names.axis })),
+    titleLayer(),
     { data: { name: 'bars' }, mark: { type: 'bar', height: 10, fill: inks.bar, stroke: inks.data, strokeWidth: 0.7 }, encoding: { x: { ...field('value'), stack: null }, x2: { datum: 0 }, y } },
     ...capped('intervals', { channel: 'x', across: { ...y, bandPosition: 0.5 } }),
     { data: { values: [{ zero: 0 }] }, mark: zeroMark, encoding: { x: field('zero') } },
@@ -29,6 +31,7 @@ export function componentBarsChart(input: ComponentBarsChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle }),
       span: shown.flatMap(({ component }) => [span.low, span.high].map((value) => ({ component, value }))),
       bars: rowsOf(shown), intervals: rowsOf(shown.filter((bar) => bar.low !== undefined && bar.high !== undefined)),
     },

@@ -2,10 +2,11 @@
 // the values span more than two decades.
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
+import { belowTitle, titleLayer, titleRows } from './axis-titles.ts'
 import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame, seriesInks } from './house-style.ts'
-import { footOfAxis, keyLayers, keyRows, seriesEncoding } from './key.ts'
+import { keyLayers, keyRows, seriesEncoding } from './key.ts'
 import { category, field, nameChannel, pointMark, rowsOf, spanLayer, ticksAcross, valueChannel, yOffset } from './layers.ts'
 import { uprightLineData, uprightLineLayers } from './upright-lines.ts'
 
@@ -37,13 +38,14 @@ export function definitionsChart(input: DefinitionsChartInput): Chart {
   const kind = { ...seriesEncoding, fill: { condition: { test: '!datum.governing', value: inks.paper }, ...category('series'), scale: { range: seriesInks }, legend: null } }
   const mark = { ...pointMark, strokeWidth: 1.1, fillOpacity: 1 }
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('label', { title: null, grid: true, ...names.axis })),
+    spanLayer(valueChannel('x', 'value', frame, span), nameChannel('label', { grid: true, ...names.axis })),
+    titleLayer(),
     ...uprightLineLayers(),
     { data: { name: 'items' }, mark: { ...mark, size: 46 }, encoding: { x: field('value'), y, yOffset, ...kind } },
     ...keyLayers(kind, { ...mark, size: 36 }),
   ], { height: { step: rowHeight } })
   return {
     specification,
-    data: { span: labels.flatMap((label) => [span.low, span.high].map((value) => ({ label: shown(label), value }))), items: rowsOf(marks), key: keyRows(kinds, frame, footOfAxis), ...uprightLineData(lines, span, frame) },
+    data: { titles: titleRows(frame, { x: input.xTitle }), span: labels.flatMap((label) => [span.low, span.high].map((value) => ({ label: shown(label), value }))), items: rowsOf(marks), key: keyRows(kinds, frame, belowTitle(input.xTitle, frame)), ...uprightLineData(lines, span, frame) },
   }
 }

@@ -1,6 +1,7 @@
 // Deviations from what was expected (residuals, errors of back-calculated levels) against the level, about a zero line.
 import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import type { ChartWidth, LabelledPoint, LabelledValue, SeriesPoint } from './chart-input.ts'
 import { chartSpecification, plotFrame } from './house-style.ts'
 import { keyLayers, keyRows, seriesEncoding, seriesOf, withSeries } from './key.ts'
@@ -29,11 +30,12 @@ export function deviationChart(input: DeviationChartInput): Chart {
   const names = seriesOf(points)
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
+    spanLayer(valueChannel('x', 'x', frame, spans.x), valueChannel('y', 'y', frame, spans.y)),
+    titleLayer(),
     { data: { values: [{ zero: 0 }] }, mark: zeroMark, encoding: { y: field('zero') } },
     ...limitLayers(field('value')),
     { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
     ...excludedLayers(x, y), ...keyLayers(),
   ])
-  return { specification, data: { span: spanRows(spans.x, spans.y), limits: rowsOf(limits), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), ...placedLabels(frame, spans, { points, excluded, limits }) } }
+  return { specification, data: { titles: titleRows(frame, { x: input.xTitle, y: input.yTitle }), span: spanRows(spans.x, spans.y), limits: rowsOf(limits), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), ...placedLabels(frame, spans, { points, excluded, limits }) } }
 }

@@ -1,6 +1,7 @@
 // Differences (or effects) with their intervals against a margin: whether the whole interval lies inside is seen at a glance.
 import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { linesOf, namesBeside, roomBeside } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
@@ -27,7 +28,8 @@ export function differenceChart(input: DifferenceChartInput): Chart {
   const y = category('label')
   const specification = chartSpecification(frame, [
     { data: { name: 'margins' }, mark: { type: 'rect', color: inks.window, opacity: 1 }, encoding: { x: field('low'), x2: { field: 'high' } } },
-    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('label', { title: null, grid: false, ...names.axis })),
+    spanLayer(valueChannel('x', 'value', frame, span), nameChannel('label', { grid: false, ...names.axis })),
+    titleLayer(),
     { data: { name: 'zero' }, mark: zeroMark, encoding: { x: field('value') } },
     ...uprightLineLayers(),
     ...capped('items', { channel: 'x', across: { ...y, bandPosition: 0.5 } }),
@@ -36,6 +38,7 @@ export function differenceChart(input: DifferenceChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle }),
       span: shown.flatMap(({ label }) => [span.low, span.high].map((value) => ({ label, value }))),
       margins: margins === undefined ? [] : rowsOf([margins]), zero: zero === true ? [{ value: 0 }] : [], items: rowsOf(shown),
       lines: margins === undefined ? [] : [{ value: margins.low }, { value: margins.high }],

@@ -1,6 +1,7 @@
 // Density curves that the caller computed, told apart by line style and named at their tops, with the values that divide them.
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { namesInOrder } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame, seriesDashes, seriesInks } from './house-style.ts'
@@ -34,7 +35,8 @@ export function distributionsChart(input: DistributionsChartInput): Chart {
   const names = namesInOrder(curves.map((curve) => curve.name))
   const series = { field: 'name', type: 'nominal', sort: null, legend: null }
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', 'Density', frame, spans.y, { labels: false, grid: false, minExtent: 4, maxExtent: 4 })),
+    spanLayer(valueChannel('x', 'x', frame, spans.x), valueChannel('y', 'y', frame, spans.y, { labels: false, grid: false })),
+    titleLayer(),
     { data: { name: 'curves' }, mark: { type: 'area', opacity: 1, fillOpacity: 0.14, line: false }, encoding: { x, y: { ...y, stack: null }, fill: { ...series, scale: { range: seriesInks } } } },
     ...uprightLineLayers(),
     { data: { name: 'curves' }, mark: { type: 'line', strokeWidth: 1.1 }, encoding: { x, y, stroke: { ...series, scale: { range: seriesInks } }, strokeDash: { ...series, scale: { range: seriesDashes } } } },
@@ -43,6 +45,7 @@ export function distributionsChart(input: DistributionsChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle, y: 'Density' }),
       span: spanRows(spans.x, spans.y), ...uprightLineData(lines, spans.x, frame),
       curves: names.flatMap((name) => curves.filter((curve) => curve.name === name).flatMap((curve) => curve.points.map((point) => ({ ...point, name })))),
       names: tops.map((top, index) => ({ ...top, label: top.name, ...placed[index] })),

@@ -1,6 +1,7 @@
 // Every single value on one axis, a row a group; values known only as below or above a bound are arrows, never dots.
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { arrowAbove, arrowBelow, chartSpecification, inks, plotFrame } from './house-style.ts'
@@ -33,7 +34,8 @@ export function dotPlotChart(input: DotPlotChartInput): Chart {
   const y = category('group')
   const arrow = { type: 'point', filled: false, size: 90, stroke: inks.data, strokeWidth: 1, opacity: 1 }
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'value', input.xTitle, frame, span), nameChannel('group', { title: null, grid: true, ...names.axis })),
+    spanLayer(valueChannel('x', 'value', frame, span), nameChannel('group', { grid: true, ...names.axis })),
+    titleLayer(),
     ...uprightLineLayers(),
     { data: { name: 'dots' }, mark: pointMark, encoding: { x: field('value'), y, yOffset } },
     { data: { name: 'below' }, mark: { ...arrow, shape: arrowBelow }, encoding: { x: field('bound'), y, yOffset } },
@@ -42,6 +44,7 @@ export function dotPlotChart(input: DotPlotChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle }),
       span: groups.flatMap((group) => [span.low, span.high].map((value) => ({ group: shown(group), value }))),
       ...uprightLineData(lines, span, frame),
       dots: marks.filter((each) => 'value' in each), below: marks.filter((each) => 'direction' in each && each.direction === 'below'), above: marks.filter((each) => 'direction' in each && each.direction === 'above'),

@@ -3,12 +3,13 @@
 // (`down`, in points), since separate plots would cost several times the work.
 import type { Chart } from '../document.ts'
 import { axisDomain, axisTicks, positionOn } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame, textSize, titleSize, type PlotFrame } from './house-style.ts'
 import { keyData, keyLayers, meanKeyLayers, seriesEncoding, seriesOf } from './key.ts'
 import { aroundPoint, placeLabels } from './label-placement.ts'
-import { category, excludedMark, labelLayer, limitMark, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, ticksUp, titleLines, xOffset, type Rows } from './layers.ts'
+import { category, excludedMark, labelLayer, limitMark, limitRequests, meanMark, nameChannel, pointBox, pointMark, rowsOf, ticksUp, xOffset, type Rows } from './layers.ts'
 
 export interface GroupedValuesChartInput {
   readonly groupTitle: string
@@ -32,14 +33,16 @@ export function groupedValuesChart(input: GroupedValuesChartInput): Chart {
   const shown = (group: string): string => names.shown.get(group) ?? group
   const layout: Layout = { frame, groups, shown, series }
   const parts = panels.map((panel, index) => panelRows(input, panel, index * (frame.plotHeight + panelGap), layout))
+  const whole = { ...frame, plotHeight: panels.length * frame.plotHeight + (panels.length - 1) * panelGap }
   const key = keyData(series, means.length === 0 ? 'none' : 'mean', frame)
   const raised = (rows: Rows): Rows => (panels.length > 1 ? rows.map((row) => ({ ...row, down: Number(row['down']) - 14 })) : rows)
   return {
-    specification: specification({ ...frame, plotHeight: panels.length * frame.plotHeight + (panels.length - 1) * panelGap }, input.groupTitle, names.axis),
+    specification: specification(whole, names.axis),
     data: {
       span: groups.map((group) => ({ group: shown(group) })),
       ...Object.fromEntries(partNames.map((name) => [name, parts.flatMap((part): Rows => part[name])])),
-      panels: panels.map((panel, index) => ({ name: panel, title: titleLines(input.yTitle, frame.plotHeight + 16), down: index * (frame.plotHeight + panelGap), middle: index * (frame.plotHeight + panelGap) + frame.plotHeight / 2 })),
+      titles: [...titleRows(whole, { x: input.groupTitle, below: names.below }), ...panels.flatMap((_, index) => titleRows(frame, { y: input.yTitle, top: index * (frame.plotHeight + panelGap) }))],
+      panels: panels.map((panel, index) => ({ name: panel, down: index * (frame.plotHeight + panelGap) })),
       key: raised(key.key), meanKey: raised(key.meanKey), intervalKey: [],
     },
   }
@@ -53,16 +56,16 @@ function panelHeight(panels: number): number {
   return Math.max(36, Math.min(104, Math.floor(600 / panels) - panelGap))
 }
 
-function specification(frame: PlotFrame, groupTitle: string, groupAxis: Readonly<Record<string, unknown>>): Chart['specification'] {
+function specification(frame: PlotFrame, groupAxis: Readonly<Record<string, unknown>>): Chart['specification'] {
   const x = category('group')
   const y = { field: 'down', type: 'quantitative', scale: null, axis: null }
   const text = (color: string, mark: Readonly<Record<string, unknown>>): Readonly<Record<string, unknown>> => ({ type: 'text', color, fontSize: textSize, ...mark })
   return chartSpecification(frame, [
-    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: nameChannel('group', { title: groupTitle, ...groupAxis }) } },
+    { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x: nameChannel('group', groupAxis) } },
     { data: { name: 'ticks' }, mark: { type: 'rule', color: inks.grid, strokeWidth: 0.5 }, encoding: { y } },
     { data: { name: 'ticks' }, mark: text(inks.quiet, { align: 'right', baseline: 'middle', x: -5 }), encoding: { y, text: { field: 'text', type: 'nominal' } } },
     { data: { name: 'panels' }, mark: text(inks.text, { align: 'left', baseline: 'alphabetic', fontWeight: 'bold', fontSize: titleSize, x: 0, dy: -6 }), encoding: { y, text: { field: 'name', type: 'nominal' } } },
-    { data: { name: 'panels' }, mark: text(inks.text, { align: 'center', baseline: 'line-bottom', angle: 270, fontSize: titleSize, x: 18 - frame.left, y: { expr: 'datum.middle' } }), encoding: { text: { field: 'title', type: 'nominal' } } },
+    titleLayer(),
     { data: { name: 'overall' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.8 }, encoding: { y } },
     { data: { name: 'limits' }, mark: limitMark, encoding: { y } },
     { data: { name: 'means' }, mark: meanMark, encoding: { x: { ...x, bandPosition: 0.2 }, x2: { field: 'group', bandPosition: 0.8 }, y } },

@@ -1,6 +1,7 @@
 // Verdicts of many rows by column as tiles with a mark and a tone, so that the few that need attention stand out; the mark alone
 // says the verdict in a grey print.
 import type { Chart } from '../document.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { lineGap, linesOf, namesBeside, namesBelow, namesInOrder, roomBeside } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
@@ -40,14 +41,14 @@ export function heatTable(input: HeatTableInput): Chart {
     stroke: { field: 'word', type: 'nominal', scale: { domain: words, range: verdicts.map((verdict) => verdict.ink) }, legend: null },
   }
   const specification = chartSpecification(frame, [
-    { data: { name: 'cells' }, mark: { type: 'rect', stroke: inks.paper, strokeWidth: 1.5, opacity: 1 }, encoding: { x: nameChannel('column', { title: null, orient: 'top', domain: false, ticks: false, ...above.axis, labelPadding: 3 + (linesOf(above) - 1) * lineGap }), y: nameChannel('row', { title: input.rowTitle, grid: false, ...beside.axis }), fill: tone } },
+    { data: { name: 'cells' }, mark: { type: 'rect', stroke: inks.paper, strokeWidth: 1.5, opacity: 1 }, encoding: { x: nameChannel('column', { orient: 'top', domain: false, ticks: false, ...above.axis, labelPadding: 3 + (linesOf(above) - 1) * lineGap }), y: nameChannel('row', { grid: false, ...beside.axis }), fill: tone } },
     { data: { name: 'cells' }, mark: { type: 'point', filled: false, size: tall > 12 ? 48 : 36, strokeWidth: 1.2, opacity: 1 }, encoding: { x, y, ...mark } },
-    ...keyLayers({ fill: tone }, { shape: 'square', size: 110, strokeWidth: 0, fillOpacity: 1 }), ...keyLayers(mark, { filled: false, fill: null, size: 36, strokeWidth: 1.1 }).slice(0, 1),
+    titleLayer(), ...keyLayers({ fill: tone }, { shape: 'square', size: 110, strokeWidth: 0, fillOpacity: 1 }), ...keyLayers(mark, { filled: false, fill: null, size: 36, strokeWidth: 1.1 }).slice(0, 1),
   ], { height: { step: tall } })
   const lines = linesOf(above)
   const column = (name: string): string => {
     const shown = above.shown.get(name) ?? name
     return '\n'.repeat(lines - shown.split('\n').length) + shown
   }
-  return { specification, data: { cells: cells.map((cell) => ({ ...cell, row: beside.shown.get(cell.row) ?? cell.row, column: column(cell.column) })), key: keyRows(used, frame, 13).map((each) => ({ ...each, word: each['series'] })) } }
+  return { specification, data: { titles: titleRows(frame, { y: input.rowTitle }), cells: cells.map((cell) => ({ ...cell, row: beside.shown.get(cell.row) ?? cell.row, column: column(cell.column) })), key: keyRows(used, frame, 13).map((each) => ({ ...each, word: each['series'] })) } }
 }

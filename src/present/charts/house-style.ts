@@ -71,11 +71,10 @@ export const houseConfig = {
   mark: { invalid: 'show' },
   axis: {
     labelFont: font, labelFontSize: textSize, labelColor: inks.quiet, labelPadding: 3, labelLimit: 0, labelFlush: false, labelOverlap: 'greedy', labelSeparation: 4,
-    titleFont: font, titleFontSize: titleSize, titleFontWeight: 'normal', titleColor: inks.text, titleLimit: 0,
     domainColor: inks.axis, domainWidth: 0.6, tickColor: inks.axis, tickWidth: 0.6, tickSize: 3, gridColor: inks.grid, gridWidth: 0.5,
   },
-  axisX: { grid: false, titlePadding: 5 },
-  axisY: { grid: true, domain: false, ticks: false, titlePadding: 4 },
+  axisX: { grid: false },
+  axisY: { grid: true, domain: false, ticks: false },
   text: { font, fontSize: textSize, color: inks.text },
   point: { filled: true, size: pointSize, opacity: 1, strokeWidth: 0.9 },
 }

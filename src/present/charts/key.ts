@@ -71,9 +71,6 @@ export function keyPlaces(labels: readonly string[], frame: PlotFrame, foot?: nu
   })
 }
 
-/** Below the labels and the title of a horizontal axis. */
-export const footOfAxis = 36
-
 /** Sign, gap and room before the next entry. */
 const entryRoom = 24
 const rowGap = 11

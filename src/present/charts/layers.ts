@@ -3,8 +3,8 @@
 import type { AxisDomain } from './axis-domain.ts'
 import { positionOn, scaleOf } from './axis-domain.ts'
 import type { LabelledPoint, LabelledValue } from './chart-input.ts'
-import { inks, pointSize, textSize, ticksAlong, titleSize, valueLabels, type PlotFrame } from './house-style.ts'
-import { aroundPoint, alongLine, placeLabels, wrapped, type Box, type LabelRequest } from './label-placement.ts'
+import { inks, pointSize, textSize, ticksAlong, valueLabels, type PlotFrame } from './house-style.ts'
+import { aroundPoint, alongLine, placeLabels, type Box, type LabelRequest } from './label-placement.ts'
 
 export type Fragment = Readonly<Record<string, unknown>>
 export type Rows = readonly Readonly<Record<string, unknown>>[]
@@ -15,26 +15,25 @@ export function rowsOf<T extends object>(items: readonly T[]): Rows {
 }
 
 /** The encoding that bears an axis of numbers: field, scale and axis. The ends stand in the first two rows of the span. */
-export function valueChannel(channel: 'x' | 'y', name: string, title: string, frame: PlotFrame, domain: AxisDomain, more: Fragment = {}): Fragment {
+export function valueChannel(channel: 'x' | 'y', name: string, frame: PlotFrame, domain: AxisDomain, more: Fragment = {}): Fragment {
   const ends = { expr: `[data('span')[0].${name}, data('span')[1].${name}]` }
-  return { ...field(name), scale: { domain: ends, nice: false, ...(domain.logarithmic ? { type: 'log' } : { type: 'linear', zero: false }) }, axis: valueAxis(channel, title, frame, domain, more) }
+  return { ...field(name), scale: { domain: ends, nice: false, ...(domain.logarithmic ? { type: 'log' } : { type: 'linear', zero: false }) }, axis: valueAxis(channel, frame, domain, more) }
 }
 
 /** The encoding that bears an axis of names, in the order of the data. */
 export function nameChannel(name: string, axis: Fragment): Fragment {
-  return { ...category(name), scale: { type: 'band' }, axis }
+  return { ...category(name), scale: { type: 'band' }, axis: { title: null, ...axis } }
 }
 
 export function category(name: string): Fragment {
   return { field: name, type: 'nominal', sort: null }
 }
 
-function valueAxis(channel: 'x' | 'y', title: string, frame: PlotFrame, domain: AxisDomain, more: Fragment): Fragment {
+function valueAxis(channel: 'x' | 'y', frame: PlotFrame, domain: AxisDomain, more: Fragment): Fragment {
   const ticks = channel === 'x' ? ticksAcross(frame) : ticksUp(frame)
-  const lines = titleLines(title, channel === 'x' ? frame.plotWidth + 20 : frame.plotHeight + 16)
   return {
-    title: lines, labelExpr: valueLabels(scaleOf(domain)), ...(domain.logarithmic ? { gridOpacity: decadesOnly } : { tickCount: ticks }),
-    ...(channel === 'y' ? { minExtent: frame.left - 18, maxExtent: frame.left - 18 } : {}), ...more,
+    title: null, labelExpr: valueLabels(scaleOf(domain)), ...(domain.logarithmic ? { gridOpacity: decadesOnly } : { tickCount: ticks }),
+    ...more,
   }
 }
 
@@ -46,15 +45,9 @@ export function ticksUp(frame: PlotFrame): number {
   return ticksAlong(frame.plotHeight, 34)
 }
 
-/** A title longer than its axis goes on in a second line. */
-export function titleLines(title: string, length: number): string | readonly string[] {
-  const lines = wrapped(title, length, titleSize)
-  return lines.length > 1 ? lines : title
-}
-
 const decadesOnly: Fragment = { condition: { test: 'abs(log(datum.value) / LN10 - round(log(datum.value) / LN10)) < 1e-9', value: 1 }, value: 0 }
 
-/** Draws nothing: it stretches both axes over the spans chosen for them, and bears their titles. */
+/** Draws nothing: it stretches both axes over the spans chosen for them. */
 export function spanLayer(x: Fragment, y: Fragment): Fragment {
   return { data: { name: 'span' }, mark: { type: 'point', opacity: 0 }, encoding: { x, y } }
 }

@@ -2,6 +2,7 @@
 // their level, mean and interval to the right, so that neither hides the other.
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { namesBelow, namesInOrder, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
@@ -33,7 +34,7 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   const marks = [...points, ...excluded]
   const offsets = levels.reduce((found, level) => {
     const here = marks.flatMap((each, index) => (each.level === level ? [index] : []))
-    spread(here.map((index) => height(marks[index]?.value ?? 0)), band * 0.22).forEach((offset, place) => found.set(here[place] ?? 0, band * (means.length === 0 ? 0.5 : 0.38) + offset))
+    spread(here.map((index) => height(marks[index]?.value ?? 0)), band * 0.17).forEach((offset, place) => found.set(here[place] ?? 0, band * (means.length === 0 ? 0.5 : 0.34) + offset))
     return found
   }, new Map<number, number>())
   const at = (index: number, each: { readonly level: string; readonly value: number }): { readonly x: number; readonly y: number } => ({ x: levels.indexOf(each.level) * band + (offsets.get(index) ?? 0), y: height(each.value) })
@@ -47,7 +48,8 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   const x = category('level')
   const y = field('value')
   const specification = chartSpecification(frame, [
-    spanLayer(nameChannel('level', { title: input.xTitle, ...names.axis }), valueChannel('y', 'value', input.yTitle, frame, span)),
+    spanLayer(nameChannel('level', names.axis), valueChannel('y', 'value', frame, span)),
+    titleLayer(),
     ...limitLayers(y),
     ...capped('intervals', { channel: 'y', across: { ...x, bandPosition: 0.66 } }),
     { data: { name: 'means' }, mark: meanMark, encoding: { x: { ...x, bandPosition: 0.56 }, x2: { field: 'level', bandPosition: 0.76 }, y: field('mean') } },
@@ -59,6 +61,7 @@ export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle, y: input.yTitle, below: names.below }),
       span: levels.flatMap((level) => [span.low, span.high].map((value) => ({ level: names.shown.get(level) ?? level, value }))),
       limits: rowsOf(limits), limitLabels: limits.map((limit, index) => ({ ...limit, ...placed[index] })),
       intervals: rowsOf(spreadMeans.map(shown)), means: rowsOf(means.map(shown)),

@@ -2,6 +2,7 @@
 // caller computed it. Both axes are logarithmic when the levels span more than two decades, so that a straight line stays one.
 import type { Chart } from '../document.ts'
 import { axisDomain, spansDecades } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import type { ChartWidth, LabelledPoint, SeriesPoint } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { keyLayers, keyRows, seriesEncoding, seriesOf, withSeries } from './key.ts'
@@ -30,12 +31,13 @@ export function responseChart(input: ResponseChartInput): Chart {
   const names = seriesOf(points)
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
+    spanLayer(valueChannel('x', 'x', frame, spans.x), valueChannel('y', 'y', frame, spans.y)),
+    titleLayer(),
     { data: { name: 'band' }, mark: { type: 'area', color: inks.band, opacity: 1 }, encoding: { x, y: field('low'), y2: { field: 'high' } } },
     { data: { name: 'line' }, mark: { type: 'line', color: inks.data, strokeWidth: 1 }, encoding: { x, y } },
     { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
     ...excludedLayers(x, y), ...keyLayers(),
   ])
   const { excludedLabels } = placedLabels(frame, spans, { points: [...points, ...line], excluded, limits: [] })
-  return { specification, data: { span: spanRows(spans.x, spans.y), band: rowsOf(band), line: rowsOf(line), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), excludedLabels } }
+  return { specification, data: { titles: titleRows(frame, { x: input.xTitle, y: input.yTitle }), span: spanRows(spans.x, spans.y), band: rowsOf(band), line: rowsOf(line), points: withSeries(points, names), key: keyRows(names, frame), excluded: rowsOf(excluded), excludedLabels } }
 }

@@ -2,6 +2,7 @@
 // there is one.
 import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import { namesInOrder } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, plotFrame, seriesDashes } from './house-style.ts'
@@ -27,10 +28,11 @@ export function sequenceChart(input: SequenceChartInput): Chart {
   const named = <T extends { readonly condition: string }>(items: readonly T[]) => conditions.flatMap((condition) => items.filter((item) => item.condition === condition)).map(({ condition, ...rest }) => ({ ...rest, series: condition }))
   const [x, y] = [field('order'), field('value')]
   const specification = chartSpecification(frame, [
-    spanLayer(valueChannel('x', 'x', input.orderTitle, frame, spans.x, { tickMinStep: 1 }), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
+    spanLayer(valueChannel('x', 'x', frame, spans.x, { tickMinStep: 1 }), valueChannel('y', 'y', frame, spans.y)),
+    titleLayer(),
     { data: { name: 'points' }, mark: pointMark, encoding: { x, y, ...seriesEncoding } },
     ...keyLayers(),
     { data: { name: 'line' }, mark: { type: 'line', strokeWidth: 1 }, encoding: { x, y, stroke: seriesEncoding['stroke'], strokeDash: { ...category('series'), legend: null, scale: { range: seriesDashes } } } },
   ])
-  return { specification, data: { span: spanRows(spans.x, spans.y), key: keyRows(conditions, frame), points: rowsOf(named(points)), line: rowsOf(named(line)) } }
+  return { specification, data: { titles: titleRows(frame, { x: input.orderTitle, y: input.yTitle }), span: spanRows(spans.x, spans.y), key: keyRows(conditions, frame), points: rowsOf(named(points)), line: rowsOf(named(line)) } }
 }

@@ -1,6 +1,7 @@
 // A signal trace with the windows it was read in and the values read from it. No smoothing: every point is drawn.
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
+import { titleLayer, titleRows } from './axis-titles.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { estimatedWidth, placeLabels } from './label-placement.ts'
@@ -36,7 +37,8 @@ export function traceChart(input: TraceChartInput): Chart {
   const [x, y] = [field('x'), field('y')]
   const specification = chartSpecification(frame, [
     { data: { name: 'windows' }, mark: { type: 'rect', color: inks.window, opacity: 1 }, encoding: { x: field('from'), x2: { field: 'to' } } },
-    spanLayer(valueChannel('x', 'x', input.xTitle, frame, spans.x), valueChannel('y', 'y', input.yTitle, frame, spans.y)),
+    spanLayer(valueChannel('x', 'x', frame, spans.x), valueChannel('y', 'y', frame, spans.y)),
+    titleLayer(),
     { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('from') } },
     { data: { name: 'windows' }, mark: { type: 'rule', color: inks.axis, strokeWidth: 0.5, strokeDash: [1.5, 1.8] }, encoding: { x: field('to') } },
     labelLayer('windowLabels', { x: field('middle'), y: { value: 0 } }, { color: inks.quiet }),
@@ -46,6 +48,7 @@ export function traceChart(input: TraceChartInput): Chart {
   return {
     specification,
     data: {
+      titles: titleRows(frame, { x: input.xTitle, y: input.yTitle }),
       windows: rowsOf(windows), windowLabels: windows.map((window, index) => ({ middle: (window.from + window.to) / 2, label: window.label, ...placed[index] })),
       span: spanRows(spans.x, spans.y), limits: rowsOf(lines), limitLabels: lines.map((line, index) => ({ ...line, ...placed[windows.length + index] })), points: rowsOf(points),
     },
