@@ -71,6 +71,12 @@ test('refuses a point without a place', async () => {
   await expect(drawChart(chartOf('response', { xTitle: 'x', yTitle: 'y', points: [{ x: 1, y: Number.NaN }, { x: 2, y: 4 }], excluded: [], line: [] }), fonts.measure)).rejects.toThrow(/without a place/)
 })
 
+test.each(Object.keys(chartKinds).filter((kind) => kind !== 'heat-table'))('%s has room for nothing to show', async (kind) => {
+  const nothing = { xTitle: 'x', yTitle: 'y', groupTitle: 'group', orderTitle: 'order', points: [], excluded: [], line: [], limits: [], values: [], means: [], bars: [], dots: [], censored: [], lines: [], curves: [], windows: [], items: [] }
+  const drawing = await drawChart(chartOf(kind, nothing), fonts.measure)
+  expect(drawing.width).toBe(467)
+})
+
 describe('random data', () => {
   // As measured: six digits, and nothing smaller than a billionth but zero.
   const measured = (number: number): number => (Math.abs(number) < 1e-9 ? 0 : Number(number.toPrecision(6)))

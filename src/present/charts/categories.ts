@@ -51,8 +51,15 @@ export function linesOf(names: CategoryNames): number {
   return Math.max(1, ...[...names.shown.values()].map((name) => name.split('\n').length))
 }
 
+/** Each name once, in order of appearance. */
 export function namesInOrder(...lists: readonly (readonly string[])[]): readonly string[] {
   return [...new Set(lists.flat())]
+}
+
+/** The rows of a chart, of which there is one even when there is nothing to show. */
+export function rowNames(...lists: readonly (readonly string[])[]): readonly string[] {
+  const names = namesInOrder(...lists)
+  return names.length === 0 ? [''] : names
 }
 
 const brokenLines: Fragment = { labelExpr: "split(datum.label, '\\n')", labelLineHeight: lineGap }

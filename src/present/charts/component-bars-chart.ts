@@ -2,7 +2,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
 import { titleLayer, titleRows } from './axis-titles.ts'
-import { linesOf, namesBeside, roomBeside } from './categories.ts'
+import { linesOf, namesBeside, roomBeside, rowNames } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { capped, category, field, nameChannel, rowsOf, spanLayer, ticksAcross, valueChannel, zeroMark } from './layers.ts'
@@ -32,7 +32,7 @@ export function componentBarsChart(input: ComponentBarsChartInput): Chart {
     specification,
     data: {
       titles: titleRows(frame, { x: input.xTitle }),
-      span: shown.flatMap(({ component }) => [span.low, span.high].map((value) => ({ component, value }))),
+      span: rowNames(shown.map((bar) => bar.component)).flatMap((component) => [span.low, span.high].map((value) => ({ component, value }))),
       bars: rowsOf(shown), intervals: rowsOf(shown.filter((bar) => bar.low !== undefined && bar.high !== undefined)),
     },
   }

@@ -3,7 +3,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
 import { belowTitle, titleLayer, titleRows } from './axis-titles.ts'
-import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
+import { linesOf, namesBeside, namesInOrder, roomBeside, rowNames, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame, seriesInks } from './house-style.ts'
 import { keyLayers, keyRows, seriesEncoding } from './key.ts'
@@ -19,7 +19,7 @@ export interface DefinitionsChartInput {
 
 export function definitionsChart(input: DefinitionsChartInput): Chart {
   const { items, lines } = input
-  const labels = namesInOrder(items.map((item) => item.label))
+  const labels = rowNames(items.map((item) => item.label))
   const kinds = namesInOrder(items.map((item) => item.kind))
   const names = namesBeside(labels, input.width)
   const rowHeight = Math.max(22, linesOf(names) * 10)

@@ -2,7 +2,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain } from './axis-domain.ts'
 import { titleLayer, titleRows } from './axis-titles.ts'
-import { linesOf, namesBeside, roomBeside } from './categories.ts'
+import { linesOf, namesBeside, roomBeside, rowNames } from './categories.ts'
 import type { ChartWidth } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { capped, category, field, nameChannel, pointMark, rowsOf, spanLayer, ticksAcross, valueChannel, zeroMark } from './layers.ts'
@@ -39,7 +39,7 @@ export function differenceChart(input: DifferenceChartInput): Chart {
     specification,
     data: {
       titles: titleRows(frame, { x: input.xTitle }),
-      span: shown.flatMap(({ label }) => [span.low, span.high].map((value) => ({ label, value }))),
+      span: rowNames(shown.map((item) => item.label)).flatMap((label) => [span.low, span.high].map((value) => ({ label, value }))),
       margins: margins === undefined ? [] : rowsOf([margins]), zero: zero === true ? [{ value: 0 }] : [], items: rowsOf(shown),
       lines: margins === undefined ? [] : [{ value: margins.low }, { value: margins.high }],
       lineLabels: margins === undefined ? [] : [{ value: (margins.low + margins.high) / 2, label: margins.label, dx: 0, dy: -4, align: 'center' }],

@@ -2,7 +2,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn, spansDecades } from './axis-domain.ts'
 import { titleLayer, titleRows } from './axis-titles.ts'
-import { linesOf, namesBeside, namesInOrder, roomBeside, spread } from './categories.ts'
+import { linesOf, namesBeside, roomBeside, rowNames, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { arrowAbove, arrowBelow, chartSpecification, inks, plotFrame } from './house-style.ts'
 import { category, field, nameChannel, pointMark, spanLayer, ticksAcross, valueChannel, yOffset } from './layers.ts'
@@ -18,7 +18,7 @@ export interface DotPlotChartInput {
 
 export function dotPlotChart(input: DotPlotChartInput): Chart {
   const { dots, censored, lines } = input
-  const groups = namesInOrder(dots.map((each) => each.group), censored.map((each) => each.group))
+  const groups = rowNames(dots.map((each) => each.group), censored.map((each) => each.group))
   const names = namesBeside(groups, input.width)
   const rowHeight = Math.max(34, linesOf(names) * 10)
   const frame = plotFrame(input.width, { left: roomBeside(names), height: rowHeight * Math.max(1, groups.length) })

@@ -4,7 +4,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, axisTicks, positionOn } from './axis-domain.ts'
 import { titleLayer, titleRows } from './axis-titles.ts'
-import { namesBelow, namesInOrder, spread } from './categories.ts'
+import { namesBelow, namesInOrder, rowNames, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame, textSize, titleSize, type PlotFrame } from './house-style.ts'
 import { keyData, keyLayers, meanKeyLayers, seriesEncoding, seriesOf } from './key.ts'
@@ -26,7 +26,7 @@ export interface GroupedValuesChartInput {
 export function groupedValuesChart(input: GroupedValuesChartInput): Chart {
   const { values, excluded, means } = input
   const panels = namesInOrder(values.map(panelOf), excluded.map(panelOf), means.map(panelOf))
-  const groups = namesInOrder(values.map((each) => each.group), excluded.map((each) => each.group), means.map((each) => each.group))
+  const groups = rowNames(values.map((each) => each.group), excluded.map((each) => each.group), means.map((each) => each.group))
   const frame = plotFrame(input.width, panels.length > 1 ? { height: panelHeight(panels.length) } : {})
   const names = namesBelow(groups, frame.plotWidth)
   const series = seriesOf(values)

@@ -3,7 +3,7 @@
 import type { Chart } from '../document.ts'
 import { axisDomain, positionOn } from './axis-domain.ts'
 import { titleLayer, titleRows } from './axis-titles.ts'
-import { namesBelow, namesInOrder, spread } from './categories.ts'
+import { namesBelow, rowNames, spread } from './categories.ts'
 import type { ChartWidth, LabelledValue } from './chart-input.ts'
 import { chartSpecification, inks, plotFrame } from './house-style.ts'
 import { keyData, keyLayers, meanKeyLayers, seriesEncoding, seriesOf, withSeries } from './key.ts'
@@ -23,7 +23,7 @@ export interface LevelIntervalChartInput {
 export function levelIntervalChart(input: LevelIntervalChartInput): Chart {
   const { points, excluded, means, limits } = input
   const frame = plotFrame(input.width)
-  const levels = namesInOrder(points.map((each) => each.level), excluded.map((each) => each.level), means.map((each) => each.level))
+  const levels = rowNames(points.map((each) => each.level), excluded.map((each) => each.level), means.map((each) => each.level))
   const names = namesBelow(levels, frame.plotWidth)
   const band = frame.plotWidth / Math.max(1, levels.length)
   const ends = means.flatMap((each) => [each.mean, each.low ?? each.mean, each.high ?? each.mean])
