@@ -48,6 +48,8 @@ export interface NotEvaluable {
   readonly level?: number | undefined
   readonly condition?: string | undefined
   readonly because: string
+  /** The study does not ask for it: told in the record, and in the report only where a criterion names it. */
+  readonly notAsked?: true
 }
 
 export type VerdictWord = 'meets' | 'misses' | 'not evaluable' | 'not performed' | 'information only'

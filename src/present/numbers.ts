@@ -40,7 +40,7 @@ export function asTyped(value: number): NumberNode {
 /** A measured value: as it stands when it was read, with seven significant digits when it is a mean of several. */
 export function asMeasured(value: number): NumberNode {
   const shortest = asTyped(value)
-  return shortest.text.replace(/[^0-9]/g, '').length <= 8 ? shortest : printed(value, { significant: 7 })
+  return shortest.text.replace(/[^0-9]/g, '').length <= 8 ? shortest : { ...shortest, text: asTyped(Number(value.toPrecision(7))).text }
 }
 
 /** A fraction of the record (0.95) as percent (95), without its sign. */

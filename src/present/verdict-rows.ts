@@ -60,6 +60,9 @@ export function whereWords(where: { readonly level?: number | undefined; readonl
 
 /** Four significant digits, or as many more as show on which side of the limit the value lies. */
 function decisionText(value: number, limit: Limit): string {
+  // A level that was tested, or any other short number, stands as it is.
+  const shortest = asTyped(value).text
+  if (shortest.replace(/[^0-9]/g, '').replace(/^0+/, '').length <= 4 && !shortest.includes('×')) return shortest
   const bounds = limit.kind === 'between' ? [limit.low.value, limit.high.value] : [limit.bound.value]
   for (let significant = 4; significant < 12; significant += 1) {
     const text = numberText(value, { significant })

@@ -19,7 +19,7 @@ export function assessAccuracy(input: AssessInput<AccuracyOptions>): AssessOutpu
   const found = preparationsOf(input)
   const metrics = options.mode === 'recovery' ? ['recovery', 'recovery-sd', 'recovery-rsd', 'recovery-overall'] : ['bias', 'bias-relative', 'bias-overall']
   const other = options.mode === 'recovery' ? ['bias', 'bias-relative', 'bias-overall'] : ['recovery', 'recovery-sd', 'recovery-rsd', 'recovery-overall']
-  const foreign = other.map((metric): NotEvaluable => ({ metric, because: `the study asks for ${options.mode}` }))
+  const foreign = other.map((metric): NotEvaluable => ({ metric, because: `the study asks for ${options.mode}`, notAsked: true }))
   if (found.because !== undefined || found.measurements === undefined) {
     return { detail: undefined, findings: [], notEvaluable: [...metrics.map((metric) => ({ metric, because: found.because ?? 'no results' })), ...foreign], design: {}, diagnostics: found.diagnostics }
   }

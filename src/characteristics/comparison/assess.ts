@@ -87,9 +87,9 @@ function findingsOf(
 
 function absent(detail: ComparisonDetail): readonly NotEvaluable[] {
   return [
-    ...(detail.equivalence.length > 0 ? [] : [{ metric: 'equivalence-probability', because: 'the study states no margin' }]),
+    ...(detail.equivalence.length > 0 ? [] : [{ metric: 'equivalence-probability', because: 'the study states no margin', notAsked: true as const }]),
     ...(detail.spreads.some((each) => each.condition !== undefined) ? [] : [{ metric: 'spread-ratio-probability', because: 'the spreads of the conditions cannot be compared' }]),
     ...(detail.spreads.some((each) => each.test.startsWith('Brown')) ? [] : [{ metric: 'spread-probability', because: 'the spreads of the conditions cannot be compared' }]),
-    ...(detail.conditions.length > 2 ? [] : [{ metric: 'conditions-probability', because: 'there are only two conditions' }]),
+    ...(detail.conditions.length > 2 ? [] : [{ metric: 'conditions-probability', because: 'there are only two conditions', notAsked: true as const }]),
   ]
 }

@@ -28,7 +28,7 @@ function summary({ detail, measurand }: Shown): ReportBlock {
       return [start, textOf(zeroOutside ? 'The interval does not contain zero: the conditions differ by more than chance.' : 'The interval contains zero: these data do not show a difference, which does not mean that there is none.')]
     }
     const test = detail.equivalence.find((each) => each.condition === effect.condition)
-    return test === undefined || detail.margin === undefined ? [start] : [start, sentence`Against the margin of ±${printed(detail.margin)}${unit(measurand.unit)}, the two one-sided tests give at most a probability of ${probability(test.probability)}; equivalence within the margin is shown below ${{ type: 'number', value: detail.alpha, text: String(Number(detail.alpha.toPrecision(6))) }}.`]
+    return test === undefined || detail.margin === undefined ? [start] : [start, sentence`Against the margin of ±${printed(detail.margin)}${unit(measurand.unit)}, the larger probability of the two one-sided tests is ${probability(test.probability)}; equivalence within the margin is shown when it lies below ${{ type: 'number', value: detail.alpha, text: String(Number(detail.alpha.toPrecision(6))) }}.`]
   }))
 }
 

@@ -39,7 +39,7 @@ export function findingsOf(
 
 function absent(detail: LinearityDetail, rse: number | undefined): readonly NotEvaluable[] {
   return [
-    ...(detail.weights === 'none' ? [] : [{ metric: 'residual-standard-deviation', because: 'a weighted residual is no response' }]),
+    ...(detail.weights === 'none' ? [] : [{ metric: 'residual-standard-deviation', because: 'a weighted residual is no response', notAsked: true as const }]),
     ...(detail.correlation === undefined ? [{ metric: 'correlation', because: 'r describes a straight line with intercept and varying responses only' }] : []),
     ...(detail.rSquared === undefined ? [{ metric: 'r-squared', because: 'the responses do not vary' }] : []),
     ...(detail.lackOfFitAbsent === undefined ? [] : [{ metric: 'lack-of-fit-probability', because: detail.lackOfFitAbsent }]),
@@ -49,6 +49,6 @@ function absent(detail: LinearityDetail, rse: number | undefined): readonly NotE
     ...(detail.interceptRelative === undefined ? [{ metric: 'intercept-relative', because: 'the model has no intercept, or no full response' }] : []),
     ...(detail.straightTo === undefined ? [{ metric: 'straight-to', because: detail.fit === 'straight line' ? 'curvature is seen at every choice of four or more levels, or there are fewer' : 'the model is no straight line with intercept' }] : []),
     ...(detail.topSensitivity === undefined ? [{ metric: 'top-sensitivity', because: 'the fitted line is flat at the top' }] : []),
-    ...(detail.slopeRsdBetweenRuns === undefined ? [{ metric: 'slope-rsd-between-runs', because: 'the study names no runs, or fewer than two could be fitted' }] : []),
+    ...(detail.slopeRsdBetweenRuns === undefined ? [{ metric: 'slope-rsd-between-runs', because: 'the study names no runs, or fewer than two could be fitted', notAsked: true as const }] : []),
   ]
 }

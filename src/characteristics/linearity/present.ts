@@ -56,9 +56,17 @@ function responseFigure({ detail, measurand, prefix, confidence }: Shown): Repor
   })
 }
 
+function perUnit({ unit: own }: Shown['measurand']): string {
+  return own.includes('/') ? `(${own})` : own
+}
+
+function slopeUnit(measurand: Shown['measurand']): string {
+  return `${measurand.responseUnit ?? '1'}/${perUnit(measurand)}`
+}
+
 function coefficients({ detail, measurand, prefix }: Shown): ReportBlock {
-  const per = measurand.unit.includes('/') ? `(${measurand.unit})` : measurand.unit
-  const units = { intercept: measurand.responseUnit ?? '', slope: `${measurand.responseUnit ?? '1'}/${per}`, curvature: `${measurand.responseUnit ?? '1'}/${per}²` }
+  const per = perUnit(measurand)
+  const units = { intercept: measurand.responseUnit ?? '', slope: slopeUnit(measurand), curvature: `${measurand.responseUnit ?? '1'}/${per}²` }
   const symbols = { intercept: subscript('b', '0'), slope: subscript('b', '1'), curvature: subscript('b', '2') }
   return table({
     id: `${prefix}-coefficients`, caption: 'Coefficients of the fit',
@@ -138,7 +146,7 @@ function runs({ detail, prefix, measurand }: Shown): readonly ReportBlock[] {
   if (detail.runs.length === 0) return []
   return [table({
     id: `${prefix}-runs`, caption: 'Independent calibrations beside each other',
-    columns: [column('Run', { align: 'text', rowHeader: true }), column('n'), column('Slope'), column('Intercept', { unit: measurand.responseUnit }), column('Residual standard deviation')],
+    columns: [column('Run', { align: 'text', rowHeader: true }), column('n'), column('Slope', { unit: slopeUnit(measurand) }), column('Intercept', { unit: measurand.responseUnit }), column('Residual standard deviation', detail.weights === 'none' ? { unit: measurand.responseUnit } : {})],
     rows: detail.runs.map((each) => row(each.run, count(each.n), printed(each.slope, { significant: 5 }), printed(each.intercept), printed(each.residualStandardDeviation))),
   })]
 }

@@ -102,7 +102,7 @@ function absent(level: PrecisionLevel): readonly NotEvaluable[] {
   return [
     ...(level.intermediate === undefined ? ['between-run-sd', 'intermediate-precision-sd', 'intermediate-precision-rsd'].map((metric) => ({ metric, ...at, because: 'the data hold one run only, or the study names no runs' })) : []),
     ...(level.repeatability.relative === undefined ? ['repeatability-rsd', 'intermediate-precision-rsd'].map((metric) => ({ metric, ...at, because: 'the mean is zero' })) : []),
-    ...(level.horwitz === undefined ? [{ metric: 'horwitz-ratio', ...at, because: 'the study states no mass fraction for a level' }] : []),
+    ...(level.horwitz === undefined ? [{ metric: 'horwitz-ratio', ...at, because: 'the study states no mass fraction for a level', notAsked: true as const }] : []),
   ]
 }
 

@@ -21,21 +21,22 @@ function datasetTable(dataset: RecordedDataset, everything: boolean): readonly R
   const fields = [...new Set(dataset.rows.flatMap((each) => Object.keys(each.cells)))]
   const rows = everything ? dataset.rows : dataset.rows.filter((each) => each.fate.kind === 'excluded' || Object.values(each.cells).some((cell) => cell.kind === 'below' || cell.kind === 'above' || cell.kind === 'not detected'))
   if (rows.length === 0) return []
-  const groups = [...new Set(rows.map((each) => each.file))].map((file) => rows.filter((each) => each.file === file))
+  const names = [...new Set(dataset.rows.map((each) => each.file))]
+  const groups = names.map((file) => rows.filter((each) => each.file === file)).filter((group) => group.length > 0)
   return [table({
     id: `raw-${slug(dataset.name)}`, caption: `Rows of dataset ${dataset.name}, as written in the files`,
     columns: [
-      column('File: line', { align: 'text', rowHeader: true }), column('Became', { align: 'text' }),
+      column('File:line', { align: 'text', rowHeader: true }), column('Became', { align: 'text' }),
       ...fields.map((field) => column(field, { align: 'text', unit: dataset.columns[field] === undefined ? '' : `“${dataset.columns[field]}”` })),
     ],
-    groups: groups.map((group) => group.map((each) => rawRow(each, fields))),
-    notes: ['Under each field stands the heading of its column in the file. Cells are printed letter by letter as they stand in the file.'],
+    groups: groups.map((group) => group.map((each) => rawRow(each, names.indexOf(each.file) + 1, fields))),
+    notes: [`Files: ${names.map((name, index) => `${index + 1} is ${name}`).join(', ')}.`, 'Under each field stands the heading of its column in the file. Cells are printed letter by letter as they stand in the file.'],
   })]
 }
 
-function rawRow(each: RecordedRow, fields: readonly string[]): ExhibitRow {
+function rawRow(each: RecordedRow, fileNumber: number, fields: readonly string[]): ExhibitRow {
   const became = each.fate.kind === 'excluded' ? `excluded (${each.fate.exclusion})` : each.fate.kind === 'not used' ? `not used: ${each.fate.rule}` : 'used'
-  const made = row(`${each.file}: ${each.line}`, became, ...fields.map((field) => each.cells[field]?.text ?? ''))
+  const made = row(`${fileNumber}:${each.line}`, became, ...fields.map((field) => each.cells[field]?.text ?? ''))
   return each.fate.kind === 'excluded' ? { ...made, tone: 'excluded' } : made
 }
 

@@ -4,7 +4,7 @@ import type { RecordedAssessment } from '../../assess/record.ts'
 import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
-import { asPercent, columnDecimals, count, degreesOfFreedom, printed } from '../numbers.ts'
+import { asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
 import { resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
 
@@ -37,7 +37,7 @@ function oneAssessment(section: Section, assessment: RecordedAssessment): readon
     { type: 'sectionHeading', id: assessmentSectionId(assessment.block, assessment.measurand), depth: 2, children: textOf(measurand.name) },
     ...decisions(section, verdicts, prefix, measurand.unit),
     ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
-    ...notEvaluable(section, assessment),
+    ...notEvaluable(section, assessment, verdicts),
     ...told,
     ...findingsTable(section, findings, prefix, measurand.unit),
   ]
@@ -55,9 +55,10 @@ function decisions(section: Section, verdicts: readonly Verdict[], prefix: strin
   })]
 }
 
-function notEvaluable(section: Section, assessment: RecordedAssessment): readonly ReportBlock[] {
-  if (assessment.notEvaluable.length === 0) return []
-  const items = assessment.notEvaluable.map((each) => `${metricLabel(section, assessment.characteristic, each.metric)}${each.level === undefined ? '' : ` at ${each.level}`}${each.condition === undefined ? '' : ` (${each.condition})`}: ${each.because}`)
+function notEvaluable(section: Section, assessment: RecordedAssessment, verdicts: readonly Verdict[]): readonly ReportBlock[] {
+  const told = assessment.notEvaluable.filter((each) => each.notAsked !== true || verdicts.some((verdict) => verdict.metric === each.metric))
+  if (told.length === 0) return []
+  const items = told.map((each) => `${metricLabel(section, assessment.characteristic, each.metric)}${each.level === undefined ? '' : ` at ${each.level}`}${each.condition === undefined ? '' : ` (${each.condition})`}: ${each.because}`)
   return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [{ type: 'text', value: item }] }] })) }]
 }
 
@@ -82,7 +83,7 @@ function findingsTable(section: Section, findings: readonly Finding[], prefix: s
 
 function where(finding: Finding, levelUnit: string): readonly Inline[] {
   return joined([
-    finding.level === undefined ? [] : sentence`, ${printed(finding.level, { decimals: columnDecimals([finding.level], 3) })}${unitWords(levelUnit)}`,
+    finding.level === undefined ? [] : sentence`, ${asTyped(finding.level)}${unitWords(levelUnit)}`,
     finding.condition === undefined ? [] : textOf(`, ${finding.condition}`),
   ], '')
 }
