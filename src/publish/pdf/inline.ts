@@ -47,6 +47,9 @@ export interface Line {
 
 type AnyInline = Inline | PhrasingContent
 
+/** Ends a line by the writer's wish (Unicode LINE SEPARATOR); a line feed in running text is only white, as in Markdown. */
+const lineEnd = '\u2028'
+
 /** A unit after a number: short, or a quotient, product or power of units; and the short words that are none. */
 const unit = /^(?:[%‰°]\p{L}?|\p{L}{1,3}|\S*[\p{L}%][·/⁻²³]\S*)[.,;:)]*$/u
 const noUnit = /^(?:a|an|and|are|as|at|but|by|for|has|in|is|it|its|no|not|of|on|or|per|so|the|to|was)$/
@@ -94,7 +97,7 @@ function simpleText(inlines: readonly AnyInline[]): string | undefined {
   const only = inlines[0]
   if (inlines.length !== 1 || only === undefined) return undefined
   if (only.type === 'number') return only.text.replaceAll(' ', '\u00a0')
-  return only.type === 'text' && !/\n|\t| {2}|^ | $/.test(only.value) && only.value !== '' ? only.value : undefined
+  return only.type === 'text' && !/[\n\t\u2028]| {2}|^ | $/.test(only.value) && only.value !== '' ? only.value : undefined
 }
 
 /** What stands there, without style; references and page numbers included. */
@@ -139,7 +142,7 @@ function fragmentsOf(inlines: readonly AnyInline[], base: Fragment, context: Inl
       case 'subscript': return fragmentsOf(inline.children, scripted(base, script.lower), context)
       case 'verdict': {
         const { mark, colour } = verdictMarks[inline.word]
-        return [{ ...base, text: `${mark}\u00a0${inline.word.replaceAll(' ', '\u00a0')}`, style: tinted({ ...base.style, face: styles.table.bold }, colour) }]
+        return [{ ...base, text: `${mark}\u00a0${inline.word}`, style: tinted({ ...base.style, face: styles.table.bold }, colour) }]
       }
       case 'reference': case 'pageReference': {
         const text = inline.type === 'reference' ? (inline.text ?? inline.target) : context.pageOf(inline.target)
@@ -150,7 +153,7 @@ function fragmentsOf(inlines: readonly AnyInline[], base: Fragment, context: Inl
         const link = { target: { kind: 'address' as const, url: inline.url }, words: plainText(inline.children, context) }
         return fragmentsOf(inline.children, linked(base, link), context)
       }
-      case 'break': return [{ ...base, text: '\n' }]
+      case 'break': return [{ ...base, text: lineEnd }]
       case 'image': return [{ ...base, text: inline.alt ?? inline.url }]
       default: return 'children' in inline ? fragmentsOf(inline.children, base, context) : 'value' in inline ? [{ ...base, text: inline.value }] : []
     }
@@ -191,10 +194,10 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
   }
   for (const fragment of fragments) {
     const { text } = fragment
-    for (const match of text.matchAll(/\n|[ \t]+|[^ \t\n]+/g)) {
+    for (const match of text.matchAll(/\u2028|[ \t\n]+|[^ \t\n\u2028]+/g)) {
       const [token] = match
-      if (token === '\n') close(0, true)
-      else if (token.startsWith(' ') || token.startsWith('\t')) {
+      if (token === lineEnd) close(0, true)
+      else if (/^[ \t\n]/.test(token)) {
         if (holds && startsWithUnit(text.slice(match.index))) add(fragment, '\u00a0')
         else if (pieces.length > 0) close(context.shaping.width(' ', fragment.style.face, fragment.style.size))
         else if (words.length > 0) words.push({ pieces: [], width: 0, space: context.shaping.width(' ', fragment.style.face, fragment.style.size) })
@@ -215,7 +218,7 @@ function wordsOf(inlines: readonly AnyInline[], style: TextStyle, tag: Structure
 
 /** ` mg/L of …` yes, ` of …` no. */
 function startsWithUnit(text: string): boolean {
-  const word = /^ ([^ \n]+)/.exec(text)?.[1]
+  const word = /^ ([^ \n\u2028]+)/.exec(text)?.[1]
   return word !== undefined && unit.test(word) && !noUnit.test(word)
 }
 

@@ -27,9 +27,10 @@ export function tableSlabs(table: ExhibitTable, context: BlockContext): readonly
   return parts.flatMap((part, index) => partSlabs(spoken, part, { index, count: parts.length }, context))
 }
 
-/** An excluded row says so in words, in its first cell unless another does. */
+/** A table without rows says so; an excluded row does too, in its first cell unless another does. */
 function withWords(table: ExhibitTable, context: BlockContext): ExhibitTable {
   const rows = table.groups.flat()
+  if (rows.length === 0) return { ...table, groups: [[{ cells: table.columns.map((_, index) => (index === 0 ? [{ type: 'text', value: 'no\u00a0rows' }] : [])) }]] }
   const isUnsaid = (row: ExhibitRow): boolean => row.tone === 'excluded' && !row.cells.some((cell) => /excluded/i.test(plainText(cell, context)))
   if (!rows.some(isUnsaid)) return table
   const spoken = (row: ExhibitRow): ExhibitRow => (isUnsaid(row) ? { ...row, cells: row.cells.map((cell, index) => (index === 0 ? [...cell, { type: 'text', value: cell.length === 0 ? 'excluded' : ' (excluded)' }] : cell)) } : row)
@@ -57,15 +58,16 @@ function partSlabs(table: ExhibitTable, part: Part, position: Position, context:
     const border = isTableEnd ? 'end' : isGroupEnd ? 'group' : 'row'
     const pieces = rowSlabs(row, part, node('TR', body), border, context)
     const hasNotes = isTableEnd && isLast && table.notes.length > 0
-    return pieces.map((slab, at): Slab => ({
-      ...slab, continued,
-      ...(at < pieces.length - 1 ? {} : hasNotes ? { keepWithNext: 'must' } : isGroupEnd ? {} : { keepWithNext: 'prefer' }),
-    }))
+    // No row stands alone below the head or above the end.
+    const isFirst = groupIndex === 0 && rowIndex === 0
+    const isSecondLast = groupIndex === groups.length - 1 && rowIndex === group.length - 2
+    const keep = hasNotes || (!isTableEnd && (isFirst || isSecondLast)) ? { keepWithNext: 'must' as const } : isGroupEnd ? {} : { keepWithNext: 'prefer' as const }
+    return pieces.map((slab, at): Slab => ({ ...slab, continued, ...(at < pieces.length - 1 ? {} : keep) }))
   }))
   return [
     ...captionSlabs(table, tag, position, context),
-    { ...head, keepWithNext: rows.length === 0 ? undefined : 'must', continued } as Slab,
-    ...(rows.length === 0 ? [emptySlab(part, body, context)] : rows),
+    { ...head, keepWithNext: 'must', continued },
+    ...rows,
     ...(isLast ? noteSlabs(table, context) : []),
     { height: 8, spaceBefore: 0, boxes: [] },
   ]
@@ -73,7 +75,7 @@ function partSlabs(table: ExhibitTable, part: Part, position: Position, context:
 
 function captionSlabs(table: ExhibitTable, parent: StructureNode, position: Position, context: BlockContext): readonly Slab[] {
   const anchor: Box = { kind: 'anchor', y: 0, id: table.id }
-  if (table.caption.length === 0 && table.number === undefined) return []
+  if (table.caption.length === 0 && table.number === undefined) return [{ height: 0, spaceBefore: 10, boxes: [], keepWithNext: 'must' }]
   const suffix: readonly Inline[] = position.count === 1 ? [] : [{ type: 'text', value: ` (columns, part ${position.index + 1} of ${position.count})` }]
   const inlines: readonly Inline[] = [{ type: 'strong', children: [{ type: 'text', value: `Table ${table.number ?? ''}`.trim() }] }, { type: 'text', value: '\u2002' }, ...table.caption, ...suffix]
   const lines = paragraphSlabs(inlines, { style: styles.caption, tag: node('Caption', parent), left: 0, width: page.textWidth, spaceBefore: 12, keepWithNext: 'must' }, context)
@@ -153,13 +155,6 @@ function cellLeft(cell: { readonly column: ColumnLayout; readonly lines: readonl
   const before = alignedAt(cell.inlines, style, context)
   if (before === undefined || column.mark === undefined) return column.right - line.width
   return Math.max(column.left, Math.min(column.mark - before, column.right - line.width))
-}
-
-function emptySlab(part: Part, body: StructureNode, context: BlockContext): Slab {
-  const row = node('TR', body)
-  const [slab] = rowSlabs({ cells: [[{ type: 'text', value: 'no rows' }], ...part.columns.slice(1).map(() => [])] }, part, row, 'end', context)
-  if (slab === undefined) throw new Error('a row without a slab')
-  return slab
 }
 
 function noteSlabs(table: ExhibitTable, context: BlockContext): readonly Slab[] {
