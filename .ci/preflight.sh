@@ -38,12 +38,12 @@ for file in "$@"; do
   fi
   qpdf --check "$file" >/dev/null || complain "$file: qpdf finds errors"
 
-  information=$(pdfinfo "$file")
+  information=$(pdfinfo "$file" || true)
   grep -q '^Tagged: *yes$' <<<"$information" || complain "$file: not tagged"
   grep -q '^Title: *[^ ]' <<<"$information" || complain "$file: no title"
 
   # Last columns: embedded, subset, Unicode map, object number and generation.
-  fonts=$(pdffonts "$file" | tail -n +3)
+  fonts=$(pdffonts "$file" | tail -n +3 || true)
   [ -n "$fonts" ] || complain "$file: no fonts"
   bad=$(awk '{ if ($(NF-4) != "yes" || $(NF-2) != "yes") print $1 }' <<<"$fonts")
   [ -z "$bad" ] || complain "$file: fonts not embedded or without Unicode map: $bad"

@@ -1,7 +1,7 @@
 // List of contents: sections of the first two levels with their pages, each line a link.
 import type { ContentsBlock, SectionHeading } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { lineBoxes, setLines } from './inline.ts'
+import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node } from './structure.ts'
 import { colours, page, styles } from './style.ts'

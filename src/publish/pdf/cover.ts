@@ -1,7 +1,7 @@
 // The cover: whose report, of what, its facts, and the overall verdict in words with its mark. It leaves room for the signatures below.
 import type { CoverBlock, Inline } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { lineBoxes, setLines } from './inline.ts'
+import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, page, styles, type TextStyle, tinted, verdictMarks } from './style.ts'

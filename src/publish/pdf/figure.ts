@@ -2,7 +2,7 @@
 import type { ExhibitFigure, Inline } from '../../present/document.ts'
 import type { Drawing } from '../drawing.ts'
 import type { Box } from './frames.ts'
-import { lineBoxes, setLines } from './inline.ts'
+import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node } from './structure.ts'
 import { page, styles } from './style.ts'

@@ -1,7 +1,7 @@
 // Signature block: for each person what the signature means, the printed name and position, and lines for signature, date and time.
 import type { SignOffBlock } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { lineBoxes, setLines } from './inline.ts'
+import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, emboldened, page, resized, styles, type TextStyle, tinted } from './style.ts'

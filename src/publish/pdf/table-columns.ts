@@ -1,7 +1,8 @@
 // How wide each column of a table is and where its decimal marks stand. Text columns wrap; a table that cannot fit at any size is split
 // into parts that each repeat the row headers.
 import type { ExhibitColumn, ExhibitTable, Inline } from '../../present/document.ts'
-import { extentOf, plainText } from './inline.ts'
+import { plainText } from './inline.ts'
+import { extentOf } from './words.ts'
 import type { BlockContext } from './slab.ts'
 import { page, resized, styles, tableSizes, type TextStyle } from './style.ts'
 

@@ -2,7 +2,8 @@
 // a table too wide is set smaller and is split by columns as the last resort. No cell is ever cut off.
 import type { ExhibitRow, ExhibitTable, Inline } from '../../present/document.ts'
 import type { Box } from './frames.ts'
-import { type Line, lineBoxes, plainText, setLines } from './inline.ts'
+import { plainText } from './inline.ts'
+import { type Line, lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
 import { colours, emboldened, page, styles, tinted } from './style.ts'
