@@ -4,7 +4,9 @@ import type { BlockContent, DefinitionContent, Paragraph, PhrasingContent, RootC
 import { gfmToMarkdown } from 'mdast-util-gfm'
 import { toMarkdown } from 'mdast-util-to-markdown'
 import type { CoverBlock, ExhibitRow, ExhibitTable, Inline, ReportBlock, ReportDocument, SectionHeading, SignOffBlock } from '../present/document.ts'
+import { headingLabel, userLabel } from './labels.ts'
 import { plainInline } from './plain-inline.ts'
+import { verdictMarks } from './verdict-marks.ts'
 
 export interface MarkdownPaths {
   chartPath(id: string): string
@@ -18,8 +20,6 @@ interface Targets {
   readonly referred: ReadonlySet<string>
   readonly names: ReadonlyMap<string, string>
 }
-
-const marks = { 'meets': '✓', 'misses': '✗', 'not evaluable': '○', 'not performed': '–', 'information only': '•' } as const
 
 export function publishMarkdown(document: ReportDocument, paths: MarkdownPaths): string {
   const headings = document.blocks.filter((block): block is SectionHeading => block.type === 'sectionHeading')
@@ -46,10 +46,10 @@ function written(children: readonly RootContent[]): string {
 
 function nodesOf(block: ReportBlock, targets: Targets): readonly RootContent[] {
   switch (block.type) {
-    case 'sectionHeading': return [{ type: 'heading', depth: (block.depth + 1) as 2 | 3 | 4, children: [...anchor(block.id, targets), { type: 'text', value: headingLabel(block) }, ...phrasing(block.children, targets)] }]
+    case 'sectionHeading': return [{ type: 'heading', depth: (block.depth + 1) as 2 | 3 | 4, children: [...anchor(block.id, targets), { type: 'text', value: `${headingLabel(block)} `.trimStart() }, ...phrasing(block.children, targets)] }]
     case 'textBlock':
       if (block.children.length === 0) return []
-      return block.origin === 'user' ? [{ type: 'blockquote', children: [{ type: 'paragraph', children: [strong('Stated by the laboratory')] }, paragraph(block.children, targets)] }] : [textNode(block.children, targets)]
+      return block.origin === 'user' ? [{ type: 'blockquote', children: [{ type: 'paragraph', children: [strong(userLabel)] }, paragraph(block.children, targets)] }] : [textNode(block.children, targets)]
     case 'exhibitTable': return tableNodes(block, targets)
     case 'exhibitFigure': return [
       { type: 'paragraph', children: [...anchor(block.id, targets), { type: 'image', url: targets.paths.chartPath(block.id), alt: block.alternative }] },
@@ -74,11 +74,6 @@ function textNode(inlines: readonly Inline[], targets: Targets): RootContent {
   return plain === undefined ? paragraph(inlines, targets) : ready(plain)
 }
 
-function headingLabel(heading: SectionHeading): string {
-  if (heading.number === undefined) return ''
-  return `${heading.annex === true && heading.depth === 1 ? 'Annex ' : ''}${heading.number} `
-}
-
 function strong(text: string): PhrasingContent {
   return { type: 'strong', children: [{ type: 'text', value: text }] }
 }
@@ -91,7 +86,7 @@ function phrasing(inlines: readonly (Inline | PhrasingContent)[], targets: Targe
   return inlines.flatMap((inline): readonly PhrasingContent[] => {
     switch (inline.type) {
       case 'number': return [{ type: 'text', value: inline.text }]
-      case 'verdict': return [{ type: 'text', value: `${marks[inline.word]} ${inline.word}` }]
+      case 'verdict': return [{ type: 'text', value: `${verdictMarks[inline.word]} ${inline.word}` }]
       case 'reference': return [linkTo(inline.target, inline.text ?? inline.target)]
       case 'pageReference': return [linkTo(inline.target, targets.names.get(inline.target) ?? inline.target)]
       case 'superscript': return [{ type: 'html', value: '<sup>' }, ...phrasing(inline.children, targets), { type: 'html', value: '</sup>' }]
@@ -149,7 +144,7 @@ function plainText(inlines: readonly Inline[]): string | undefined {
   for (const inline of inlines) {
     if (inline.type === 'text') text += inline.value
     else if (inline.type === 'number') text += inline.text
-    else if (inline.type === 'verdict') text += `${marks[inline.word]} ${inline.word}`
+    else if (inline.type === 'verdict') text += `${verdictMarks[inline.word]} ${inline.word}`
     else return undefined
   }
   return isHarmless.test(text) && !isTreacherous.test(text) ? text : undefined
@@ -180,7 +175,7 @@ function signOffNodes(block: SignOffBlock, targets: Targets): readonly RootConte
 
 function contentsNodes(title: string, targets: Targets): readonly RootContent[] {
   const lines = targets.headings.filter((heading) => heading.depth <= 2).map((heading) => {
-    const label = headingLabel(heading) + plainInline(heading.children)
+    const label = `${headingLabel(heading)} ${plainInline(heading.children)}`.trim()
     const text = isHarmless.test(label) ? `[${label}](#${encodeURI(heading.id)})` : written([{ type: 'paragraph', children: [linkTo(heading.id, label)] }])
     return `${heading.depth === 1 ? '' : '  '}- ${text}`
   })

@@ -1,5 +1,6 @@
 // List of contents: sections of the first two levels with their pages, each line a link.
 import type { ContentsBlock, SectionHeading } from '../../present/document.ts'
+import { headingLabel } from '../labels.ts'
 import type { Box } from './frames.ts'
 import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
@@ -25,7 +26,7 @@ function entry(heading: SectionHeading, item: ReturnType<typeof node>, context: 
   const depth = heading.depth === 1 ? 1 : 2
   const style = styles[`contents${depth}`]
   const tag = node('Link', item)
-  const number = depth === 1 && heading.annex === true ? `Annex ${heading.number ?? ''}` : (heading.number ?? '')
+  const number = headingLabel(heading)
   const left = depth === 1 ? 0 : numberWidth[1]
   const textLeft = Math.max(left + numberWidth[depth], left + context.shaping.width(number, style.face, style.size) + 8)
   const lines = setLines(heading.children, style, tag, page.textWidth - textLeft - pageWidth, context)

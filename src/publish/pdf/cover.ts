@@ -4,7 +4,7 @@ import type { Box } from './frames.ts'
 import { lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
-import { colours, page, styles, type TextStyle, tinted, verdictMarks } from './style.ts'
+import { colours, page, styles, type TextStyle, tinted, verdictColours } from './style.ts'
 
 const labelWidth = 96
 const inset = 14
@@ -43,7 +43,7 @@ export function coverSlabs(cover: CoverBlock, context: BlockContext): readonly S
   }
   y += 18
 
-  const { colour } = verdictMarks[cover.overall.word]
+  const colour = verdictColours[cover.overall.word]
   const start = y
   const panel = boxes.length
   y += 10

@@ -4,11 +4,12 @@ import type { Table as MarkdownTable } from 'mdast'
 import type { ExhibitFigure, ExhibitTable, Inline, ReportBlock, ReportDocument, SectionHeading } from '../../present/document.ts'
 import type { Drawing } from '../drawing.ts'
 import type { FontFaces } from '../fonts.ts'
+import { headingLabel } from '../labels.ts'
+import { plainInline } from '../plain-inline.ts'
 import { contentsSlabs } from './contents.ts'
 import { coverSlabs } from './cover.ts'
 import { figureSlabs, isNarrow } from './figure.ts'
 import type { Frames } from './frames.ts'
-import { plainText } from './inline.ts'
 import { paginate } from './paginate.ts'
 import { runningBoxes } from './running.ts'
 import { signOffSlabs } from './sign-off.ts'
@@ -69,8 +70,7 @@ function pageOf(target: string, pages: ReadonlyMap<string, number>): number {
 }
 
 function outlineTitle(heading: SectionHeading, context: BlockContext): string {
-  const label = heading.number === undefined ? '' : heading.annex === true && heading.depth === 1 ? `Annex ${heading.number} ` : `${heading.number} `
-  return label + plainText(heading.children, context)
+  return `${headingLabel(heading)} ${plainInline(heading.children, context.pageOf)}`.trim()
 }
 
 /** Blocks that are set together: two narrow figures in a row; all others alone. */
@@ -118,7 +118,7 @@ function slabsOf(group: readonly ReportBlock[], before: readonly ReportBlock[] |
 /** A table of a template: first row as head, no caption. */
 function fromMarkdown(table: MarkdownTable): ExhibitTable {
   const [head, ...rows] = table.children.map((row) => row.children.map((cell) => cell.children as readonly Inline[]))
-  const columns = (head ?? []).map((cell, index) => ({ header: plainText(cell, { pageOf: () => '' }), align: table.align?.[index] === 'right' ? 'number' as const : 'text' as const }))
+  const columns = (head ?? []).map((cell, index) => ({ header: plainInline(cell), align: table.align?.[index] === 'right' ? 'number' as const : 'text' as const }))
   return { type: 'exhibitTable', id: '', caption: [], columns, groups: [rows.map((cells) => ({ cells }))], notes: [] }
 }
 

@@ -2,10 +2,12 @@
 // text's own glyphs.
 import type { PhrasingContent } from 'mdast'
 import type { Inline } from '../../present/document.ts'
+import { plainInline } from '../plain-inline.ts'
+import { verdictMarks } from '../verdict-marks.ts'
 import type { LinkBox } from './frames.ts'
 import type { Shaping } from './shaping.ts'
 import { node, type StructureNode } from './structure.ts'
-import { colours, emboldened, resized, script, styles, type TextStyle, tinted, verdictMarks } from './style.ts'
+import { colours, emboldened, resized, script, styles, type TextStyle, tinted, verdictColours } from './style.ts'
 
 export interface InlineContext {
   readonly shaping: Shaping
@@ -43,17 +45,15 @@ export function fragmentsOf(inlines: readonly AnyInline[], base: Fragment, conte
       case 'inlineCode': return [{ ...base, text: inline.value, style: { ...base.style, face: 'mono', size: base.style.size * 0.9 } }]
       case 'superscript': return fragmentsOf(inline.children, scripted(base, script.raise), context)
       case 'subscript': return fragmentsOf(inline.children, scripted(base, script.lower), context)
-      case 'verdict': {
-        const { mark, colour } = verdictMarks[inline.word]
-        return [{ ...base, text: `${mark}\u00a0${inline.word}`, style: tinted({ ...base.style, face: styles.table.bold }, colour) }]
-      }
+      case 'verdict':
+        return [{ ...base, text: `${verdictMarks[inline.word]}\u00a0${inline.word}`, style: tinted({ ...base.style, face: styles.table.bold }, verdictColours[inline.word]) }]
       case 'reference': case 'pageReference': {
         const text = inline.type === 'reference' ? (inline.text ?? inline.target) : context.pageOf(inline.target)
         const words = inline.type === 'reference' ? text : `page ${text}`
         return [linked({ ...base, text: text.replaceAll(' ', '\u00a0') }, { target: { kind: 'inside', id: inline.target }, words })]
       }
       case 'link': {
-        const link = { target: { kind: 'address' as const, url: inline.url }, words: plainText(inline.children, context) }
+        const link = { target: { kind: 'address' as const, url: inline.url }, words: plainInline(inline.children, context.pageOf) }
         return fragmentsOf(inline.children, linked(base, link), context)
       }
       case 'break': return [{ ...base, text: lineEnd }]
@@ -69,17 +69,4 @@ function scripted(base: Fragment, shift: number): Fragment {
 
 function linked(base: Fragment, link: NonNullable<Piece['link']>): Fragment {
   return { ...base, link, style: tinted(base.style, colours.accent), tag: base.tag === undefined ? undefined : node('Link', base.tag) }
-}
-
-/** What stands there, without style; references and page numbers included. */
-export function plainText(inlines: readonly AnyInline[], context: Pick<InlineContext, 'pageOf'>): string {
-  return inlines.map((inline) => {
-    switch (inline.type) {
-      case 'number': return inline.text
-      case 'verdict': return `${verdictMarks[inline.word].mark} ${inline.word}`
-      case 'reference': return inline.text ?? inline.target
-      case 'pageReference': return context.pageOf(inline.target)
-      default: return 'children' in inline ? plainText(inline.children, context) : 'value' in inline ? inline.value : ''
-    }
-  }).join('')
 }

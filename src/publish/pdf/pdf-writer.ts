@@ -104,7 +104,7 @@ function deflatePurely(pdf: PdfDocument): void {
   }
 }
 
-export function concatenated(parts: readonly Uint8Array[]): Uint8Array {
+function concatenated(parts: readonly Uint8Array[]): Uint8Array {
   const [only] = parts
   if (parts.length === 1 && only !== undefined) return only
   const joined = new Uint8Array(parts.reduce((sum, part) => sum + part.length, 0))

@@ -2,7 +2,6 @@
 import type { Box } from './frames.ts'
 import type { InlineContext } from './inline.ts'
 import type { StructureNode } from './structure.ts'
-import { styles } from './style.ts'
 
 export interface Slab {
   readonly height: number
@@ -24,5 +23,3 @@ export interface BlockContext extends InlineContext {
 export function baselineIn(leading: number, size: number): number {
   return leading / 2 + size * 0.33
 }
-
-export const bodyLeading = styles.body.leading

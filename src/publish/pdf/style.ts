@@ -74,15 +74,15 @@ export const script = { size: 0.68, raise: 0.33, lower: -0.13 } as const
 /** Sizes that a table too wide for the page tries in turn, before it is split by columns. */
 export const tableSizes = [8.5, 8, 7.5, 7] as const
 
-export const verdictMarks = {
-  'meets': { mark: '✓', colour: colours.meets },
-  'misses': { mark: '✗', colour: colours.misses },
-  'not evaluable': { mark: '○', colour: colours.undecided },
-  'not performed': { mark: '–', colour: colours.secondary },
-  'information only': { mark: '•', colour: colours.secondary },
+export const verdictColours = {
+  'meets': colours.meets,
+  'misses': colours.misses,
+  'not evaluable': colours.undecided,
+  'not performed': colours.secondary,
+  'information only': colours.secondary,
 } as const
 
-/** `value` lines of the style, bold or a derived size. */
+/** The same style at another size, its leading in proportion. */
 export function resized(style: TextStyle, size: number): TextStyle {
   return { ...style, size, leading: Math.round((style.leading / style.size) * size * 4) / 4 }
 }

@@ -1,7 +1,7 @@
 // How wide each column of a table is and where its decimal marks stand. Text columns wrap; a table that cannot fit at any size is split
 // into parts that each repeat the row headers.
 import type { ExhibitColumn, ExhibitTable, Inline } from '../../present/document.ts'
-import { plainText } from './inline.ts'
+import { plainInline } from '../plain-inline.ts'
 import { extentOf } from './words.ts'
 import type { BlockContext } from './slab.ts'
 import { page, resized, styles, tableSizes, type TextStyle } from './style.ts'
@@ -117,7 +117,7 @@ function wishesOf(table: ExhibitTable, style: TextStyle, context: BlockContext):
 export function alignedAt(cell: readonly Inline[], style: TextStyle, context: BlockContext): number | undefined {
   const first = cell[0]
   if (first === undefined) return undefined
-  const text = first.type === 'number' ? first.text : first.type === 'text' ? first.value : plainText(cell, context)
+  const text = first.type === 'number' ? first.text : first.type === 'text' ? first.value : plainInline(cell, context.pageOf)
   const whole = /^[<>≤≥≈±+\u2212-]?\s?\d+/.exec(text)?.[0]
   if (whole === undefined) return undefined
   return context.shaping.width(whole.replaceAll(' ', '\u00a0'), style.face, style.size)

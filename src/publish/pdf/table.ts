@@ -1,8 +1,8 @@
 // A table → slabs: caption, head, one slab a row, notes. Columns get their width from their content, numbers align on the decimal mark;
 // a table too wide is set smaller and is split by columns as the last resort. No cell is ever cut off.
 import type { ExhibitRow, ExhibitTable, Inline } from '../../present/document.ts'
+import { plainInline } from '../plain-inline.ts'
 import type { Box } from './frames.ts'
-import { plainText } from './inline.ts'
 import { type Line, lineBoxes, setLines } from './lines.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
 import { node, type StructureNode } from './structure.ts'
@@ -32,7 +32,7 @@ export function tableSlabs(table: ExhibitTable, context: BlockContext): readonly
 function withWords(table: ExhibitTable, context: BlockContext): ExhibitTable {
   const rows = table.groups.flat()
   if (rows.length === 0) return { ...table, groups: [[{ cells: table.columns.map((_, index) => (index === 0 ? [{ type: 'text', value: 'no\u00a0rows' }] : [])) }]] }
-  const isUnsaid = (row: ExhibitRow): boolean => row.tone === 'excluded' && !row.cells.some((cell) => /excluded/i.test(plainText(cell, context)))
+  const isUnsaid = (row: ExhibitRow): boolean => row.tone === 'excluded' && !row.cells.some((cell) => /excluded/i.test(plainInline(cell, context.pageOf)))
   if (!rows.some(isUnsaid)) return table
   const spoken = (row: ExhibitRow): ExhibitRow => (isUnsaid(row) ? { ...row, cells: row.cells.map((cell, index) => (index === 0 ? [...cell, { type: 'text', value: cell.length === 0 ? 'excluded' : ' (excluded)' }] : cell)) } : row)
   return { ...table, groups: table.groups.map((group) => group.map(spoken)) }

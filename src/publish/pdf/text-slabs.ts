@@ -2,8 +2,9 @@
 // at the next page's start; the user's own words carry a rule at their side and say whose they are.
 import type { PhrasingContent } from 'mdast'
 import type { FormulaBlock, Inline, MarkdownBlock, SectionHeading, TextBlock } from '../../present/document.ts'
+import { headingLabel, userLabel } from '../labels.ts'
+import { plainInline } from '../plain-inline.ts'
 import type { Box } from './frames.ts'
-import { plainText } from './inline.ts'
 import { type Line, lineBoxes, setLines } from './lines.ts'
 import { extentOf } from './words.ts'
 import { baselineIn, type BlockContext, type Slab } from './slab.ts'
@@ -49,7 +50,7 @@ const headingSpace = { 1: 26, 2: 18, 3: 12 } as const
 export function headingSlabs(heading: SectionHeading, isFirstAnnex: boolean, context: BlockContext): readonly Slab[] {
   const style = styles[`heading${heading.depth}`]
   const tag = node(`H${heading.depth}`, context.root)
-  const label = heading.number === undefined ? '' : heading.annex === true && heading.depth === 1 ? `Annex ${heading.number}` : heading.number
+  const label = headingLabel(heading)
   const indent = label === '' ? 0 : context.shaping.width(label, style.face, style.size) + style.size * 0.75
   const lines = setLines(heading.children, style, tag, page.textWidth - indent, context)
   const baseline = baselineIn(style.leading, style.size)
@@ -72,12 +73,12 @@ export function textBlockSlabs(block: TextBlock, follows: boolean, context: Bloc
   if (block.children.length === 0) return []
   if (block.origin !== 'user') {
     // What ends in a colon announces what comes next.
-    const announces = plainText(block.children.slice(-1), context).endsWith(':')
+    const announces = plainInline(block.children.slice(-1), context.pageOf).endsWith(':')
     return paragraphSlabs(block.children, { style: styles.body, tag: node('P', context.root), left: 0, width: page.measure, spaceBefore: follows ? 10 : 6, ...(announces ? { keepWithNext: 'must' } : {}) }, context)
   }
   const quote = node('BlockQuote', context.root)
   const label: readonly Slab[] = follows ? [] : paragraphSlabs(
-    [{ type: 'text', value: 'Stated by the laboratory' }],
+    [{ type: 'text', value: userLabel }],
     { style: styles.label, tag: node('P', quote), left: sideRule.indent, width: page.measure, spaceBefore: 8, keepWithNext: 'must', behind: besideRule }, context,
   )
   return [...label, ...paragraphSlabs(block.children, { style: styles.body, tag: node('P', quote), left: sideRule.indent, width: page.measure - sideRule.indent, spaceBefore: follows ? 4 : 0, behind: besideRule }, context)]
