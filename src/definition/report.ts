@@ -14,6 +14,7 @@ export const reportReader = object({
   language: defaulted(oneOf(['en'], { describe: 'Language of the report' }), 'en'),
   template: defaulted(located(nameOrPathInside('Name of a shipped template, or the path of your own beside the study', 'validation-report')), { value: 'validation-report', place: { file: '' } }, 'validation-report'),
   organisation: optional(text({ describe: 'Name of the laboratory, printed on the cover' })),
+  detail: optional(oneOf(['all', 'main'], { describe: 'Every exhibit of each measurand, or the main ones; all up to twelve measurands, the main ones above, when absent' })),
   supersedes: optional(located(pathBeside('From revision 2 on: record.json of the revision before', '../revision-1/record.json'))),
   reason: optional(text({ describe: 'From revision 2 on: why there is a new revision' })),
 }, { describe: 'What the report is' })

@@ -40,6 +40,8 @@ export interface ReportIdentity {
   readonly supersedes?: Located<string> | undefined
   readonly reason?: string | undefined
   readonly organisation?: string | undefined
+  /** How much of each measurand is shown; depends on their number when absent. */
+  readonly detail?: 'all' | 'main' | undefined
 }
 
 export interface Method {

@@ -1,7 +1,7 @@
 // Builders for the blocks a characteristic presents: sentences, tables, figures. Text given here holds no digit of a result; numbers
 // come in as NumberNodes.
 import type { FindingInterval } from '../assess/finding.ts'
-import type { Chart, ExhibitColumn, ExhibitFigure, ExhibitRow, ExhibitTable, FormulaBlock, Inline, TextBlock } from './document.ts'
+import type { Chart, ExhibitColumn, ExhibitFigure, ExhibitRow, ExhibitTable, FormulaBlock, Inline, ReportBlock, TextBlock } from './document.ts'
 import { type NumberFormat, printed } from './numbers.ts'
 
 export type Words = string | Inline | readonly Inline[]
@@ -58,6 +58,11 @@ export function figure(exhibit: { readonly id: string; readonly caption: Words; 
 /** A formula and its reading in words (the alternative text). */
 export function formula(children: Words, words: string): FormulaBlock {
   return { type: 'formula', children: textOf(children), words }
+}
+
+/** Exhibits that a report leaves out when it has many measurands and the study does not ask for everything. */
+export function secondary(...blocks: readonly ReportBlock[]): readonly ReportBlock[] {
+  return blocks.map((block) => (block.type === 'exhibitTable' || block.type === 'exhibitFigure' || block.type === 'textBlock' || block.type === 'formula' ? { ...block, secondary: true } : block))
 }
 
 export function subscript(base: string, lowered: string): readonly Inline[] {

@@ -20,16 +20,38 @@ export function sum(values: readonly number[]): number {
   return total + lost
 }
 
-/** Arithmetic mean. Throws on no values. */
+/**
+ * The values themselves, if they are finite and their squares keep all digits; otherwise throws. What no measurement reaches is refused
+ * rather than answered with an overflow. All zeros pass.
+ */
+export function squarable(values: readonly number[]): readonly number[] {
+  let [largest, least] = [0, Infinity]
+  for (const value of values) {
+    const size = Math.abs(value)
+    if (!(size < Infinity)) throw new RangeError('a value is not a finite number')
+    largest = Math.max(largest, size)
+    if (size > 0) least = Math.min(least, size)
+  }
+  if (largest > 1e120 || (least < Infinity && largest < 1e-120)) throw new RangeError('the values are too large or too small to be squared')
+  return values
+}
+
+/** Arithmetic mean. Throws on no values, and on values or sums that are not finite. */
 export function mean(values: readonly number[]): number {
   const first = values[0]
   if (first === undefined) throw new RangeError('the mean needs at least one value')
   // Centred on the first value: differences of near-equal numbers are exact, so a large offset costs nothing.
-  return first + sum(values.map((value) => value - first)) / values.length
+  const found = first + sum(values.map((value) => value - first)) / values.length
+  if (!Number.isFinite(found)) throw new RangeError('the mean is not a finite number')
+  return found
 }
 
-/** Sum of squared deviations from the mean (two passes, with the correction for the rounding of the mean). */
+/**
+ * Sum of squared deviations from the mean: two passes, with the correction for the rounding of the mean. Throws on no values.
+ * Source: Chan, Golub & LeVeque, Am. Stat. 37 (1983) 242 (corrected two-pass algorithm).
+ */
 export function sumOfSquaredDeviations(values: readonly number[]): number {
+  squarable(values)
   const centre = mean(values)
   const deviations = values.map((value) => value - centre)
   const residue = sum(deviations)
@@ -51,38 +73,47 @@ export function standardDeviation(values: readonly number[]): number {
   return scale * Math.sqrt(sumOfSquaredDeviations(values.map((value) => value / scale)) / (values.length - 1))
 }
 
+/** The middle value, or the mean of the two middle ones. Throws on no values. */
 export function median(values: readonly number[]): number {
   if (values.length === 0) throw new RangeError('the median needs at least one value')
+  if (!values.every(Number.isFinite)) throw new RangeError('a value is not a finite number')
   const sorted = [...values].sort((left, right) => left - right)
   const middle = sorted.length >> 1
   const upper = sorted[middle] ?? 0
-  return sorted.length % 2 === 1 ? upper : ((sorted[middle - 1] ?? 0) + upper) / 2
+  return sorted.length % 2 === 1 ? upper : (sorted[middle - 1] ?? 0) / 2 + upper / 2
 }
 
 export interface Summary {
   readonly n: number
   readonly mean: number
   readonly standardDeviation: number
-  /** In percent of the mean's absolute value; undefined when the mean is zero. */
+  /** In percent of the mean's absolute value; undefined when the mean is zero, or too near to it for a number. */
   readonly relativeStandardDeviation: number | undefined
 }
 
+/** Count, mean, standard deviation and the latter relative to the mean. Throws below two values. */
 export function summary(values: readonly number[]): Summary {
   const centre = mean(values)
   const spread = standardDeviation(values)
-  return { n: values.length, mean: centre, standardDeviation: spread, relativeStandardDeviation: centre === 0 ? undefined : (100 * spread) / Math.abs(centre) }
+  const relative = (spread / Math.abs(centre)) * 100
+  return { n: values.length, mean: centre, standardDeviation: spread, relativeStandardDeviation: Number.isFinite(relative) ? relative : undefined }
 }
 
-/** Interval of a mean: mean ± t·s/√n (Student; ISO 2602). */
+/** Interval of a mean: mean ± t·s/√n. Throws below two values. Source: Student's t; ISO 2602:1980. */
 export function meanInterval(given: readonly number[] | { readonly mean: number; readonly standardDeviation: number; readonly n: number }, level: number): Interval & { readonly df: number } {
   const { mean: centre, standardDeviation: spread, n } = 'n' in given ? given : summary(given)
   if (n < 2) throw new RangeError('the interval of a mean needs at least two values')
   const half = (studentQuantile((1 + level) / 2, n - 1) * spread) / Math.sqrt(n)
-  return { low: centre - half, high: centre + half, level, df: n - 1 }
+  return { ...finite({ low: centre - half, high: centre + half, level }), df: n - 1 }
 }
 
-/** Interval of a standard deviation with `df` degrees of freedom, by the chi-square distribution (ISO 2854). */
+/** Interval of a standard deviation: s·√(df/χ²) at both tails. Throws without a degree of freedom. Source: ISO 2854:1976. */
 export function standardDeviationInterval(spread: number, df: number, level: number): Interval {
   if (!(df > 0)) throw new RangeError('the interval of a standard deviation needs a degree of freedom')
-  return { low: spread * Math.sqrt(df / chiSquareQuantile((1 + level) / 2, df)), high: spread * Math.sqrt(df / chiSquareQuantile((1 - level) / 2, df)), level }
+  return finite({ low: spread * Math.sqrt(df / chiSquareQuantile((1 + level) / 2, df)), high: spread * Math.sqrt(df / chiSquareQuantile((1 - level) / 2, df)), level })
+}
+
+function finite(interval: Interval): Interval {
+  if (!Number.isFinite(interval.low) || !Number.isFinite(interval.high)) throw new RangeError('the bounds of the interval are not finite numbers')
+  return interval
 }

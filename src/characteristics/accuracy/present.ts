@@ -1,5 +1,5 @@
 // The exhibits and sentences of accuracy, from its detail alone.
-import { column, excludedRow, figure, paragraph, row, sentence, table, textOf } from '../../present/build.ts'
+import { column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf } from '../../present/build.ts'
 import { levelIntervalChart } from '../../present/charts/level-interval-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
 import { asTyped, count, numberText, printed, probability } from '../../present/numbers.ts'
@@ -9,7 +9,7 @@ import type { AccuracyDetail, AccuracyLevel } from './detail.ts'
 type Shown = Presented<AccuracyDetail>
 
 export function presentAccuracy(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), levels(shown), chart(shown), preparations(shown)]
+  return [summary(shown), levels(shown), chart(shown), ...secondary(preparations(shown))]
 }
 
 function unitOf({ detail, measurand }: Shown): string {

@@ -1,5 +1,5 @@
 // The exhibits and sentences of a comparison. A difference that is not significant is never called equality.
-import { column, excludedRow, figure, paragraph, row, sentence, table, textOf } from '../../present/build.ts'
+import { column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf } from '../../present/build.ts'
 import { differenceChart } from '../../present/charts/difference-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import { sequenceChart } from '../../present/charts/sequence-chart.ts'
@@ -11,7 +11,7 @@ import type { ComparisonDetail, EffectLine } from './detail.ts'
 type Shown = Presented<ComparisonDetail>
 
 export function presentComparison(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), conditions(shown), ...figures(shown), effects(shown), ...equivalenceTable(shown), ...spreads(shown), ...blocks(shown)]
+  return [summary(shown), ...secondary(conditions(shown), ...figures(shown)), effects(shown), ...secondary(...equivalenceTable(shown), ...spreads(shown), ...blocks(shown))]
 }
 
 function unit(text: string): string {

@@ -1,7 +1,7 @@
 // Lower limits as exhibits: what was measured in blanks and spikes, every definition side by side with the governing one named, and the
 // confirmation. It computes nothing; a limit never stands without the name of its definition.
 import type { FindingInterval } from '../../assess/finding.ts'
-import { column, excludedRow, figure, intervalWords, joined, paragraph, row, sentence, table, textOf, type Words } from '../../present/build.ts'
+import { column, excludedRow, figure, intervalWords, joined, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
 import { definitionsChart } from '../../present/charts/definitions-chart.ts'
 import { distributionsChart } from '../../present/charts/distributions-chart.ts'
 import { dotPlotChart } from '../../present/charts/dot-plot-chart.ts'
@@ -18,13 +18,15 @@ export function presentDetection(presented: Detection): readonly ReportBlock[] {
   return [
     summary(presented),
     ...definitionExhibits(presented),
-    ...lineExhibits(presented),
-    ...seriesTable(presented, detail.blanks, 'blanks'), ...seriesTable(presented, detail.spikes, 'spikes'),
-    ...dotPlot(presented),
-    ...distributionFigures(presented),
-    ...(detail.mdl === undefined ? [] : mdlExhibits(presented, detail.mdl)),
-    ...(detail.trace === undefined ? [] : traceExhibits(presented, detail.trace)),
-    ...confirmationTable(presented),
+    ...secondary(
+      ...lineExhibits(presented),
+      ...seriesTable(presented, detail.blanks, 'blanks'), ...seriesTable(presented, detail.spikes, 'spikes'),
+      ...dotPlot(presented),
+      ...distributionFigures(presented),
+      ...(detail.mdl === undefined ? [] : mdlExhibits(presented, detail.mdl)),
+      ...(detail.trace === undefined ? [] : traceExhibits(presented, detail.trace)),
+      ...confirmationTable(presented),
+    ),
   ]
 }
 

@@ -1,5 +1,5 @@
 // The exhibits and sentences of linearity, from its detail alone.
-import { column, excludedRow, figure, formula, joined, paragraph, row, sentence, subscript, table, textOf } from '../../present/build.ts'
+import { column, excludedRow, figure, formula, joined, paragraph, row, secondary, sentence, subscript, table, textOf } from '../../present/build.ts'
 import { deviationChart } from '../../present/charts/deviation-chart.ts'
 import { responseChart } from '../../present/charts/response-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
@@ -12,7 +12,7 @@ type Shown = Presented<LinearityDetail>
 const modelNames = { 'straight line': 'a straight line', 'through zero': 'a straight line through zero', quadratic: 'a parabola' } as const
 
 export function presentLinearity(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), ...model(shown), responseFigure(shown), coefficients(shown), residualFigure(shown), ...errorFigure(shown), standards(shown), candidates(shown), ...tests(shown), ...runs(shown)]
+  return [summary(shown), ...secondary(...model(shown)), responseFigure(shown), coefficients(shown), ...secondary(residualFigure(shown), ...errorFigure(shown), standards(shown), candidates(shown), ...tests(shown), ...runs(shown))]
 }
 
 function unit(text: string | undefined): string {

@@ -1,5 +1,5 @@
 // The exhibits and sentences of precision, from its detail alone.
-import { column, excludedRow, figure, joined, paragraph, row, sentence, table, textOf } from '../../present/build.ts'
+import { column, excludedRow, figure, joined, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
 import { componentBarsChart } from '../../present/charts/component-bars-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
@@ -10,8 +10,7 @@ import type { PrecisionDetail, PrecisionLevel } from './detail.ts'
 type Shown = Presented<PrecisionDetail>
 
 export function presentPrecision(shown: Shown): readonly ReportBlock[] {
-  const { levels } = shown.detail
-  return [summary(shown), overview(shown), ...levels.flatMap((level) => [valuesFigure(shown, level), valuesTable(shown, level), ...anova(shown, level)]), ...components(shown), ...horwitz(shown)]
+  return [summary(shown), overview(shown), valuesFigure(shown), ...secondary(valuesTable(shown), ...anova(shown), ...components(shown)), ...horwitz(shown)]
 }
 
 function unit(text: string): string {
@@ -20,10 +19,6 @@ function unit(text: string): string {
 
 function at({ measurand }: Shown, level: PrecisionLevel): readonly Inline[] {
   return level.level === undefined ? textOf('over all results') : sentence`at ${asTyped(level.level)}${unit(measurand.unit)}`
-}
-
-function prefixOf({ prefix, detail }: Shown, level: PrecisionLevel): string {
-  return `${prefix}-level-${detail.levels.indexOf(level) + 1}`
 }
 
 function summary(shown: Shown): ReportBlock {
@@ -53,37 +48,49 @@ function overview({ detail, measurand, prefix }: Shown): ReportBlock {
   })
 }
 
-function valuesFigure(shown: Shown, level: PrecisionLevel): ReportBlock {
-  const { measurand } = shown
+function panelOf({ measurand, detail }: Shown, level: PrecisionLevel): { readonly panel?: string } {
+  return detail.levels.length < 2 ? {} : { panel: level.level === undefined ? 'all' : `${level.level} ${measurand.unit}` }
+}
+
+function valuesFigure(shown: Shown): ReportBlock {
+  const { measurand, detail, prefix } = shown
+  const named = (run: string): string => (run === '' ? 'all' : run)
+  const single = detail.levels.length === 1 ? detail.levels[0] : undefined
   return figure({
-    id: `${prefixOf(shown, level)}-values`, caption: [...sentence`Single results of ${measurand.name} by run `, ...at(shown, level), ...sentence`, n = ${count(level.n)}, with run means and the grand mean`],
-    alternative: `${level.n} single results of ${measurand.name} in ${level.runs.length} runs with the mean of each run.`,
+    id: `${prefix}-values`, caption: [...textOf(`Single results of ${measurand.name} by run, with run means; n = `), ...joined(detail.levels.map((level) => [count(level.n)]), ', ')],
+    alternative: `Single results of ${measurand.name} by run at ${detail.levels.length} ${detail.levels.length === 1 ? 'level' : 'levels'}, with the mean of each run.`,
     chart: groupedValuesChart({
-      groupTitle: shown.detail.runFields.length === 0 ? 'run' : shown.detail.runFields.join(' · '), yTitle: `result / ${measurand.unit}`, values: level.runs.flatMap((run) => run.values.map((value) => ({ group: run.run === '' ? 'all' : run.run, value }))),
-      excluded: level.excluded.map((each) => ({ group: each.run === '' ? 'all' : each.run, value: each.value, label: `excluded (${each.exclusion})` })), means: level.runs.map((run) => ({ group: run.run === '' ? 'all' : run.run, mean: run.mean })), overall: level.mean, limits: [],
+      groupTitle: detail.runFields.length === 0 ? 'run' : detail.runFields.join(' · '), yTitle: `result / ${measurand.unit}`, limits: [], ...(single === undefined ? {} : { overall: single.mean }),
+      values: detail.levels.flatMap((level) => level.runs.flatMap((run) => run.values.map((value) => ({ group: named(run.run), value, ...panelOf(shown, level) })))),
+      excluded: detail.levels.flatMap((level) => level.excluded.map((each) => ({ group: named(each.run), value: each.value, label: `E${each.exclusion}`, ...panelOf(shown, level) }))),
+      means: detail.levels.flatMap((level) => level.runs.map((run) => ({ group: named(run.run), mean: run.mean, ...panelOf(shown, level) }))),
     }),
   })
 }
 
-function valuesTable(shown: Shown, level: PrecisionLevel): ReportBlock {
-  const decimals = columnDecimals([level.mean], 5)
+function levelCell(level: PrecisionLevel, isFirst: boolean): Words {
+  return isFirst ? (level.level === undefined ? 'all' : asTyped(level.level)) : ''
+}
+
+function valuesTable(shown: Shown): ReportBlock {
+  const { measurand, detail, prefix } = shown
   return table({
-    id: `${prefixOf(shown, level)}-results`, caption: [...textOf('Results by run '), ...at(shown, level)],
-    columns: [column('Run', { align: 'text', rowHeader: true }), column('n'), column('Results', { align: 'text', unit: shown.measurand.unit }), column('Mean', { unit: shown.measurand.unit })],
-    rows: [
-      ...level.runs.map((run) => row(run.run === '' ? 'all' : run.run, count(run.values.length), joined(run.values.map((value) => [asMeasured(value)]), '; '), printed(run.mean, { decimals }))),
-      ...level.excluded.map((each) => excludedRow(`${each.run}, excluded`, '', asMeasured(each.value), '')),
-    ],
+    id: `${prefix}-results`, caption: 'Results by run',
+    columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Run', { align: 'text' }), column('n'), column('Results', { align: 'text', unit: measurand.unit }), column('Mean', { unit: measurand.unit })],
+    groups: detail.levels.map((level) => [
+      ...level.runs.map((run, index) => row(levelCell(level, index === 0), run.run === '' ? 'all' : run.run, count(run.values.length), joined(run.values.map((value) => [asMeasured(value)]), '; '), printed(run.mean, { decimals: columnDecimals([level.mean], 5) }))),
+      ...level.excluded.map((each) => excludedRow('', `${each.run}, excluded`, '', asMeasured(each.value), '')),
+    ]),
   })
 }
 
-function anova(shown: Shown, level: PrecisionLevel): readonly ReportBlock[] {
-  if (level.anova.length === 0) return []
+function anova({ measurand, detail, prefix }: Shown): readonly ReportBlock[] {
+  const levels = detail.levels.filter((level) => level.anova.length > 0)
+  if (levels.length === 0) return []
   return [table({
-    id: `${prefixOf(shown, level)}-anova`, caption: [...textOf('Analysis of variance '), ...at(shown, level)],
-    columns: [column('Source', { align: 'text', rowHeader: true }), column('df'), column('Sum of squares'), column('Mean square')],
-    rows: level.anova.map((each) => row(each.source, count(each.df), printed(each.sumOfSquares, { significant: 6 }), printed(each.meanSquare, { significant: 6 }))),
-    ...(level.n0 === undefined ? {} : { notes: [sentence`Effective number of results in a run: ${printed(level.n0, { significant: 5 })}.`] }),
+    id: `${prefix}-anova`, caption: 'Analysis of variance',
+    columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Source', { align: 'text' }), column('df'), column('Sum of squares', { align: 'text' }), column('Mean square', { align: 'text' }), column('Effective number in a run')],
+    groups: levels.map((level) => level.anova.map((each, index) => row(levelCell(level, index === 0), each.source, count(each.df), printed(each.sumOfSquares, { significant: 6 }), printed(each.meanSquare, { significant: 6 }), index === 0 && level.n0 !== undefined ? printed(level.n0, { significant: 5 }) : ''))),
   })]
 }
 

@@ -2,7 +2,7 @@
 // what could not be evaluated and why. Sections know no characteristic by name.
 import type { RecordedAssessment } from '../../assess/record.ts'
 import type { Finding, Verdict } from '../../assess/finding.ts'
-import { column, joined, paragraph, row, sentence, table, textOf } from '../build.ts'
+import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
 import { asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
 import { resultWords, unitWords } from '../verdict-rows.ts'
@@ -13,16 +13,25 @@ export function assessmentSectionId(block: string, measurand: string): string {
 }
 
 export function assessments(section: Section): readonly ReportBlock[] {
+  const everything = isEverythingTold(section)
   return section.record.study.blocks.flatMap((block): readonly ReportBlock[] => {
     const own = section.record.assessments.filter((each) => each.block === block.id)
     return [
       { type: 'sectionHeading', id: `section-${slug(block.id)}`, depth: 1, children: textOf(blockTitle(section, block.id)) },
-      ...own.flatMap((assessment) => oneAssessment(section, assessment)),
+      ...(everything ? [] : [paragraph(textOf('The main exhibits of each measurand are shown here; every other number stands in the attached record.json.'))]),
+      ...own.flatMap((assessment) => oneAssessment(section, assessment, everything)),
     ]
   })
 }
 
-function oneAssessment(section: Section, assessment: RecordedAssessment): readonly ReportBlock[] {
+/** Above this number of measurands a section keeps its main exhibits unless the study asks for all: five hundred pages are read by no one. */
+const fullUpTo = 12
+
+export function isEverythingTold({ record }: Section): boolean {
+  return (record.study.report.detail ?? (record.study.measurands.length > fullUpTo ? 'main' : 'all')) === 'all'
+}
+
+function oneAssessment(section: Section, assessment: RecordedAssessment, everything: boolean): readonly ReportBlock[] {
   const measurand = measurandOf(section, assessment.measurand)
   const part = section.catalogue.find((each) => each.id === assessment.characteristic)
   if (part === undefined) throw new Error(`the catalogue holds no ${assessment.characteristic}`)
@@ -38,8 +47,7 @@ function oneAssessment(section: Section, assessment: RecordedAssessment): readon
     ...decisions(section, verdicts, prefix, measurand.unit),
     ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
     ...notEvaluable(section, assessment, verdicts),
-    ...told,
-    ...findingsTable(section, findings, prefix, measurand.unit),
+    ...[...told, ...secondary(...findingsTable(section, findings, prefix, measurand.unit))].filter((block) => everything || !('secondary' in block)),
   ]
 }
 
