@@ -1,7 +1,7 @@
 // Two or more groups of values: differences with intervals, tests of means and of spreads, and equivalence by two one-sided tests.
 // A large probability never shows that groups are equal; only equivalence within a stated margin can be shown.
-import { type Interval, mean, median, standardDeviation, sum } from './describe.ts'
-import { chiSquareCdf, fisherCdf, studentCdf, studentQuantile } from './distributions.ts'
+import { type Interval, mean, median, squarable, standardDeviation, sum } from './describe.ts'
+import { chiSquareCdf, fisherCdf, fisherUpperTail, studentCdf, studentQuantile } from './distributions.ts'
 import { type OneWay, oneWay } from './variance-components.ts'
 
 export interface DifferenceTest {
@@ -23,29 +23,33 @@ export function differenceTest(difference: number, standardError: number, df: nu
   return { difference, standardError, t, df, probability: 2 * studentCdf(-Math.abs(t), df), interval: { low: difference - half, high: difference + half, level } }
 }
 
-/** Mean of a − mean of b, variances not assumed equal. Source: Welch, Biometrika 34 (1947) 28. */
-export function welch(a: readonly number[], b: readonly number[], level: number): DifferenceTest {
-  const parts = [a, b].map((values) => ({ share: standardDeviation(values) ** 2 / values.length, df: values.length - 1 }))
-  const variance = sum(parts.map((part) => part.share))
-  if (!(variance > 0)) throw new RangeError('the values do not scatter, so a difference has no standard error')
-  return differenceTest(mean(a) - mean(b), Math.sqrt(variance), variance ** 2 / sum(parts.map((part) => part.share ** 2 / part.df)), level)
+function variance(values: readonly number[]): number {
+  return standardDeviation(squarable(values)) ** 2
 }
 
-/** Mean of a − mean of b with a pooled variance. Source: ISO 2854. */
+/** Mean of a − mean of b, variances not assumed equal. Throws below two values in a group, and when neither group scatters. Source: Welch, Biometrika 34 (1947) 28. */
+export function welch(a: readonly number[], b: readonly number[], level: number): DifferenceTest {
+  const parts = [a, b].map((values) => ({ share: variance(values) / values.length, df: values.length - 1 }))
+  const total = sum(parts.map((part) => part.share))
+  if (!(total > 0)) throw new RangeError('the values do not scatter, so a difference has no standard error')
+  return differenceTest(mean(a) - mean(b), Math.sqrt(total), 1 / sum(parts.map((part) => (part.share / total) ** 2 / part.df)), level)
+}
+
+/** Mean of a − mean of b with a pooled variance. Throws below two values in a group. Source: ISO 2854:1976. */
 export function pooledT(a: readonly number[], b: readonly number[], level: number): DifferenceTest {
   const df = a.length + b.length - 2
-  const pooled = ((a.length - 1) * standardDeviation(a) ** 2 + (b.length - 1) * standardDeviation(b) ** 2) / df
+  const pooled = ((a.length - 1) * variance(a) + (b.length - 1) * variance(b)) / df
   return differenceTest(mean(a) - mean(b), Math.sqrt(pooled * (1 / a.length + 1 / b.length)), df, level)
 }
 
-/** Mean of the differences a − b of pairs. Source: ISO 3301. */
+/** Mean of the differences a − b of pairs. Throws below two pairs, and when the differences do not scatter. Source: ISO 3301:1975. */
 export function pairedT(a: readonly number[], b: readonly number[], level: number): DifferenceTest {
   if (a.length !== b.length) throw new RangeError('pairs need as many values on both sides')
   const differences = a.map((value, i) => value - (b[i] ?? 0))
   return differenceTest(mean(differences), standardDeviation(differences) / Math.sqrt(differences.length), differences.length - 1, level)
 }
 
-/** Mean − reference. Source: ISO 2854. */
+/** Mean − reference. Throws below two values, and when they do not scatter. Source: ISO 2854:1976. */
 export function oneSampleT(values: readonly number[], reference: number, level: number): DifferenceTest {
   return differenceTest(mean(values) - reference, standardDeviation(values) / Math.sqrt(values.length), values.length - 1, level)
 }
@@ -57,36 +61,39 @@ export interface SpreadTest {
   readonly probability: number
 }
 
-/** Variance of a over variance of b, two-sided probability. Source: ISO 2854. */
+/** Variance of a over variance of b, two-sided probability. Throws when a group does not scatter. Source: ISO 2854:1976. */
 export function varianceRatio(a: readonly number[], b: readonly number[]): SpreadTest {
-  const [top, bottom] = [standardDeviation(a) ** 2, standardDeviation(b) ** 2]
+  const [top, bottom] = [variance(a), variance(b)]
   if (!(bottom > 0) || !(top > 0)) throw new RangeError('a group does not scatter')
   const [df1, df2] = [a.length - 1, b.length - 1]
-  const below = fisherCdf(top / bottom, df1, df2)
-  return { F: top / bottom, df1, df2, probability: Math.min(1, 2 * Math.min(below, 1 - below)) }
+  const F = top / bottom
+  return { F, df1, df2, probability: Math.min(1, 2 * Math.min(fisherCdf(F, df1, df2), fisherUpperTail(F, df1, df2))) }
 }
 
-/** Equality of spreads on absolute deviations from the medians. Source: Brown & Forsythe, J. Am. Stat. Assoc. 69 (1974) 364. */
+/** Equality of spreads on absolute deviations from the medians. Throws when those do not scatter within groups, as with two values each. Source: Brown & Forsythe, J. Am. Stat. Assoc. 69 (1974) 364. */
 export function brownForsythe(groups: readonly (readonly number[])[]): SpreadTest {
   return deviationTest(groups, median)
 }
 
-/** The same on deviations from the means. Source: Levene (1960). */
+/** The same on deviations from the means. Source: Levene, in Contributions to Probability and Statistics, Stanford (1960) 278. */
 export function levene(groups: readonly (readonly number[])[]): SpreadTest {
   return deviationTest(groups, mean)
 }
 
 function deviationTest(groups: readonly (readonly number[])[], centre: (values: readonly number[]) => number): SpreadTest {
-  const anova: OneWay = oneWay(groups.map((group) => {
+  const deviations = groups.map((group) => {
     const middle = centre(group)
     return group.map((value) => Math.abs(value - middle))
-  }))
+  })
+  if (groups.every((group) => group.length <= 2)) throw new RangeError('a comparison of spreads needs a group of three values or more')
+  const anova: OneWay = oneWay(deviations)
   return { F: anova.F, df1: anova.dfBetween, df2: anova.dfWithin, probability: anova.probability }
 }
 
-/** Equality of variances under normality. Source: Bartlett, Proc. R. Soc. A 160 (1937) 268. */
+/** Equality of variances under normality. Throws below two groups, and when a group does not scatter. Source: Bartlett, Proc. R. Soc. A 160 (1937) 268. */
 export function bartlett(groups: readonly (readonly number[])[]): { readonly statistic: number; readonly df: number; readonly probability: number } {
-  const parts = groups.map((group) => ({ df: group.length - 1, variance: standardDeviation(group) ** 2 }))
+  if (groups.length < 2) throw new RangeError('a comparison of spreads needs at least two groups')
+  const parts = groups.map((group) => ({ df: group.length - 1, variance: variance(group) }))
   if (parts.some((part) => !(part.variance > 0))) throw new RangeError('a group does not scatter')
   const df = sum(parts.map((part) => part.df))
   const pooled = sum(parts.map((part) => part.df * part.variance)) / df
@@ -106,7 +113,7 @@ export interface Equivalence {
   readonly equivalent: boolean
 }
 
-/** Two one-sided tests at α each. Source: Schuirmann, J. Pharmacokin. Biopharm. 15 (1987) 657. */
+/** Two one-sided tests at α each: equivalent when both margins are ruled out, which is when the interval lies between them. Throws when nothing scatters. Source: Schuirmann, J. Pharmacokin. Biopharm. 15 (1987) 657. */
 export function equivalence(found: { readonly difference: number; readonly standardError: number; readonly df: number }, margins: { readonly low: number; readonly high: number }, alpha: number): Equivalence {
   if (!(found.standardError > 0)) throw new RangeError('the values do not scatter, so a difference has no standard error')
   const tLower = (found.difference - margins.low) / found.standardError

@@ -25,14 +25,13 @@ export function sum(values: readonly number[]): number {
  * rather than answered with an overflow. All zeros pass.
  */
 export function squarable(values: readonly number[]): readonly number[] {
-  let [largest, least] = [0, Infinity]
+  let largest = 0
   for (const value of values) {
     const size = Math.abs(value)
     if (!(size < Infinity)) throw new RangeError('a value is not a finite number')
     largest = Math.max(largest, size)
-    if (size > 0) least = Math.min(least, size)
   }
-  if (largest > 1e120 || (least < Infinity && largest < 1e-120)) throw new RangeError('the values are too large or too small to be squared')
+  if (largest > 1e125 || (largest > 0 && largest < 1e-125)) throw new RangeError('the values are too large or too small to be squared')
   return values
 }
 

@@ -47,8 +47,8 @@ export function chiSquareCdf(x: number, df: number): number {
 export function normalQuantile(p: number): number {
   if (!(p >= 1e-300 && p < 1)) throw new RangeError('the normal quantile has no value for these arguments')
   if (p > 0.5) return -normalQuantile(1 - p)
-  if (p > 1e-7) return normalQuantileOf(p, 0, 1)
-  // The package is off by 2e-9 at p = 1e-10 and by more beyond; Newton's steps on the logarithm of its accurate probability are not.
+  if (p > 0.01) return normalQuantileOf(p, 0, 1)
+  // The package is off by 5e-14 at p = 1e-5 and by 1e-5 at 1e-15; Newton's steps on the logarithm of its accurate probability are not.
   let z = -Math.sqrt(-2 * Math.log(p))
   for (let step = 0; step < 8; step += 1) {
     const below = normalCdf(z)

@@ -1,7 +1,7 @@
 // Does the model follow the data? Lack of fit against true replicates, and Mandel's comparison of a line with a parabola.
 // Repeated injections of one preparation are no true replicates; a small probability may still be a trivial deviation.
 import { sum } from './describe.ts'
-import { fisherCdf } from './distributions.ts'
+import { fisherUpperTail } from './distributions.ts'
 import type { Fit } from './regression.ts'
 
 export interface VarianceTest {
@@ -33,13 +33,14 @@ export function lackOfFit(fit: Fit): VarianceTest & { readonly sumOfSquaresPureE
   const lack = Math.max(0, fit.residualSumOfSquares - pure)
   if (!(pure > 0)) throw new RangeError('the replicates do not scatter, so lack of fit has no yardstick')
   const F = lack / df1 / (pure / df2)
-  return { F, df1, df2, probability: 1 - fisherCdf(F, df1, df2), sumOfSquaresPureError: pure, sumOfSquaresLackOfFit: lack }
+  return { F, df1, df2, probability: fisherUpperTail(F, df1, df2), sumOfSquaresPureError: pure, sumOfSquaresLackOfFit: lack }
 }
 
-/** Mandel's test: how much a parabola improves on a line. Source: ISO 8466-1:2021, clause 6. */
+/** Mandel's test: how much a parabola improves on a line. Throws when the parabola leaves no residual or the fits are no such pair. Source: ISO 8466-1:2021, clause 6. */
 export function mandelTest(line: Fit, parabola: Fit): VarianceTest {
+  if (line.degree !== 1 || parabola.degree !== 2 || line.df !== parabola.df + 1) throw new RangeError('the comparison needs a line and a parabola through the same values')
   const df2 = parabola.df
   if (!(parabola.residualSumOfSquares > 0)) throw new RangeError('the parabola leaves no residual, so there is no yardstick')
   const F = Math.max(0, line.residualSumOfSquares - parabola.residualSumOfSquares) / (parabola.residualSumOfSquares / df2)
-  return { F, df1: 1, df2, probability: 1 - fisherCdf(F, 1, df2) }
+  return { F, df1: 1, df2, probability: fisherUpperTail(F, 1, df2) }
 }

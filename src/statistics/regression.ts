@@ -1,6 +1,6 @@
 // Polynomial fits y(x), weighted or not, through zero or not, with what follows from them: intervals, bands, inverse prediction.
 // x is centred and scaled before the orthogonal fit, then coefficients go back to powers of x. R² of a fit through zero is uncentred.
-import { type Interval, sum } from './describe.ts'
+import { type Interval, squarable, sum } from './describe.ts'
 import { studentQuantile } from './distributions.ts'
 import { leastSquares } from './least-squares.ts'
 
@@ -33,6 +33,16 @@ export interface Fit {
   /** Weighted mean of x and Σ w·(x − x̄w)². */
   readonly meanX: number
   readonly sumOfSquaresX: number
+  /** The fit in powers of (x − centre)/scale, the form in which it was solved and in which predictions lose no digits. */
+  readonly centred: CentredFit
+}
+
+export interface CentredFit {
+  readonly centre: number
+  readonly scale: number
+  readonly powers: readonly number[]
+  readonly coefficients: readonly number[]
+  readonly covariance: readonly (readonly number[])[]
 }
 
 export interface FitRequest {
@@ -46,11 +56,15 @@ export interface FitRequest {
 const powerNames = ['intercept', 'slope', 'curvature']
 
 /**
- * Least-squares polynomial. Throws when there are no more values than coefficients, or the levels do not determine them.
+ * Least-squares polynomial. Throws when there are no more values than coefficients, the levels do not determine them, or a figure of
+ * the fit leaves the range of numbers.
  * Source: Draper & Smith, Applied Regression Analysis, 3rd ed., chapters 1, 5 and 9 (weights).
  */
 export function fitPolynomial({ x, y, weights, degree, throughZero = false }: FitRequest): Fit {
   if (x.length !== y.length) throw new RangeError('a fit needs as many responses as levels')
+  if (weights !== undefined && weights.length !== x.length) throw new RangeError('a fit needs as many weights as levels')
+  squarable(x)
+  squarable(y)
   const w = weights ?? x.map(() => 1)
   const sumOfWeights = sum(w)
   const first = x[0] ?? 0
@@ -63,7 +77,10 @@ export function fitPolynomial({ x, y, weights, degree, throughZero = false }: Fi
   const variance = solved.residualSumOfSquares / solved.df
   const back = powersOfX(powers, degree, centre, scale)
   const coefficients = back.map((line) => sum(line.map((value, k) => value * (solved.coefficients[k] ?? 0))))
-  const covariance = back.map((left) => back.map((right) => variance * sum(left.flatMap((a, k) => right.map((b, l) => a * b * (solved.unscaledCovariance[k]?.[l] ?? 0))))))
+  const centred = solved.unscaledCovariance.map((line) => line.map((value) => variance * value))
+  const covariance = back.map((left) => back.map((right) => sum(left.flatMap((a, k) => right.map((b, l) => a * b * (centred[k]?.[l] ?? 0))))))
+  // A variance that became zero or infinite on the way is no variance.
+  if (![...coefficients, ...covariance.flat()].every(Number.isFinite) || (variance > 0 && covariance.slice(from).some((line, k) => !((line[k + from] ?? 0) > 0)))) throw new RangeError('the values are too large or too small for this fit')
   const meanY = (y[0] ?? 0) + sum(y.map((value, i) => (w[i] ?? 1) * (value - (y[0] ?? 0)))) / sumOfWeights
   const about = throughZero ? 0 : meanY
   const total = sum(y.map((value, i) => (w[i] ?? 1) * (value - about) ** 2))
@@ -74,7 +91,7 @@ export function fitPolynomial({ x, y, weights, degree, throughZero = false }: Fi
     n: x.length, parameters: powers.length, df: solved.df, x, y, weights: w, fitted: solved.fitted, residuals: solved.residuals,
     residualSumOfSquares: solved.residualSumOfSquares, residualStandardDeviation: Math.sqrt(variance), rSquared,
     correlation: degree === 1 && !throughZero && rSquared !== undefined ? Math.sign(coefficients[1] ?? 0) * Math.sqrt(Math.max(0, rSquared)) : undefined,
-    sumOfWeights, meanX, sumOfSquaresX,
+    sumOfWeights, meanX, sumOfSquaresX, centred: { centre, scale, powers, coefficients: solved.coefficients, covariance: centred },
   }
 }
 
@@ -90,47 +107,56 @@ function binomial(n: number, k: number): number {
 }
 
 /** Fitted response at x and its standard error. */
-export function predict(fit: Fit, x: number): { readonly value: number; readonly standardError: number } {
-  const powers = fit.coefficients.map((_, power) => x ** power)
-  const value = sum(powers.map((power, k) => power * (fit.coefficients[k] ?? 0)))
-  const variance = sum(powers.flatMap((left, k) => powers.map((right, l) => left * right * (fit.covariance[k]?.[l] ?? 0))))
+export function predict(fit: Pick<Fit, 'centred'>, x: number): { readonly value: number; readonly standardError: number } {
+  const { centre, scale, powers, coefficients, covariance } = fit.centred
+  const at = powers.map((power) => ((x - centre) / scale) ** power)
+  const value = sum(at.map((term, k) => term * (coefficients[k] ?? 0)))
+  const variance = sum(at.flatMap((left, k) => at.map((right, l) => left * right * (covariance[k]?.[l] ?? 0))))
   return { value, standardError: Math.sqrt(Math.max(0, variance)) }
 }
 
-/** Interval of the mean response at x (Student, df of the fit). */
+/** Interval of the mean response at x: fitted ± t·its standard error. Source: Draper & Smith, 3rd ed., section 3.1. */
 export function confidenceBand(fit: Fit, x: number, level: number): Interval {
   const { value, standardError } = predict(fit, x)
   const half = studentQuantile((1 + level) / 2, fit.df) * standardError
   return { low: value - half, high: value + half, level }
 }
 
-/** Interval of one further response at x; `weightAtX` is its weight in a weighted fit. */
+/** Interval of one further response at x; `weightAtX` is its weight in a weighted fit. Throws on a weight that is not above zero. Source: as above. */
 export function predictionInterval(fit: Fit, x: number, level: number, weightAtX = 1): Interval {
+  if (!(weightAtX > 0)) throw new RangeError('a weight must be positive and finite')
   const { value, standardError } = predict(fit, x)
   const half = studentQuantile((1 + level) / 2, fit.df) * Math.hypot(standardError, fit.residualStandardDeviation / Math.sqrt(weightAtX))
   return { low: value - half, high: value + half, level }
 }
 
-/** Interval of a coefficient by its power (Student, df of the fit). */
+/** Interval of a coefficient by its power: ± t·its standard error. Throws on a power that was not fitted. Source: Draper & Smith, 3rd ed., section 1.4. */
 export function coefficientInterval(fit: Fit, power: number, level: number): Interval {
-  const value = fit.coefficients[power] ?? 0
-  const half = studentQuantile((1 + level) / 2, fit.df) * (fit.standardErrors[power] ?? 0)
+  const [value, error] = [fit.coefficients[power], fit.standardErrors[power]]
+  if (value === undefined || error === undefined || (power === 0 && fit.throughZero)) throw new RangeError('the fit has no coefficient of this power')
+  const half = studentQuantile((1 + level) / 2, fit.df) * error
   return { low: value - half, high: value + half, level }
 }
 
 export type InversePrediction = { readonly x: number } | { readonly outside: 'below' | 'above' | 'no root' }
 
-/** The x within the range whose fitted response is y; a quadratic takes the root inside the range. Degrees 1 and 2. */
+/**
+ * The x within the range whose fitted response is y; a parabola takes the root inside the range. `below` and `above` tell on which side of
+ * the range x would lie. Two roots inside give `no root`: which one is meant cannot be known. Throws above degree 2.
+ */
 export function inversePredict(fit: Pick<Fit, 'coefficients'>, y: number, range: { readonly low: number; readonly high: number }): InversePrediction {
+  if (fit.coefficients.length > 3) throw new RangeError('inverse prediction needs a line or a parabola')
   const [a = 0, b = 0, c = 0] = fit.coefficients
   const slack = (range.high - range.low) * 1e-12
   const inside = rootsOf(a - y, b, c).filter((x) => x >= range.low - slack && x <= range.high + slack)
-  if (inside[0] !== undefined) return { x: Math.min(range.high, Math.max(range.low, inside[0])) }
+  const [first, second] = inside
+  if (first !== undefined && second !== undefined && Math.abs(first - second) > slack) return { outside: 'no root' }
+  if (first !== undefined) return { x: Math.min(range.high, Math.max(range.low, first)) }
   const at = (x: number): number => a + b * x + c * x * x
   const [low, high] = [at(range.low), at(range.high)]
-  if ((high > low ? y < low : y > low) && rootsOf(a - y, b, c).length > 0) return { outside: 'below' }
-  if (high > low ? y > high : y < high) return { outside: 'above' }
-  return { outside: high === low ? 'no root' : (high > low ? y < low : y > low) ? 'below' : 'no root' }
+  if (low === high) return { outside: 'no root' }
+  if (high > low ? y < low : y > low) return { outside: 'below' }
+  return { outside: (high > low ? y > high : y < high) ? 'above' : 'no root' }
 }
 
 /** Real roots of a + bx + cx², by the form that does not cancel. */
@@ -143,26 +169,38 @@ function rootsOf(a: number, b: number, c: number): readonly number[] {
 }
 
 /**
- * Standard error of x read from the mean of `replicates` responses y0, straight line (first-order; Miller & Miller, section 5.6;
- * weighted: section 5.10). `weightAtX` is the weight of one response at that level.
+ * Standard error of x read on a straight line from the mean of `replicates` responses y0, to first order; `weightAtX` is the weight of
+ * one response at that level, and infinitely many replicates leave the error of the line alone. Throws on other fits and without slope.
+ * Source: Miller & Miller, Statistics and Chemometrics for Analytical Chemistry, sections 5.6 and 5.10 (weighted).
  */
 export function inversePredictionStandardError(fit: Fit, y0: number, replicates: number, weightAtX = 1): number {
-  const [a = 0, b = 0] = fit.coefficients
-  if (b === 0) throw new RangeError('inverse prediction needs a slope other than zero')
+  const [a = 0, b = 0] = lineOf(fit)
+  if (!(replicates > 0 && weightAtX > 0)) throw new RangeError('inverse prediction needs replicates and a weight above zero')
   const x0 = (y0 - a) / b
   const lever = fit.throughZero ? x0 ** 2 / sum(fit.x.map((x, i) => (fit.weights[i] ?? 1) * x * x)) : 1 / fit.sumOfWeights + (x0 - fit.meanX) ** 2 / fit.sumOfSquaresX
   return (fit.residualStandardDeviation / Math.abs(b)) * Math.sqrt(1 / (replicates * weightAtX) + lever)
 }
 
-/** Fieller's interval of x read from y0 (Draper & Smith, section 3.2). Throws when the slope is not significant: the interval is then unbounded. */
-export function fiellerInterval(fit: Fit, y0: number, replicates: number, level: number): Interval {
-  const [a = 0, b = 0] = fit.coefficients
+/**
+ * Fieller's interval of x read from the mean of `replicates` responses y0 on a line with intercept. Throws on other fits, and when the
+ * slope is not significant: the interval is then unbounded. Source: Draper & Smith, 3rd ed., section 3.2.
+ */
+export function fiellerInterval(fit: Fit, y0: number, replicates: number, level: number, weightAtX = 1): Interval {
+  const [a = 0, b = 0] = lineOf(fit)
+  if (fit.throughZero) throw new RangeError('this interval needs a line with intercept')
+  if (!(replicates > 0 && weightAtX > 0)) throw new RangeError('inverse prediction needs replicates and a weight above zero')
   const t = studentQuantile((1 + level) / 2, fit.df)
   const s = fit.residualStandardDeviation
   const g = (t * s) ** 2 / (b * b * fit.sumOfSquaresX)
   if (!(g < 1)) throw new RangeError('the slope is not significant, so the interval has no bounds')
   const distance = (y0 - a) / b - fit.meanX
-  const half = ((t * s) / Math.abs(b)) * Math.sqrt((1 - g) * (1 / replicates + 1 / fit.sumOfWeights) + distance ** 2 / fit.sumOfSquaresX)
+  const half = ((t * s) / Math.abs(b)) * Math.sqrt((1 - g) * (1 / (replicates * weightAtX) + 1 / fit.sumOfWeights) + distance ** 2 / fit.sumOfSquaresX)
   const centre = fit.meanX + distance / (1 - g)
   return { low: centre - half / (1 - g), high: centre + half / (1 - g), level }
+}
+
+function lineOf(fit: Fit): readonly number[] {
+  if (fit.degree !== 1) throw new RangeError('this needs a straight line')
+  if (fit.coefficients[1] === 0) throw new RangeError('inverse prediction needs a slope other than zero')
+  return fit.coefficients
 }

@@ -1,5 +1,6 @@
 // Rounding in decimal arithmetic on the shortest decimal text of a double, so that 2.675 rounds to 2.68 and not, as its binary value
 // would, to 2.67. Ties go away from zero (half up) or to the even neighbour (half even); only the digits of the text are looked at.
+// Digits beyond the fifteenth are noise of binary arithmetic and are rounded off first: 98.24999999999999 is a computed 98.25.
 
 export type RoundingMode = 'half up' | 'half even'
 
@@ -27,7 +28,7 @@ export function roundHalfEven(value: number, decimals: number): Rounded {
   return roundToDecimals(value, decimals, 'half even')
 }
 
-/** Rounds to significant digits (at least one). Zero has none and stays `0`. */
+/** Rounds to significant digits. Zero has none and stays `0`. Throws below one digit and on values that are not finite. */
 export function roundSignificant(value: number, digits: number, mode: RoundingMode): Rounded {
   if (!(Number.isInteger(digits) && digits >= 1)) throw new RangeError('rounding needs at least one significant digit')
   if (value === 0) return { text: '0', value: 0 }
@@ -38,14 +39,14 @@ export function roundSignificant(value: number, digits: number, mode: RoundingMo
   return decimalOf(rounded.value).exponent > decimal.exponent ? roundToDecimals(value, decimals - 1, mode) : rounded
 }
 
-/** Decimals as typed: `5.0` has 1, `1e-3` has 3, `5` has none. */
+/** Decimals as typed: `5.0` has 1, `1e-3` has 3, `5` has none. Throws when the text is no number. */
 export function decimalsOf(text: string): number {
   const match = /^[+-]?\d*(?:\.(\d*))?(?:[eE]([+-]?\d+))?$/.exec(text.trim())
   if (match === null) throw new RangeError('not the text of a number')
   return Math.max(0, (match[1]?.length ?? 0) - Number(match[2] ?? 0))
 }
 
-/** Significant figures as typed: `0.050` has 2, `100` has 3 (trailing zeros of a whole number count, since they were typed). */
+/** Significant figures as typed: `0.050` has 2, `100` has 3 (trailing zeros of a whole number count, since they were typed). Throws when the text is no number. */
 export function significantFiguresOf(text: string): number {
   const match = /^[+-]?(\d*)(?:\.(\d*))?(?:[eE][+-]?\d+)?$/.exec(text.trim())
   if (match === null) throw new RangeError('not the text of a number')
@@ -54,6 +55,7 @@ export function significantFiguresOf(text: string): number {
 
 function roundToDecimals(value: number, decimals: number, mode: RoundingMode): Rounded {
   if (!Number.isFinite(value)) throw new RangeError('rounding needs a finite number')
+  if (!Number.isInteger(decimals)) throw new RangeError('rounding needs a whole number of decimals')
   const { negative, digits, exponent } = decimalOf(value)
   const kept = exponent + decimals
   let head = kept <= 0 ? '0' : digits.slice(0, kept).padEnd(kept, '0')
@@ -74,6 +76,7 @@ function roundsUp(head: string, tail: string, mode: RoundingMode): boolean {
 }
 
 function decimalOf(value: number): Decimal {
-  const [mantissa = '0', exponent = '0'] = Math.abs(value).toExponential().split('e')
+  const shortest = Math.abs(value).toExponential()
+  const [mantissa = '0', exponent = '0'] = (shortest.indexOf('e') > 16 ? Math.abs(value).toExponential(14) : shortest).split('e')
   return { negative: value < 0, digits: mantissa.replace('.', ''), exponent: Number(exponent) + 1 }
 }

@@ -1,7 +1,7 @@
 // Components of variance from runs of replicates: one-way and nested, balanced or not. A negative estimate is kept as `raw` and
 // truncated to zero, never hidden; unbalanced designs use n0, not n.
-import { type Interval, mean, sum } from './describe.ts'
-import { chiSquareQuantile, fisherCdf, studentQuantile } from './distributions.ts'
+import { type Interval, mean, squarable, sum } from './describe.ts'
+import { chiSquareQuantile, fisherUpperTail, studentQuantile } from './distributions.ts'
 
 export interface OneWay {
   readonly groups: number
@@ -25,13 +25,13 @@ export interface OneWay {
   readonly totalVariance: number
 }
 
-/** One-way random-effects analysis of variance. Source: ISO 5725-2:2019, clause 7; Searle, Casella & McCulloch, Variance Components, section 3.6. */
+/** One-way random-effects analysis of variance. Throws below two groups, without replicates, and when replicates do not scatter. Source: ISO 5725-2:2019, clause 7; Searle, Casella & McCulloch, Variance Components, section 3.6. */
 export function oneWay(groups: readonly (readonly number[])[]): OneWay {
   const n = groups.reduce((count, group) => count + group.length, 0)
   if (groups.length < 2) throw new RangeError('analysis of variance needs at least two groups')
   if (groups.some((group) => group.length === 0)) throw new RangeError('a group without values')
   if (n - groups.length < 1) throw new RangeError('analysis of variance needs replicates in at least one group')
-  const all = groups.flat()
+  const all = squarable(groups.flat())
   const offset = mean(all)
   const centred = groups.map((group) => group.map((value) => value - offset))
   const grand = mean(centred.flat())
@@ -49,7 +49,7 @@ export function oneWay(groups: readonly (readonly number[])[]): OneWay {
   const F = meanSquareBetween / meanSquareWithin
   return {
     groups: groups.length, n, n0, sumOfSquaresBetween, sumOfSquaresWithin, dfBetween, dfWithin, meanSquareBetween, meanSquareWithin, F,
-    probability: 1 - fisherCdf(F, dfBetween, dfWithin), grandMean: offset + grand, betweenVarianceRaw, betweenVariance,
+    probability: fisherUpperTail(F, dfBetween, dfWithin), grandMean: offset + grand, betweenVarianceRaw, betweenVariance,
     truncated: betweenVarianceRaw < 0, withinVariance: meanSquareWithin, totalVariance: meanSquareWithin + betweenVariance,
   }
 }
@@ -60,10 +60,12 @@ export interface MeanSquareTerm {
   readonly df: number
 }
 
-/** Effective degrees of freedom of a sum of mean squares. Source: Satterthwaite, Biometrics Bulletin 2 (1946) 110. */
+/** Effective degrees of freedom of a sum of mean squares: its square over Σ (coefficient·mean square)²/df. Throws when the sum is not above zero. Source: Satterthwaite, Biometrics Bulletin 2 (1946) 110. */
 export function satterthwaite(terms: readonly MeanSquareTerm[]): { readonly variance: number; readonly df: number } {
   const variance = sum(terms.map((term) => term.coefficient * term.meanSquare))
-  return { variance, df: variance ** 2 / sum(terms.map((term) => (term.coefficient * term.meanSquare) ** 2 / term.df)) }
+  if (!(variance > 0)) throw new RangeError('the sum of mean squares is not above zero')
+  // By shares of the sum: fourth powers of the values themselves would overflow.
+  return { variance, df: 1 / sum(terms.map((term) => ((term.coefficient * term.meanSquare) / variance) ** 2 / term.df)) }
 }
 
 /** Mean squares whose sum is the intermediate-precision variance; within alone when the between component is truncated. */
@@ -83,11 +85,12 @@ export function modifiedLargeSampleInterval(anova: OneWay, level: number): Inter
   return modifiedLargeSampleIntervalOf(intermediateTerms(anova), level)
 }
 
-/** The same for any sum of mean squares. */
+/** The same for any sum of mean squares. Throws on a negative coefficient. */
 export function modifiedLargeSampleIntervalOf(terms: readonly MeanSquareTerm[], level: number): Interval {
   if (terms.some((term) => term.coefficient < 0)) throw new RangeError('the modified large sample interval needs coefficients of at least zero')
   const variance = sum(terms.map((term) => term.coefficient * term.meanSquare))
-  const spread = (p: number): number => Math.sqrt(sum(terms.map((term) => ((term.df / chiSquareQuantile(p, term.df) - 1) * term.coefficient * term.meanSquare) ** 2)))
+  if (!(variance > 0)) throw new RangeError('the sum of mean squares is not above zero')
+  const spread = (p: number): number => variance * Math.sqrt(sum(terms.map((term) => (((term.df / chiSquareQuantile(p, term.df) - 1) * term.coefficient * term.meanSquare) / variance) ** 2)))
   return { low: Math.sqrt(Math.max(0, variance - spread((1 + level) / 2))), high: Math.sqrt(variance + spread((1 - level) / 2)), level }
 }
 
@@ -97,7 +100,10 @@ export function satterthwaiteInterval(terms: readonly MeanSquareTerm[], level: n
   return { low: Math.sqrt((variance * df) / chiSquareQuantile((1 + level) / 2, df)), high: Math.sqrt((variance * df) / chiSquareQuantile((1 - level) / 2, df)), level, df }
 }
 
-/** Interval of the grand mean of results nested in runs: between-run mean square, p − 1 degrees of freedom. N − 1 would be far too many. */
+/**
+ * Interval of the grand mean of results nested in runs: between-run mean square, runs − 1 degrees of freedom; N − 1 would be far too many.
+ * Exact for runs of one size. Source: Searle, Casella & McCulloch, Variance Components, section 3.6.
+ */
 export function nestedMeanInterval(anova: OneWay, level: number): Interval & { readonly df: number; readonly standardError: number } {
   const standardError = Math.sqrt(anova.meanSquareBetween / anova.n)
   const half = studentQuantile((1 + level) / 2, anova.dfBetween) * standardError
@@ -127,7 +133,7 @@ export interface Nested {
   readonly terms: readonly MeanSquareTerm[]
 }
 
-/** Two-stage nested random-effects analysis (`data[outer][inner][replicate]`), balanced or not. Source: Searle, Casella & McCulloch, section 3.8 (expected mean squares). */
+/** Two-stage nested random-effects analysis (`data[outer][inner][replicate]`), balanced or not. Throws when a stage has no degree of freedom. Source: Searle, Casella & McCulloch, section 3.8 (expected mean squares). */
 export function nested(data: readonly (readonly (readonly number[])[])[]): Nested {
   const cells = data.flat()
   const n = cells.reduce((count, cell) => count + cell.length, 0)
@@ -136,7 +142,7 @@ export function nested(data: readonly (readonly (readonly number[])[])[]): Neste
   if (a < 2) throw new RangeError('a nested analysis needs at least two outer groups')
   if (b - a < 1) throw new RangeError('a nested analysis needs an outer group with two inner ones')
   if (n - b < 1 || cells.some((cell) => cell.length === 0)) throw new RangeError('a nested analysis needs replicates')
-  const offset = mean(cells.flat())
+  const offset = mean(squarable(cells.flat()))
   const centred = data.map((outer) => outer.map((inner) => inner.map((value) => value - offset)))
   const grand = mean(centred.flat(2))
   const outerMeans = centred.map((outer) => mean(outer.flat()))
