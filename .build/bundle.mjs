@@ -30,9 +30,14 @@ writeFileSync(join(dist, 'PACKAGES.txt'), packagesNotice(result.metafile))
 /** Every bundled package with its licence text, as their licences ask. */
 function packagesNotice(metafile) {
   const folders = new Set(Object.keys(metafile.inputs).flatMap((input) => /^(.*node_modules\/(?:@[^/]+\/)?[^/]+)\//.exec(input)?.[1] ?? []))
-  return [...folders].sort().map((folder) => {
+  const owners = new Map()
+  const packages = [...folders].sort().map((folder) => {
     const about = JSON.parse(readFileSync(join(root, folder, 'package.json'), 'utf8'))
     const text = readdirSync(join(root, folder)).filter((name) => /^(licen[cs]e|notice)/i.test(name)).sort().map((name) => readFileSync(join(root, folder, name), 'utf8').trim())
-    return [`${about.name} ${about.version} (${typeof about.license === 'string' ? about.license : 'see below'})`, ...text].join('\n\n')
-  }).join('\n\n----\n\n') + '\n'
+    const name = `${about.name} ${about.version} (${typeof about.license === 'string' ? about.license : 'see below'})`
+    for (const each of text) owners.set(each, [...(owners.get(each) ?? []), about.name])
+    return name
+  })
+  const texts = [...owners].map(([text, names]) => `${names.join(', ')}\n\n${text}`)
+  return `${packages.join('\n')}\n\n----\n\n${texts.join('\n\n----\n\n')}\n`
 }

@@ -100,7 +100,7 @@ function findHeader(rows: readonly CsvRow[], request: SourceFileRequest): Header
   const declared = file.headerRow === undefined ? undefined : rows.find((row) => row.line === file.headerRow)
   const row = declared ?? (file.headerRow === undefined ? rows.find((each) => needed.every((heading) => headingsOf(each).includes(heading))) : undefined)
   if (row === undefined) {
-    const best = [...rows.slice(0, 200)].sort((left, right) => held(right, needed) - held(left, needed))[0]
+    const best = rows.slice(0, 200).sort((left, right) => held(right, needed) - held(left, needed))[0]
     const place: Place = { file: file.path, line: file.headerRow ?? best?.line ?? 1, column: 1 }
     if (file.headerRow !== undefined || best === undefined || held(best, needed) === 0) {
       return { problems: [diagnostic('data/no-header', `No line of \`${file.path}\` holds the headings that dataset \`${source.name}\` maps`, { place, actual: (best?.cells ?? []).map(tidied).filter((cell) => cell !== '').slice(0, 12).join(', '), expected: needed.join(', '), mend: 'Correct the headings under `columns:`, the `delimiter:`, or declare `header-row:`' })] }

@@ -37,6 +37,12 @@ export function asTyped(value: number): NumberNode {
   return { type: 'number', value, text: exponentText(withTrueMinus(String(value))) }
 }
 
+/** A finding: as it stands when it is a short number (a tested level), with four significant digits otherwise. */
+export function asFound(value: number): NumberNode {
+  const shortest = asTyped(value)
+  return shortest.text.replace(/[^0-9]/g, '').replace(/^0+/, '').length <= 4 && !shortest.text.includes('×') ? shortest : printed(value)
+}
+
 /** A measured value: as it stands when it was read, with seven significant digits when it is a mean of several. */
 export function asMeasured(value: number): NumberNode {
   const shortest = asTyped(value)

@@ -4,7 +4,7 @@ import type { Finding, Verdict } from '../assess/finding.ts'
 import type { Limit } from '../definition/study.ts'
 import type { Inline } from './document.ts'
 import { joined, sentence, textOf } from './build.ts'
-import { asTyped, numberText } from './numbers.ts'
+import { asFound, asTyped, numberText } from './numbers.ts'
 
 const severity: Readonly<Record<Verdict['verdict'], number>> = { misses: 4, 'not evaluable': 3, meets: 2, 'information only': 1, 'not performed': 0 }
 
@@ -60,9 +60,7 @@ export function whereWords(where: { readonly level?: number | undefined; readonl
 
 /** Four significant digits, or as many more as show on which side of the limit the value lies. */
 function decisionText(value: number, limit: Limit): string {
-  // A level that was tested, or any other short number, stands as it is.
-  const shortest = asTyped(value).text
-  if (shortest.replace(/[^0-9]/g, '').replace(/^0+/, '').length <= 4 && !shortest.includes('×')) return shortest
+  if (asFound(value).text === asTyped(value).text) return asFound(value).text
   const bounds = limit.kind === 'between' ? [limit.low.value, limit.high.value] : [limit.bound.value]
   for (let significant = 4; significant < 12; significant += 1) {
     const text = numberText(value, { significant })

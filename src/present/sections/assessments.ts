@@ -4,7 +4,7 @@ import type { RecordedAssessment } from '../../assess/record.ts'
 import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
-import { asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
+import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
 import { resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
 
@@ -81,7 +81,7 @@ function findingsTable(section: Section, findings: readonly Finding[], prefix: s
     ],
     rows: findings.map((finding) => row(
       [...textOf(metricLabel(section, finding.characteristic, finding.metric)), ...where(finding, levelUnit)],
-      [printed(finding.value), ...unitWords(finding.unit)],
+      [asFound(finding.value), ...unitWords(finding.unit)],
       finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}`,
       finding.n === undefined ? '' : count(finding.n), finding.df === undefined ? '' : degreesOfFreedom(finding.df),
     )),
