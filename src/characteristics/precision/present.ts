@@ -18,14 +18,14 @@ function unit(text: string): string {
 }
 
 function at({ measurand }: Shown, level: PrecisionLevel): readonly Inline[] {
-  return level.level === undefined ? textOf('over all results') : sentence`at ${asTyped(level.level)}${unit(measurand.unit)}`
+  return level.level === undefined ? [] : sentence`at ${asTyped(level.level)}${unit(measurand.unit)}`
 }
 
 function summary(shown: Shown): ReportBlock {
   const { detail, measurand } = shown
   return paragraph(
     ...detail.levels.map((level) => joined([
-      sentence`${count(level.n)} results in ${count(level.runs.length)} ${level.runs.length === 1 ? 'run' : 'runs'} ${at(shown, level)} have a repeatability standard deviation of ${printed(level.repeatability.value)}${unit(measurand.unit)}`,
+      sentence`${count(level.n)} results in ${count(level.runs.length)} ${level.runs.length === 1 ? 'run' : 'runs'}${level.level === undefined ? [] : [...textOf(' '), ...at(shown, level)]} have a repeatability standard deviation of ${printed(level.repeatability.value)}${unit(measurand.unit)}`,
       level.intermediate === undefined ? [] : sentence`and an intermediate-precision standard deviation of ${printed(level.intermediate.value)}${unit(measurand.unit)}`,
     ], ' ').concat(textOf('.'))),
     ...(detail.levels.some((level) => level.truncated) ? [textOf('A negative component of variance was estimated and is taken as zero; the estimate stands in the table.')] : []),
@@ -106,7 +106,7 @@ function components(shown: Shown): readonly ReportBlock[] {
       ...(levels.some((level) => level.truncated) ? { notes: ['A negative estimate is taken as zero for the standard deviation; the mean square within runs then stands alone.'] } : {}),
     }),
     ...levels.slice(-1).map((level) => figure({
-      id: `${prefix}-components-chart`, caption: [...textOf(`Components of the spread of ${measurand.name} `), ...at(shown, level), ...sentence`, n = ${count(level.n)}`],
+      id: `${prefix}-components-chart`, caption: [...textOf(`Components of the spread of ${measurand.name}${level.level === undefined ? '' : ' '}`), ...at(shown, level), ...sentence`, n = ${count(level.n)}`],
       alternative: `Standard deviations of the components ${level.components.map((each) => each.component).join(', ')} and of the whole.`,
       chart: componentBarsChart({
         xTitle: `standard deviation / ${measurand.unit}`,
