@@ -1,7 +1,7 @@
 // How each kind of certified case is computed by the program: data of the case → figures under the names its source uses.
 // Only names are translated here; nothing is computed but ratios that a source prints beside what the program gives.
-import { bartlett, brownForsythe, type DifferenceTest, equivalence, oneSampleT, pairedT, pooledT, varianceRatio, welch } from '../../src/statistics/compare.ts'
-import { currieCriticalValue } from '../../src/statistics/detection.ts'
+import { bartlett, brownForsythe, levene, type DifferenceTest, equivalence, oneSampleT, pairedT, pooledT, varianceRatio, welch } from '../../src/statistics/compare.ts'
+import { currieCriticalValue, currieMinimumDetectable } from '../../src/statistics/detection.ts'
 import { mean, meanInterval, standardDeviation, standardDeviationInterval, summary } from '../../src/statistics/describe.ts'
 import { chiSquareQuantile, fisherCdf, fisherQuantile, normalCdf, normalQuantile, studentQuantile } from '../../src/statistics/distributions.ts'
 import { predictedReproducibility } from '../../src/statistics/horwitz.ts'
@@ -10,14 +10,17 @@ import { leastSquares } from '../../src/statistics/least-squares.ts'
 import { grubbs, grubbsCritical } from '../../src/statistics/outliers.ts'
 import { coefficientInterval, type Fit, fitPolynomial, inversePredict, inversePredictionStandardError } from '../../src/statistics/regression.ts'
 import { nested, nestedMeanInterval, oneWay, satterthwaite } from '../../src/statistics/variance-components.ts'
+import { certifiedLimits } from './certified-limits.ts'
+import { certifiedReferences } from './certified-references.ts'
 
 type Data = Readonly<Record<string, unknown>>
 const numbers = (value: unknown): readonly number[] => value as readonly number[]
 
 export const certifiedStatistics: Readonly<Record<string, (data: Data) => unknown>> = {
+  ...certifiedLimits, ...certifiedReferences,
   'one-way': ofOneWay, spreads, 'one-sample': oneSample, anscombe, line, 'weighted-line': weightedLine, describe, 'grubbs-critical': ofGrubbsCritical, grubbs: ofGrubbs,
   'summary-variance-ratio': summaryVarianceRatio, horwitz: (data) => ({ prsd_R_percent: numbers(data['mass_fraction']).map(predictedReproducibility) }), 'nist-regression': nistRegression,
-  't-one-sided-99': (data) => ({ t: numbers(data['n']).map((n) => studentQuantile(0.99, n - 1)) }), currie, 'din-calibration': din, 'ich-factors': ich, nested: ofNested, quantiles, tost, paired, 'two-samples': twoSamples,
+  't-one-sided-99': (data) => ({ t: numbers(data['n']).map((n) => studentQuantile(0.99, n - 1)) }), currie, 'din-calibration': din, nested: ofNested, quantiles, tost, paired, 'two-samples': twoSamples,
 }
 
 function groupsOf(data: Data): readonly (readonly number[])[] {
@@ -50,9 +53,9 @@ function ofOneWay(data: Data): unknown {
 
 function spreads(data: Data): unknown {
   const groups = groupsOf(data)
-  const [b, bf, anova] = [bartlett(groups), brownForsythe(groups), oneWay(groups)]
+  const [b, bf, centred, anova] = [bartlett(groups), brownForsythe(groups), levene(groups), oneWay(groups)]
   return {
-    bartlett: { K2: b.statistic, df: b.df, p: b.probability }, brown_forsythe: { F: bf.F, p: bf.probability }, bartlett_T: b.statistic, bartlett_crit: chiSquareQuantile(0.95, b.df),
+    bartlett: { K2: b.statistic, df: b.df, p: b.probability }, brown_forsythe: { F: bf.F, p: bf.probability }, levene: { F: centred.F, p: centred.probability }, bartlett_T: b.statistic, bartlett_crit: chiSquareQuantile(0.95, b.df),
     brown_forsythe_W: bf.F, F_crit: fisherQuantile(0.95, bf.df1, bf.df2), anova_F: anova.F, anova_p: anova.probability, ss_between: anova.sumOfSquaresBetween, ss_within: anova.sumOfSquaresWithin,
   }
 }
@@ -73,24 +76,22 @@ function lineFigures(fit: Fit): Readonly<Record<string, unknown>> {
 }
 
 function anscombe(data: Data): unknown {
-  const fits = ['set1', 'set2', 'set3', 'set4'].map((name) => {
-    const set = data[name] as { readonly x: readonly number[]; readonly y: readonly number[] }
-    return { ...set, fit: fitPolynomial({ ...set, degree: 1 }) }
-  })
-  const second = fits[1]
-  if (second === undefined || mandelTest(second.fit, fitPolynomial({ x: second.x, y: second.y, degree: 2 })).probability > 1e-6) throw new Error('the second set is curved, and the test does not see it')
-  // What is published for the four sets jointly is checked on the third, the one whose figures lie furthest from the others.
-  return { all_four_sets: lineFigures(fits[2]?.fit ?? fits[0]!.fit), set1_R_output: lineFigures(fits[0]!.fit) }
+  const sets = Object.entries(data as Readonly<Record<string, { readonly x: readonly number[]; readonly y: readonly number[] }>>)
+  const fits = Object.fromEntries(sets.map(([name, set]) => [name, fitPolynomial({ ...set, degree: 1 })]))
+  const second = data['set2'] as { readonly x: readonly number[]; readonly y: readonly number[] }
+  if (mandelTest(fits['set2']!, fitPolynomial({ ...second, degree: 2 })).probability > 1e-6) throw new Error('the second set is curved, and the test does not see it')
+  return { ...Object.fromEntries(Object.entries(fits).map(([name, fit]) => [name, lineFigures(fit)])), set1_R_output: lineFigures(fits['set1']!) }
 }
 
 function line(data: Data): unknown {
   const [x, y] = [numbers(data['x']), numbers(data['y'])]
   const fit = fitPolynomial({ x, y, degree: 1 })
   const [intercept = 0, slope = 0] = fit.coefficients
-  const half = (power: number): number => {
+  const bounds = (power: number): readonly [number, number] => {
     const { low, high } = coefficientInterval(fit, power, 0.95)
-    return (high - low) / 2
+    return [low, high]
   }
+  const half = (power: number): number => (bounds(power)[1] - bounds(power)[0]) / 2
   const t = studentQuantile(0.975, fit.df)
   const unknown = data['unknown_y'] === undefined ? [] : Array.isArray(data['unknown_y']) ? numbers(data['unknown_y']) : [Number(data['unknown_y'])]
   const read = unknown.map((response) => inversePredict(fit, response, { low: Math.min(...x) - 1, high: Math.max(...x) + 1 }))
@@ -98,7 +99,7 @@ function line(data: Data): unknown {
   const errors = unknown.map((response) => inversePredictionStandardError(fit, response, 1))
   const replicated = new Set(x).size < x.length ? lackOfFit(fit) : undefined
   return {
-    ...lineFigures(fit), ci95_halfwidth_intercept: half(0), ci95_halfwidth_slope: half(1), x0: Array.isArray(data['unknown_y']) ? x0 : x0[0], s_x0: errors, ci95_halfwidth_x0: errors.map((error) => t * error),
+    ...lineFigures(fit), ci95_halfwidth_intercept: half(0), ci95_halfwidth_slope: half(1), ci95_intercept: bounds(0), ci95_slope: bounds(1), x0: Array.isArray(data['unknown_y']) ? x0 : x0[0], s_x0: errors, ci95_halfwidth_x0: errors.map((error) => t * error),
     s_x0_m1: errors[0], ...(unknown[0] === undefined ? {} : { s_x0_m4: inversePredictionStandardError(fit, unknown[0], 4) }),
     lod_y: intercept + 3 * fit.residualStandardDeviation, lod_x: (3 * fit.residualStandardDeviation) / slope,
     process_sd_sx0: fit.residualStandardDeviation / slope, process_cv_percent: (100 * fit.residualStandardDeviation) / slope / mean(x),
@@ -167,8 +168,8 @@ function nistRegression(data: Data): unknown {
       figures([Math.sqrt(interceptVariance), ...slopes.map((_, k) => Math.sqrt(variance * (fit.unscaledCovariance[k + 1]?.[k + 1] ?? 0)))]), mean(y))
   }
   const x = numbers(data['x'])
-  const throughZero = data['through_zero'] === true || y.length === 11 && x[0] === 60
-  const degree = throughZero ? 1 : x.length === 36 ? 1 : x.length === 82 ? 10 : 5
+  const throughZero = data['through_zero'] === true
+  const degree = Number(data['degree'])
   const fit = fitPolynomial({ x, y, degree, throughZero })
   const keep = (values: readonly number[]): Readonly<Record<string, number>> => Object.fromEntries(values.flatMap((value, k) => (throughZero && k === 0 ? [] : [[`B${k}`, value]])))
   return regressionFigures(y, fit.residualSumOfSquares, fit.df, fit.parameters - (throughZero ? 0 : 1), keep(fit.coefficients), keep(fit.standardErrors), throughZero ? 0 : mean(y), fit.rSquared)
@@ -183,10 +184,10 @@ function regressionFigures(y: readonly number[], residual: number, df: number, r
   }
 }
 
-function currie(): unknown {
-  // Known standard deviation: infinite degrees of freedom.
-  const z = currieCriticalValue(1, 1e9, 0.05, 1)
-  return { LC_over_sigma0: z, LD_over_sigma0: 2 * z, LQ_over_sigma0: 10 }
+function currie(data: Data): unknown {
+  const [alpha, beta] = [Number(data['alpha']), Number(data['beta'])]
+  // Known standard deviation: as good as infinite degrees of freedom.
+  return { LC_over_sigma0: currieCriticalValue(1, 1e9, alpha, 1), LD_over_sigma0: currieMinimumDetectable(1, 1e9, alpha, beta, 1) }
 }
 
 function din(data: Data): unknown {
@@ -200,11 +201,6 @@ function din(data: Data): unknown {
   }
 }
 
-function ich(data: Data): unknown {
-  const [sigma, slope] = [Number(data['sigma']), Number(data['slope'])]
-  return { lod: (3.3 * sigma) / slope, loq: (10 * sigma) / slope, lod_factor: 3.3, loq_factor: 10, signal_to_noise_lod: 3, signal_to_noise_loq: 10 }
-}
-
 function ofNested(data: Data): unknown {
   const found = nested(data['nested'] as readonly (readonly (readonly number[])[])[])
   const total = Math.sqrt(found.totalVariance)
@@ -214,7 +210,7 @@ function ofNested(data: Data): unknown {
   const stages = [found.outer, found.inner, found.residual]
   return {
     df: stages.map((stage) => stage.df), ss: stages.map((stage) => stage.sumOfSquares), ms: stages.map((stage) => stage.meanSquare), F_mid: found.inner.meanSquare / found.residual.meanSquare, F_top: found.outer.meanSquare / found.inner.meanSquare,
-    var_error: found.residual.meanSquare, var_mid: found.inner.varianceRaw, var_run: found.inner.varianceRaw, var_top: found.outer.varianceRaw, var_day: found.outer.varianceRaw, grand_mean: found.grandMean,
+    var_error: found.residual.meanSquare, var_mid: found.inner.varianceRaw, var_run: found.inner.varianceRaw, var_top: found.outer.varianceRaw, var_day: found.outer.varianceRaw, coefficients: Object.values(found.coefficients), grand_mean: found.grandMean,
     s_repeatability: Math.sqrt(found.residual.meanSquare), s_within_lab: total, df_within_lab: df, ci95_s_repeatability: [repeatability.low, repeatability.high], ci95_s_within_lab: [within.low, within.high],
   }
 }
