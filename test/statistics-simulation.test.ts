@@ -43,6 +43,22 @@ describe('95 % intervals cover the truth in 95 % of trials', () => {
     expect(covered).toBeLessThan(0.985)
   })
 
+  test.each([0, 0.5])('the same where many estimates of the component between runs are negative (true value %d)', (between) => {
+    const truth = Math.sqrt(1 + between ** 2)
+    let truncated = 0
+    const covered = share(18, (random) => {
+      const anova = oneWay(Array.from({ length: 6 }, () => {
+        const run = between * random.normal()
+        return Array.from({ length: 3 }, () => 50 + run + random.normal())
+      }))
+      if (anova.truncated) truncated += 1
+      return inside(modifiedLargeSampleInterval(anova, 0.95), truth)
+    })
+    expect(truncated).toBeGreaterThan(trials / 5)
+    expect(covered).toBeGreaterThan(0.95 - monteCarlo - 0.01)
+    expect(covered).toBeLessThan(0.985)
+  })
+
   test('Satterthwaite’s interval is not far off either, and that of the mean of nested results holds', () => {
     const draw = (random: ReturnType<typeof seededRandom>): ReturnType<typeof oneWay> => oneWay(Array.from({ length: 6 }, () => {
       const run = 1.5 * random.normal()
