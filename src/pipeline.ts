@@ -28,7 +28,7 @@ export interface ReadFile {
 export interface World {
   readonly program: { readonly name: string; readonly version: string }
   /** A file of the study, by its path relative to the study's folder. */
-  read(path: string): ReadFile | { readonly problem: string; readonly mend: string }
+  read(path: string, mayBeOutside?: boolean): ReadFile | { readonly problem: string; readonly mend: string }
   /** A shipped template by name, or undefined. */
   template(name: string): Uint8Array | undefined
   /** Names of the shipped templates. */
@@ -66,7 +66,7 @@ export function check(studyFile: ReadFile, world: World): Checked {
   const template = readTemplate(study, world, noticed)
   if (template !== undefined) files.push({ ...template, role: 'template' })
   if (study.report.supersedes !== undefined) {
-    const earlier = readOne(study.report.supersedes.value, study.report.supersedes.place, world, noticed)
+    const earlier = readOne(study.report.supersedes.value, study.report.supersedes.place, world, noticed, true)
     if (earlier !== undefined) files.push({ ...earlier, role: 'earlier record' })
   }
   const data = readData(study, new Map(raw.map((each) => [each.path, each.bytes])))
@@ -103,14 +103,14 @@ function readNamedFiles(study: StudyDefinition, world: World, noticed: Diagnosti
   for (const source of study.datasets.flatMap((dataset) => dataset.files)) {
     if (tried.has(source.path)) continue
     tried.add(source.path)
-    const file = readOne(source.path, source.place, world, noticed)
+    const file = readOne(source.path, source.place, world, noticed, source.outside === true)
     if (file !== undefined) read.set(source.path, { path: source.path, bytes: file.bytes })
   }
   return [...read.values()]
 }
 
-function readOne(path: string, place: Diagnostic['place'], world: World, noticed: Diagnostic[]): ReadFile | undefined {
-  const file = world.read(path)
+function readOne(path: string, place: Diagnostic['place'], world: World, noticed: Diagnostic[], mayBeOutside = false): ReadFile | undefined {
+  const file = world.read(path, mayBeOutside)
   if ('bytes' in file) return file
   noticed.push(diagnostic('command/unreadable-file', `Cannot read \`${path}\`: ${file.problem}`, { place, actual: file.problem, expected: 'a readable file in the folder of the study', mend: file.mend }))
   return undefined

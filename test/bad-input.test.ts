@@ -51,6 +51,16 @@ describe('bad input', () => {
     expect(readFileSync(dossier, 'utf8')).toBe(before)
   })
 
+  test('a file outside the folder is read when the study declares it', () => {
+    const folder = temporaryFolder()
+    cpSync(example, join(folder, 'study'), { recursive: true })
+    cpSync(join(example, 'standards.csv'), join(folder, 'shared.csv'))
+    writeFileSync(join(folder, 'study/study.yaml'), readFileSync(join(folder, 'study/study.yaml'), 'utf8').replace('files: [standards.csv]', 'files: { file: ../shared.csv, outside: true }'))
+    const done = run(['report', join(folder, 'study/study.yaml'), '--out', join(folder, 'out')])
+    expect(done.status, done.stderr).toBe(0)
+    expect(existsSync(join(folder, 'out/SM-001/revision-1/inputs/shared.csv'))).toBe(true)
+  })
+
   test.runIf(process.getuid?.() !== 0)('a data file that may not be read', () => {
     const folder = temporaryFolder()
     cpSync(example, folder, { recursive: true })

@@ -28,15 +28,14 @@ export function studyFolder(studyPath: string, templatesFolder = new URL('../tem
     template(name) {
       return templates.includes(name) ? readFileSync(resolve(shipped, `${name}.md`)) : undefined
     },
-    read(path) {
+    read(path, mayBeOutside = false) {
       const absolute = resolve(folder, path)
       if (isAbsolute(path)) return { problem: 'the path is absolute', mend: 'Write a path relative to the folder of the study' }
       const read = readBytes(absolute)
       if ('problem' in read) return read
       const real = relative(realpathSync(folder), realpathSync(absolute))
       const leaves = real.startsWith(`..${sep}`) || isAbsolute(real)
-      // An earlier record stands beside the study's own dossier, which may well be outside; only raw files and templates must be inside.
-      if (leaves && !path.endsWith('record.json')) return { problem: 'it lies outside the folder of the study', mend: 'Copy the file into the folder of the study' }
+      if (leaves && !mayBeOutside) return { problem: 'it lies outside the folder of the study', mend: 'Copy the file into the folder of the study, or declare `outside: true` beside `file:`' }
       return { path, bytes: read.bytes }
     },
   }

@@ -1,10 +1,10 @@
 // The key `data`: which files hold which rows, how they are written, which column is which field, and what one independent value is.
 import { diagnostic } from '../diagnostics/diagnostic.ts'
 import {
-  below, datasetName, type Field, listOf, located, mapOf, number, object, oneOf, optional, type ReadBy, type Reader, type Reading, required, text,
+  below, datasetName, type Field, flag, listOf, located, mapOf, number, object, oneOf, optional, type ReadBy, type Reader, type Reading, required, text,
 } from './fields.ts'
 import { checkKnown, checkNames } from './names.ts'
-import { pathInside } from './paths.ts'
+import { pathBeside, pathInside, reportOutside } from './paths.ts'
 import type { ColumnChoice, DatasetSource, FileSource } from './study.ts'
 import type { StudyNode } from './study-node.ts'
 
@@ -18,7 +18,9 @@ const dialect = {
   fixed: optional(fixedValues),
 } as const
 
-const fileMap = object({ file: required(pathInside('Path of the file')), ...dialect }, { describe: 'A file that is written differently from the others' })
+const fileMap = object({
+  file: required(pathBeside('Path of the file', 'raw/calibration.csv')), outside: optional(flag({ describe: 'The file lies outside the folder of the study, and this is meant' })), ...dialect,
+}, { describe: 'A file that is written differently from the others' })
 const plainPath = pathInside('Path of the file, relative to the study')
 
 const file: Reader<{ readonly node: StudyNode; readonly value: ReadBy<typeof fileMap> }> = {
@@ -26,7 +28,10 @@ const file: Reader<{ readonly node: StudyNode; readonly value: ReadBy<typeof fil
   read(node, reading) {
     if (node.kind === 'map') {
       const value = fileMap.read(node, reading)
-      return value === undefined ? undefined : { node, value }
+      if (value === undefined) return undefined
+      if (value.outside === true || !value.file.startsWith('../')) return { node, value }
+      reportOutside(value.file, node, reading)
+      return undefined
     }
     const path = plainPath.read(node, reading)
     return path === undefined ? undefined : { node, value: { file: path } as ReadBy<typeof fileMap> }
@@ -73,7 +78,7 @@ export function datasetsOf(read: ReadBy<typeof dataReader>): readonly DatasetSou
   return read.map(({ key, entry, value: { value } }) => ({
     name: key,
     files: value.files.map(({ node, value: own }): FileSource => ({
-      path: own.file, place: node.place, delimiter: own.delimiter ?? value.delimiter, decimal: own.decimal ?? value.decimal, encoding: own.encoding ?? value.encoding,
+      path: own.file, place: node.place, ...(own.outside === true ? { outside: true as const } : {}), delimiter: own.delimiter ?? value.delimiter, decimal: own.decimal ?? value.decimal, encoding: own.encoding ?? value.encoding,
       headerRow: own['header-row'] ?? value['header-row'], fixed: Object.fromEntries([...(value.fixed ?? []), ...(own.fixed ?? [])].map((each) => [each.key, each.value])),
     })),
     rows: (value.rows ?? []).map((each) => ({ column: each.key, accepted: each.value, place: each.entry.keyPlace })),

@@ -1,7 +1,8 @@
 // Paths in a study: relative to its folder, with `/`, the same on every system. Only the record of an earlier revision may lie outside.
 import { diagnostic } from '../diagnostics/diagnostic.ts'
 import { text } from './scalars.ts'
-import type { Reader } from './reading.ts'
+import type { Reader, Reading } from './reading.ts'
+import type { StudyNode } from './study-node.ts'
 
 /** Read without its `.` and `..` parts, so that one file has one path. */
 export function pathInside(describe: string, example = 'raw/calibration.csv'): Reader<string> {
@@ -35,10 +36,19 @@ function path(describe: string, example: string, isGood: (plain: string | undefi
       const plain = plainPath(typed)
       if (isGood(plain)) return plain
       const why = plain === undefined ? 'it is absolute, or written with other signs than `/`' : 'it leaves the folder, to outside the study'
-      reading.report(diagnostic('definition/path-outside', `Unexpected path \`${typed}\` for \`${reading.path}\`: ${why}`, { place: node.place, actual: typed, expected: `a path relative to the study, with \`/\`, ${expected}`, mend }))
+      report(typed, why, expected, mend, node, reading)
       return undefined
     },
   }
+}
+
+/** A file outside the folder of the study that is not declared to be there. */
+export function reportOutside(typed: string, node: StudyNode, reading: Reading): void {
+  report(typed, 'it leaves the folder, to outside the study', 'that stays in its folder', 'Copy the file into the folder of the study, or declare `outside: true` beside `file:`', node, reading)
+}
+
+function report(typed: string, why: string, expected: string, mend: string, node: StudyNode, reading: Reading): void {
+  reading.report(diagnostic('definition/path-outside', `Unexpected path \`${typed}\` for \`${reading.path}\`: ${why}`, { place: node.place, actual: typed, expected: `a path relative to the study, with \`/\`, ${expected}`, mend }))
 }
 
 /** Undefined for an absolute path, a drive, a backslash, or no file name. */

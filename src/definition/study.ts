@@ -95,6 +95,8 @@ export type Encoding = 'utf-8' | 'utf-16le' | 'utf-16be' | 'windows-1252'
 
 export interface FileSource {
   readonly path: string
+  /** Declared to lie outside the folder of the study. */
+  readonly outside?: true | undefined
   readonly place: Place
   readonly delimiter?: Delimiter | undefined
   readonly decimal?: DecimalMark | undefined
