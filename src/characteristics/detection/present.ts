@@ -66,11 +66,11 @@ function definitionExhibits(presented: Detection): readonly ReportBlock[] {
     ],
   })
   if (items.length < 2) return [exhibit]
-  return [exhibit, figure({
+  return [exhibit, ...secondary(figure({
     id: `${prefix}-definitions-chart`, caption: `Lower limits of ${measurand.name} by each definition; filled marks govern`,
     alternative: `Limits in ${measurand.unit}. ${items.map((each) => `${each.label}, ${each.kind}: ${numberText(each.value, three)}${each.governing ? ', governing' : ''}`).join('; ')}.`,
     chart: definitionsChart({ xTitle: axis(measurand), items, lines: [...criterionLines(presented, 'detection'), ...criterionLines(presented, 'quantitation')] }),
-  })]
+  }))]
 }
 
 function definitionRow({ detail, measurand }: Detection, each: DefinitionDetail): ExhibitRow {

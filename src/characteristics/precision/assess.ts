@@ -82,7 +82,7 @@ function levelFindings(level: PrecisionLevel, own: readonly Measurement[], measu
   const { repeatability, intermediate } = level
   const scaled = (estimate: { readonly low: number; readonly high: number }, confidence: { readonly confidence: number; readonly method: string }): FindingDraft['interval'] =>
     ({ low: (100 * estimate.low) / Math.abs(level.mean), high: (100 * estimate.high) / Math.abs(level.mean), confidence: confidence.confidence, method: `${confidence.method}, mean taken as exact` })
-  const mls = { confidence: input.confidence, method: level.truncated && level.components.length === 2 ? 'chi-square of the within-run mean square' : 'modified large sample (Graybill-Wang)' }
+  const mls = { confidence: input.confidence, method: intermediate?.intervalMethod ?? '' }
   return [
     { ...start, metric: 'mean', value: level.mean, method: 'arithmetic mean of all values', source: 'ISO 2602' },
     { ...start, df: repeatability.df, metric: 'repeatability-sd', value: repeatability.value, interval: { low: repeatability.low, high: repeatability.high, ...chi }, method: within, source },

@@ -38,7 +38,7 @@ export interface PrecisionLevel {
   readonly runs: readonly RunLine[]
   readonly excluded: readonly { readonly run: string; readonly value: number; readonly exclusion: number }[]
   readonly repeatability: SpreadEstimate
-  readonly intermediate?: SpreadEstimate & { readonly satterthwaiteDf: number; readonly satterthwaiteLow: number; readonly satterthwaiteHigh: number }
+  readonly intermediate?: SpreadEstimate & { readonly satterthwaiteDf: number; readonly satterthwaiteLow: number; readonly satterthwaiteHigh: number; readonly intervalMethod: string }
   readonly betweenRuns?: number
   readonly components: readonly ComponentLine[]
   readonly anova: readonly AnovaLine[]

@@ -51,6 +51,7 @@ function singleRuns(request: LevelRequest, centre: number): Parts {
     intermediate: {
       ...spread(Math.sqrt(anova.totalVariance), byApproximation.df, centre, modifiedLargeSampleInterval(anova, request.confidence)),
       satterthwaiteDf: byApproximation.df, satterthwaiteLow: byApproximation.low, satterthwaiteHigh: byApproximation.high,
+      intervalMethod: anova.truncated ? 'chi-square of the within-run mean square' : 'modified large sample (Graybill-Wang)',
     },
     betweenRuns: Math.sqrt(anova.betweenVariance),
     components: [component('within runs', anova.withinVariance, anova.totalVariance), component('between runs', anova.betweenVarianceRaw, anova.totalVariance)],
@@ -66,7 +67,8 @@ function nestedRuns(request: LevelRequest, centre: number): Parts {
   const outers = [...new Set(request.runs.map((each) => each.outer ?? ''))]
   const found = nested(outers.map((outer) => request.runs.filter((each) => each.outer === outer).map((each) => each.values)))
   const repeatability = Math.sqrt(found.residual.meanSquare)
-  // After truncation the mean squares no longer add up to the total; the interval then rests on the terms that are left.
+  // After truncation the mean squares no longer add up to the total; degrees of freedom are those before truncation, and the interval is
+  // the chi-square one with them.
   const { df } = satterthwaite(found.terms)
   const usable = !found.truncated && found.terms.every((term) => term.coefficient >= 0)
   const total = Math.sqrt(found.totalVariance)
@@ -74,7 +76,7 @@ function nestedRuns(request: LevelRequest, centre: number): Parts {
   const interval = usable ? modifiedLargeSampleIntervalOf(found.terms, request.confidence) : approximate
   return {
     repeatability: spread(repeatability, found.residual.df, centre, standardDeviationInterval(repeatability, found.residual.df, request.confidence)),
-    intermediate: { ...spread(total, df, centre, interval), satterthwaiteDf: df, satterthwaiteLow: approximate.low, satterthwaiteHigh: approximate.high },
+    intermediate: { ...spread(total, df, centre, interval), satterthwaiteDf: df, satterthwaiteLow: approximate.low, satterthwaiteHigh: approximate.high, intervalMethod: usable ? 'modified large sample (Graybill-Wang)' : 'chi-square with Satterthwaite degrees of freedom' },
     betweenRuns: Math.sqrt(found.inner.variance),
     components: [component('within runs', found.residual.varianceRaw, found.totalVariance), component('between inner groups', found.inner.varianceRaw, found.totalVariance), component('between outer groups', found.outer.varianceRaw, found.totalVariance)],
     anova: [

@@ -34,6 +34,7 @@ function summary(shown: Shown): ReportBlock {
 }
 
 function overview({ detail, measurand, prefix }: Shown): ReportBlock {
+  const methods = [...new Set(detail.levels.flatMap((level) => level.intermediate?.intervalMethod ?? []))]
   return table({
     id: `${prefix}-spreads`, caption: 'Standard deviations by level, with intervals',
     columns: [
@@ -44,7 +45,7 @@ function overview({ detail, measurand, prefix }: Shown): ReportBlock {
       row(level.level === undefined ? 'all' : asTyped(level.level), count(level.n), printed(level.mean, { significant: 5 }), 'repeatability', printed(level.repeatability.value), sentence`${printed(level.repeatability.low)} to ${printed(level.repeatability.high)}`, degreesOfFreedom(level.repeatability.df), level.repeatability.relative === undefined ? '' : printed(level.repeatability.relative, { decimals: 2 })),
       ...(level.intermediate === undefined ? [] : [row('', '', '', 'intermediate', printed(level.intermediate.value), sentence`${printed(level.intermediate.low)} to ${printed(level.intermediate.high)}`, degreesOfFreedom(level.intermediate.satterthwaiteDf), level.intermediate.relative === undefined ? '' : printed(level.intermediate.relative, { decimals: 2 }))]),
     ]),
-    notes: ['Repeatability: chi-square interval. Intermediate precision: modified large sample interval; degrees of freedom by Satterthwaite.'],
+    notes: [`Repeatability: chi-square interval.${methods.length === 0 ? '' : ` Intermediate precision: interval by ${methods.join(' or ')}; degrees of freedom by Satterthwaite.`}`],
   })
 }
 

@@ -5,7 +5,7 @@ import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
 import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
-import { resultWords, unitWords } from '../verdict-rows.ts'
+import { byCriterion, deciding, resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
 
 export function assessmentSectionId(block: string, measurand: string): string {
@@ -44,7 +44,7 @@ function oneAssessment(section: Section, assessment: RecordedAssessment, everyth
   })
   return [
     { type: 'sectionHeading', id: assessmentSectionId(assessment.block, assessment.measurand), depth: 2, children: textOf(measurand.name) },
-    ...decisions(section, verdicts, prefix, measurand.unit),
+    ...decisions(section, everything ? verdicts : byCriterion(verdicts).map(deciding), prefix, measurand.unit),
     ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
     ...notEvaluable(section, assessment, verdicts),
     ...[...told, ...secondary(...findingsTable(section, findings, prefix, measurand.unit))].filter((block) => everything || !('secondary' in block)),
