@@ -5,7 +5,7 @@ export function canonicalJson(value: unknown): string {
   if (value === null || typeof value === 'boolean' || typeof value === 'string') return JSON.stringify(value)
   if (typeof value === 'number') {
     if (!Number.isFinite(value)) throw new Error('a number that is not finite reached the record')
-    return JSON.stringify(value)
+    return Object.is(value, -0) ? '0' : String(value)
   }
   if (Array.isArray(value)) return `[${value.map((item) => canonicalJson(item ?? null)).join(',')}]`
   if (typeof value === 'object') {

@@ -60,9 +60,9 @@ export function formula(children: Words, words: string): FormulaBlock {
   return { type: 'formula', children: textOf(children), words }
 }
 
-/** Exhibits that a report leaves out when it has many measurands and the study does not ask for everything. */
-export function secondary(...blocks: readonly ReportBlock[]): readonly ReportBlock[] {
-  return blocks.map((block) => (block.type === 'exhibitTable' || block.type === 'exhibitFigure' || block.type === 'textBlock' || block.type === 'formula' ? { ...block, secondary: true } : block))
+/** Exhibits that a report leaves out, and never builds, when it has many measurands and the study does not ask for everything. */
+export function secondary(shown: { readonly everything: boolean }, build: () => readonly ReportBlock[]): readonly ReportBlock[] {
+  return shown.everything ? build() : []
 }
 
 export function subscript(base: string, lowered: string): readonly Inline[] {

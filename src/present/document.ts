@@ -48,13 +48,8 @@ export interface SectionHeading {
   readonly annex?: true
 }
 
-/** Told only where a report has room for it: left out of the sections of a study with many measurands unless it asks for everything. */
-export interface MaybeSecondary {
-  readonly secondary?: true
-}
-
 /** Running text made by the program (`origin: program`) or the user's own words (`origin: user`), visibly distinguished. */
-export interface TextBlock extends MaybeSecondary {
+export interface TextBlock {
   readonly type: 'textBlock'
   readonly origin: 'program' | 'user' | 'template'
   readonly children: readonly Inline[]
@@ -77,7 +72,7 @@ export interface ExhibitRow {
   readonly tone?: 'excluded' | 'total'
 }
 
-export interface ExhibitTable extends MaybeSecondary {
+export interface ExhibitTable {
   readonly type: 'exhibitTable'
   /** Unique in the document; also the stem of the CSV file. */
   readonly id: string
@@ -95,7 +90,7 @@ export interface Chart {
   readonly data: Readonly<Record<string, readonly Readonly<Record<string, unknown>>[]>>
 }
 
-export interface ExhibitFigure extends MaybeSecondary {
+export interface ExhibitFigure {
   readonly type: 'exhibitFigure'
   readonly id: string
   readonly caption: readonly Inline[]
@@ -106,7 +101,7 @@ export interface ExhibitFigure extends MaybeSecondary {
 }
 
 /** A formula in running mathematical notation (Unicode and scripts), with its reading in words. */
-export interface FormulaBlock extends MaybeSecondary {
+export interface FormulaBlock {
   readonly type: 'formula'
   readonly children: readonly Inline[]
   readonly words: string

@@ -17,6 +17,8 @@ export interface Presented<Detail> {
   readonly notEvaluable: readonly NotEvaluable[]
   readonly metrics: Readonly<Record<string, Metric>>
   readonly confidence: number
+  /** Whether secondary exhibits are shown too. */
+  readonly everything: boolean
 }
 
 export interface PresentationPart<Detail = unknown> {

@@ -9,7 +9,7 @@ import type { AccuracyDetail, AccuracyLevel } from './detail.ts'
 type Shown = Presented<AccuracyDetail>
 
 export function presentAccuracy(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), levels(shown), chart(shown), ...secondary(preparations(shown))]
+  return [summary(shown), levels(shown), chart(shown), ...secondary(shown, () => [preparations(shown)])]
 }
 
 function unitOf({ detail, measurand }: Shown): string {

@@ -11,7 +11,7 @@ import type { ComparisonDetail, EffectLine } from './detail.ts'
 type Shown = Presented<ComparisonDetail>
 
 export function presentComparison(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), ...secondary(conditions(shown), ...figures(shown)), effects(shown), ...secondary(...equivalenceTable(shown), ...spreads(shown), ...blocks(shown))]
+  return [summary(shown), ...secondary(shown, () => [conditions(shown), ...figures(shown)]), effects(shown), ...secondary(shown, () => [...equivalenceTable(shown), ...spreads(shown), ...blocks(shown)])]
 }
 
 function unit(text: string): string {

@@ -18,7 +18,7 @@ export function presentDetection(presented: Detection): readonly ReportBlock[] {
   return [
     summary(presented),
     ...definitionExhibits(presented),
-    ...secondary(
+    ...secondary(presented, () => [
       ...lineExhibits(presented),
       ...seriesTable(presented, detail.blanks, 'blanks'), ...seriesTable(presented, detail.spikes, 'spikes'),
       ...dotPlot(presented),
@@ -26,7 +26,7 @@ export function presentDetection(presented: Detection): readonly ReportBlock[] {
       ...(detail.mdl === undefined ? [] : mdlExhibits(presented, detail.mdl)),
       ...(detail.trace === undefined ? [] : traceExhibits(presented, detail.trace)),
       ...confirmationTable(presented),
-    ),
+    ]),
   ]
 }
 
@@ -66,11 +66,11 @@ function definitionExhibits(presented: Detection): readonly ReportBlock[] {
     ],
   })
   if (items.length < 2) return [exhibit]
-  return [exhibit, ...secondary(figure({
+  return [exhibit, ...secondary(presented, () => [figure({
     id: `${prefix}-definitions-chart`, caption: `Lower limits of ${measurand.name} by each definition; filled marks govern`,
     alternative: `Limits in ${measurand.unit}. ${items.map((each) => `${each.label}, ${each.kind}: ${numberText(each.value, three)}${each.governing ? ', governing' : ''}`).join('; ')}.`,
     chart: definitionsChart({ xTitle: axis(measurand), items, lines: [...criterionLines(presented, 'detection'), ...criterionLines(presented, 'quantitation')] }),
-  }))]
+  })])]
 }
 
 function definitionRow({ detail, measurand }: Detection, each: DefinitionDetail): ExhibitRow {

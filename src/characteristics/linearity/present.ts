@@ -12,7 +12,7 @@ type Shown = Presented<LinearityDetail>
 const modelNames = { 'straight line': 'a straight line', 'through zero': 'a straight line through zero', quadratic: 'a parabola' } as const
 
 export function presentLinearity(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), ...secondary(...model(shown)), responseFigure(shown), coefficients(shown), ...secondary(residualFigure(shown), ...errorFigure(shown), standards(shown), candidates(shown), ...tests(shown), ...runs(shown))]
+  return [summary(shown), ...secondary(shown, () => model(shown)), responseFigure(shown), coefficients(shown), ...secondary(shown, () => [residualFigure(shown), ...errorFigure(shown), standards(shown), candidates(shown), ...tests(shown), ...runs(shown)])]
 }
 
 function unit(text: string | undefined): string {

@@ -10,7 +10,7 @@ import type { PrecisionDetail, PrecisionLevel } from './detail.ts'
 type Shown = Presented<PrecisionDetail>
 
 export function presentPrecision(shown: Shown): readonly ReportBlock[] {
-  return [summary(shown), overview(shown), valuesFigure(shown), ...secondary(valuesTable(shown), ...anova(shown), ...components(shown)), ...horwitz(shown)]
+  return [summary(shown), overview(shown), valuesFigure(shown), ...secondary(shown, () => [valuesTable(shown), ...anova(shown), ...components(shown)]), ...horwitz(shown)]
 }
 
 function unit(text: string): string {

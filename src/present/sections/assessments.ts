@@ -6,7 +6,7 @@ import { column, joined, paragraph, row, secondary, sentence, table, textOf } fr
 import type { Inline, ReportBlock } from '../document.ts'
 import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
 import { byCriterion, deciding, resultWords, unitWords } from '../verdict-rows.ts'
-import { blockTitle, measurandOf, metricLabel, type Section, slug } from './section.ts'
+import { blockTitle, measurandOf, metricLabel, outcomeKey, type Section, slug } from './section.ts'
 
 export function assessmentSectionId(block: string, measurand: string): string {
   return `section-${slug(block)}-${slug(measurand)}`
@@ -36,18 +36,18 @@ function oneAssessment(section: Section, assessment: RecordedAssessment, everyth
   const part = section.catalogue.find((each) => each.id === assessment.characteristic)
   if (part === undefined) throw new Error(`the catalogue holds no ${assessment.characteristic}`)
   const prefix = `${slug(assessment.block)}-${slug(assessment.measurand)}`
-  const findings = section.record.findings.filter((each) => each.block === assessment.block && each.measurand === assessment.measurand)
-  const verdicts = section.record.verdicts.filter((each) => each.block === assessment.block && each.measurand === assessment.measurand)
+  const { findings, verdicts } = section.outcomes.get(outcomeKey(assessment)) ?? { findings: [], verdicts: [] }
   const told = assessment.detail === null ? [] : part.present({
     title: part.title, block: assessment.block, measurand, prefix, detail: assessment.detail, findings, verdicts,
-    notEvaluable: assessment.notEvaluable, metrics: part.metrics, confidence: section.record.study.rules.confidence,
+    notEvaluable: assessment.notEvaluable, metrics: part.metrics, confidence: section.record.study.rules.confidence, everything,
   })
   return [
     { type: 'sectionHeading', id: assessmentSectionId(assessment.block, assessment.measurand), depth: 2, children: textOf(measurand.name) },
     ...decisions(section, everything ? verdicts : byCriterion(verdicts).map(deciding), prefix, measurand.unit),
     ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
     ...notEvaluable(section, assessment, verdicts),
-    ...[...told, ...secondary(...findingsTable(section, findings, prefix, measurand.unit))].filter((block) => everything || !('secondary' in block)),
+    ...told,
+    ...secondary({ everything }, () => findingsTable(section, findings, prefix, measurand.unit)),
   ]
 }
 

@@ -1,5 +1,5 @@
 // What a directive of a template can draw on: the record, its digest, and what the catalogue says of each characteristic.
-import type { Finding } from '../../assess/finding.ts'
+import type { Finding, Verdict } from '../../assess/finding.ts'
 import type { StudyRecord } from '../../assess/record.ts'
 import type { DefinitionPart } from '../../definition/definition-part.ts'
 import type { Measurand } from '../../definition/study.ts'
@@ -13,11 +13,20 @@ export interface Section {
   readonly catalogue: readonly PresentableCharacteristic[]
   readonly findings: ReadonlyMap<string, Finding>
   readonly measurands: ReadonlyMap<string, Measurand>
+  /** Findings and verdicts of one block and measurand, by `outcomeKey`. */
+  readonly outcomes: ReadonlyMap<string, { readonly findings: readonly Finding[]; readonly verdicts: readonly Verdict[] }>
+}
+
+export function outcomeKey(each: { readonly block: string; readonly measurand: string }): string {
+  return `${each.block}/${each.measurand}`
 }
 
 export function sectionOf(record: StudyRecord, digest: string, catalogue: readonly PresentableCharacteristic[]): Section {
+  const outcomes = new Map<string, { readonly findings: Finding[]; readonly verdicts: Verdict[] }>(record.assessments.map((each) => [outcomeKey(each), { findings: [], verdicts: [] }]))
+  for (const finding of record.findings) outcomes.get(outcomeKey(finding))?.findings.push(finding)
+  for (const verdict of record.verdicts) outcomes.get(outcomeKey(verdict))?.verdicts.push(verdict)
   return {
-    record, digest, catalogue,
+    record, digest, catalogue, outcomes,
     findings: new Map(record.findings.map((finding) => [finding.id, finding])),
     measurands: new Map(record.study.measurands.map((measurand) => [measurand.id, measurand])),
   }

@@ -97,7 +97,7 @@ function deflatePurely(pdf: PdfDocument): void {
   const { finalize } = prototype
   prototype.finalize = function (this: PdfReference) {
     if (this.compress && Array.isArray(this.buffer) && this.buffer.length > 0) {
-      this.buffer = [zlibSync(concatenated(this.buffer), { level: 6 })]
+      this.buffer = [zlibSync(concatenated(this.buffer), { level: 4 })] // level 6 makes the file 1 % smaller and takes half as long again
       this.compress = false
     }
     finalize.call(this)
