@@ -7,6 +7,7 @@ import { type FaceName, loadFonts } from './fonts.ts'
 import { publishMarkdown } from './markdown.ts'
 import type { Attachment } from './pdf/attachments.ts'
 import { publishPdf } from './pdf/publish-pdf.ts'
+import { shaping } from './pdf/shaping.ts'
 import { plainInline } from './plain-inline.ts'
 import { drawingToSvg } from './svg.ts'
 import { tableToCsv } from './tables-csv.ts'
@@ -33,7 +34,9 @@ export async function publish(document: ReportDocument, options: PublishOptions)
   const fonts = loadFonts(options.fontBytes)
   const figures = document.blocks.filter((block): block is ExhibitFigure => block.type === 'exhibitFigure')
   const drawings = new Map<string, Drawing>()
-  for (const figure of figures) drawings.set(figure.id, await drawChart(figure.chart, fonts.measure))
+  // Text of charts is measured as the pages set it: word by word, with what was learnt of each pair of letters.
+  const { width } = shaping(fonts)
+  for (const figure of figures) drawings.set(figure.id, await drawChart(figure.chart, width))
   const charts = new Map(figures.map((figure) => [figure.id, drawingToSvg(drawingOf(figure.id), { title: plainInline(figure.caption), description: figure.alternative })]))
   const tables = new Map(document.blocks.filter((block): block is ExhibitTable => block.type === 'exhibitTable').map((table) => [table.id, tableToCsv(table)]))
   const markdown = publishMarkdown(document, { chartPath: (id) => `charts/${id}.svg`, tablePath: (id) => `tables/${id}.csv` })
