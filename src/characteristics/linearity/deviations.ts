@@ -38,12 +38,19 @@ function mandelFor(points: readonly Point[], weights: WeightKind): Pick<Linearit
   const [line, parabola] = [weightedFit(points, 'straight line', weights), weightedFit(points, 'quadratic', weights)]
   if ('impossible' in line) return { mandelAbsent: line.impossible }
   if ('impossible' in parabola) return { mandelAbsent: parabola.impossible }
+  if (isExact(parabola.fit)) return { mandelAbsent: 'the responses lie on a parabola exactly, so no scatter is left to test against' }
   try {
     return { mandel: { ...mandelTest(line.fit, parabola.fit), curvature: parabola.fit.coefficients[2] ?? 0 } }
   } catch (error) {
     if (error instanceof RangeError) return { mandelAbsent: error.message }
     throw error
   }
+}
+
+/** Residuals of a fit that are nothing but the binary noise of the computation: an F of them would be a number without meaning. */
+function isExact(fit: Fit): boolean {
+  const size = fit.y.reduce((total, y, index) => total + (fit.weights[index] ?? 1) * y ** 2, 0)
+  return fit.residualSumOfSquares <= 1e-22 * size
 }
 
 function pointsOf(fit: Fit): readonly Point[] {

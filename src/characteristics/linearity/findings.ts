@@ -4,7 +4,7 @@ import type { Evidence, FindingDraft, NotEvaluable } from '../../assess/finding.
 import type { Fit } from '../../statistics/regression.ts'
 import type { LinearityDetail } from './detail.ts'
 import type { LinearityOptions } from './options.ts'
-import { relativeStandardError } from './weighted-fit.ts'
+import { backCalculationErrors, relativeStandardError } from './weighted-fit.ts'
 
 const regression = 'Draper & Smith, Applied Regression Analysis, 3rd ed., chapters 1 and 9'
 
@@ -17,6 +17,7 @@ export function findingsOf(
     ...start, metric: name, value: each.value, interval: { low: each.low, high: each.high, confidence: input.confidence, method: 'Student t' }, method: model, source: regression,
   }))
   const rse = relativeStandardError(fit)
+  const usable = backCalculationErrors(fit).length // a level of zero has no relative error
   const findings: FindingDraft[] = [
     ...coefficient('slope'), ...coefficient('intercept'),
     ...(detail.weights === 'none' ? [{ ...start, metric: 'residual-standard-deviation', value: detail.residualStandardDeviation, method: model, source: regression }] : []),
@@ -25,10 +26,10 @@ export function findingsOf(
     ...(detail.lackOfFit === undefined ? [] : [{ ...start, df: detail.lackOfFit.df2, metric: 'lack-of-fit-probability', value: detail.lackOfFit.probability, method: 'F test of lack of fit against true replicates', source: 'Draper & Smith, Applied Regression Analysis, 3rd ed., section 2.1' }]),
     ...(detail.mandel === undefined ? [] : [{ ...start, df: detail.mandel.df2, metric: 'curvature-probability', value: detail.mandel.probability, method: 'Mandel’s test of a parabola against the straight line', source: 'ISO 8466-1:2021' }]),
     ...detail.levels.flatMap((level): readonly FindingDraft[] => (level.worstError === undefined || level.meanError === undefined ? [] : [
-      { ...start, n: level.n, metric: 'back-calculation-error', level: level.level, value: level.worstError, method: 'error of the standard furthest off, in percent of its level', source: 'common practice, no source' },
-      { ...start, n: level.n, metric: 'back-calculation-mean-error', level: level.level, value: level.meanError, method: 'mean error of the standards, in percent of their level', source: 'common practice, no source' },
+      { evidence, n: level.n, metric: 'back-calculation-error', level: level.level, value: level.worstError, method: 'error of the standard furthest off, in percent of its level', source: 'common practice, no source' },
+      { evidence, n: level.n, metric: 'back-calculation-mean-error', level: level.level, value: level.meanError, method: 'mean error of the standards, in percent of their level', source: 'common practice, no source' },
     ])),
-    ...(rse === undefined ? [] : [{ ...start, metric: 'relative-standard-error', value: rse, method: 'relative standard error over every standard, divided by n − coefficients', source: 'US EPA method 8000D, section 11.5' }]),
+    ...(rse === undefined ? [] : [{ ...start, n: usable, df: usable - fit.parameters, metric: 'relative-standard-error', value: rse, method: 'relative standard error over every standard above zero, divided by n − coefficients', source: 'US EPA method 8000D, section 11.5' }]),
     ...(detail.interceptRelative === undefined ? [] : [{ ...start, metric: 'intercept-relative', value: detail.interceptRelative.value, interval: { low: detail.interceptRelative.low, high: detail.interceptRelative.high, confidence: input.confidence, method: 'Student t, full response taken as exact' }, method: 'intercept in percent of the fitted full response', source: 'common practice, no source' }]),
     ...(detail.straightTo === undefined ? [] : [{ ...start, metric: 'straight-to', value: detail.straightTo.level, method: 'highest level up to which Mandel’s test sees no curvature', source: 'ISO 8466-1:2021' }]),
     ...(detail.topSensitivity === undefined ? [] : [{ ...start, metric: 'top-sensitivity', value: detail.topSensitivity, method: 'slope between the two highest levels in percent of the fitted one', source: 'common practice, no source' }]),

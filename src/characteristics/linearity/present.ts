@@ -15,6 +15,10 @@ export function presentLinearity(shown: Shown): readonly ReportBlock[] {
   return [summary(shown), ...secondary(shown, () => model(shown)), responseFigure(shown), coefficients(shown), ...secondary(shown, () => [residualFigure(shown), ...errorFigure(shown), standards(shown), candidates(shown), ...tests(shown), ...runs(shown)])]
 }
 
+function weighted({ weights }: LinearityDetail): string {
+  return weights === 'none' ? ' without weights' : `, weights ${weights}`
+}
+
 function unit(text: string | undefined): string {
   return text === undefined || text === '' ? '' : `\u00a0${text}`
 }
@@ -23,11 +27,11 @@ function summary({ detail, measurand }: Shown): ReportBlock {
   const errors = detail.levels.filter((level) => level.worstError !== undefined)
   const worst = [...errors].sort((left, right) => Math.abs(right.worstError ?? 0) - Math.abs(left.worstError ?? 0))[0]
   const sentences: (readonly Inline[])[] = [
-    sentence`${count(detail.n)} responses at ${count(detail.levels.length)} levels from ${asTyped(detail.range.low)} to ${asTyped(detail.range.high)}${unit(measurand.unit)} are described by ${modelNames[detail.fit]}${detail.weights === 'none' ? ' without weights' : `, weights ${detail.weights}`}.`,
+    sentence`${count(detail.n)} responses at ${count(detail.levels.length)} levels from ${asTyped(detail.range.low)} to ${asTyped(detail.range.high)}${unit(measurand.unit)} are described by ${modelNames[detail.fit]}${weighted(detail)}.`,
   ]
   if (worst?.worstError !== undefined) sentences.push(sentence`The largest back-calculated error of a standard is ${printed(worst.worstError)}\u202f%, at ${asTyped(worst.level)}${unit(measurand.unit)}.`)
   if (detail.straightTo !== undefined && detail.straightTo.level < detail.straightTo.highest) sentences.push(sentence`Curvature is seen above ${asTyped(detail.straightTo.level)}${unit(measurand.unit)}; up to there Mandel’s test sees none.`)
-  if (detail.topSensitivity !== undefined) sentences.push(sentence`Between the two highest levels the response rises by ${printed(detail.topSensitivity)}\u202f% of what the fit expects.`)
+  if (detail.topSensitivity !== undefined) sentences.push(sentence`Between the two highest levels the response changes by ${printed(detail.topSensitivity)}\u202f% of what the fit expects.`)
   sentences.push(textOf('The coefficients r and R² describe the scatter and do not prove that the response is linear.'))
   return paragraph(...sentences)
 }
@@ -47,7 +51,7 @@ function responseFigure({ detail, measurand, prefix, confidence }: Shown): Repor
   return figure({
     id: `${prefix}-response`,
     caption: sentence`Response of ${measurand.name} against level, n = ${count(detail.n)}, with the fit and its confidence band at ${asPercent(confidence)}\u202f%`,
-    alternative: `Calibration of ${measurand.name}: ${detail.n} responses at ${detail.levels.length} levels from ${detail.range.low} to ${detail.range.high} ${measurand.unit}, fitted by ${modelNames[detail.fit]} with weights ${detail.weights}.`,
+    alternative: `Calibration of ${measurand.name}: ${detail.n} responses at ${detail.levels.length} levels from ${detail.range.low} to ${detail.range.high} ${measurand.unit}, fitted by ${modelNames[detail.fit]}${weighted(detail)}.`,
     chart: responseChart({
       xTitle: axis('level', measurand.unit), yTitle: axis('response', measurand.responseUnit),
       points: detail.points.map((point) => ({ x: point.level, y: point.response, ...(point.run === undefined ? {} : { series: point.run }) })),
@@ -64,7 +68,7 @@ function slopeUnit(measurand: Shown['measurand']): string {
   return `${measurand.responseUnit ?? '1'}/${perUnit(measurand)}`
 }
 
-function coefficients({ detail, measurand, prefix }: Shown): ReportBlock {
+function coefficients({ detail, measurand, prefix, confidence }: Shown): ReportBlock {
   const per = perUnit(measurand)
   const units = { intercept: measurand.responseUnit ?? '', slope: slopeUnit(measurand), curvature: `${measurand.responseUnit ?? '1'}/${per}²` }
   const symbols = { intercept: subscript('b', '0'), slope: subscript('b', '1'), curvature: subscript('b', '2') }
@@ -78,6 +82,8 @@ function coefficients({ detail, measurand, prefix }: Shown): ReportBlock {
         detail.correlation === undefined ? [] : sentence`r = ${printed(detail.correlation, { decimals: 6 })}`,
         detail.rSquared === undefined ? [] : sentence`R² = ${printed(detail.rSquared, { decimals: 6 })}${detail.fit === 'through zero' ? ' (about zero)' : detail.weights === 'none' ? '' : ' (with the weights of the fit)'}`,
       ], ', '),
+      sentence`Intervals by Student t at ${asPercent(confidence)}\u202f%.`,
+      detail.interceptRelative === undefined ? [] : sentence`The intercept is ${printed(detail.interceptRelative.value)}\u202f% of the fitted response at ${asTyped(detail.interceptRelative.level)}${unit(measurand.unit)}.`,
     ].filter((note) => note.length > 0),
   })
 }

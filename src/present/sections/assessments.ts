@@ -3,8 +3,8 @@
 import type { RecordedAssessment } from '../../assess/record.ts'
 import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
-import type { Inline, ReportBlock } from '../document.ts'
-import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed } from '../numbers.ts'
+import type { Inline, NumberNode, ReportBlock } from '../document.ts'
+import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed, probability } from '../numbers.ts'
 import { byCriterion, deciding, resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, outcomeKey, type Section, slug } from './section.ts'
 
@@ -81,12 +81,21 @@ function findingsTable(section: Section, findings: readonly Finding[], prefix: s
     ],
     rows: findings.map((finding) => row(
       [...textOf(metricLabel(section, finding.characteristic, finding.metric)), ...where(finding, levelUnit)],
-      [asFound(finding.value), ...unitWords(finding.unit)],
+      [found(finding), ...unitWords(finding.unit)],
       finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}`,
       finding.n === undefined ? '' : count(finding.n), finding.df === undefined ? '' : degreesOfFreedom(finding.df),
     )),
     notes: [...intervalNotes(findings), [...textOf('Methods and sources: '), { type: 'reference', target: 'methods' }, ...textOf('.')]],
   })]
+}
+
+/** A correlation of 0.99996 is not 1.000: as many digits as tell it from one; a probability is never said to be zero. */
+function found(finding: Finding): NumberNode {
+  const { value } = finding
+  if (finding.metric.endsWith('-probability') && value < 0.0001) return probability(value)
+  let significant = 4
+  while (finding.unit === '' && Math.abs(value) < 1 && significant < 12 && Math.abs(Number(value.toPrecision(significant))) === 1) significant += 1
+  return significant === 4 ? asFound(value) : printed(value, { significant })
 }
 
 function where(finding: Finding, levelUnit: string): readonly Inline[] {
