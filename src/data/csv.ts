@@ -1,83 +1,73 @@
-// Text of a raw file → rows of cells with their line numbers. One delimiter is chosen before anything is split: a file that two delimiters
-// would fit is refused until the study says which.
-import { parse } from 'csv-parse/sync'
-import type { Delimiter } from '../definition/study.ts'
+// Bytes of a raw file → its table: text in one encoding, split by one delimiter. A file that several datasets read is split once, and what is
+// wrong with the file itself is told once.
+import type { Delimiter, Encoding, FileSource } from '../definition/study.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
-
-export interface CsvRow {
-  /** Line of its first character, from 1. */
-  readonly line: number
-  readonly cells: readonly string[]
-  /** Where each cell starts in its line, counted from 1; for a row of one line. */
-  readonly starts: readonly number[]
-}
+import { delimiterSigns, sniffDelimiter } from './delimiter.ts'
+import { type CsvRow, splitRows } from './split-rows.ts'
+import { decode, type DecodedText } from './text.ts'
 
 export interface CsvTable {
+  readonly encoding: Encoding
   readonly delimiter: Delimiter
   readonly rows: readonly CsvRow[]
 }
 
-const signs: Readonly<Record<Delimiter, string>> = { comma: ',', semicolon: ';', tab: '\t', pipe: '|' }
+export interface TableReader {
+  /** `headings` are those that the study maps. Undefined when the file is no table; `diagnostics` are told by the first call only. */
+  read(file: FileSource, bytes: Uint8Array, headings: readonly string[]): { readonly table: CsvTable | undefined; readonly diagnostics: readonly Diagnostic[] }
+}
 
-export function readCsv(text: string, file: string, declared: Delimiter | undefined): CsvTable | { readonly problem: Diagnostic } {
-  const delimiter = declared ?? sniffDelimiter(text)
-  if (typeof delimiter !== 'string') {
-    return { problem: diagnostic('data/ambiguous-delimiter', `Cannot tell what separates the columns of \`${file}\``, {
-      place: { file, line: 1, column: 1 }, actual: delimiter.fitting.length === 0 ? 'no delimiter found' : delimiter.fitting.join(' and '), expected: 'one of comma, semicolon, tab, pipe', mend: 'Declare `delimiter:` for the file',
-    }) }
+export function tableReader(): TableReader {
+  const texts = new Map<string, DecodedText | { readonly problem: Diagnostic }>()
+  const tables = new Map<string, readonly CsvRow[] | { readonly problem: Diagnostic }>()
+  const told = new Set<string>()
+  const once = (told_: Diagnostic): readonly Diagnostic[] => {
+    const key = `${told_.code}\u0000${told_.place?.file ?? ''}\u0000${told_.message}`
+    if (told.has(key)) return []
+    told.add(key)
+    return [told_]
   }
-  try {
-    const records = parse(text, { delimiter: signs[delimiter], relax_column_count: true, skip_empty_lines: false, info: true, relax_quotes: false }) as unknown as readonly { readonly record: readonly string[]; readonly info: { readonly lines: number } }[]
-    const lines = text.split(/\r\n|\n|\r/)
-    let line = 1
-    const rows = records.map(({ record, info }): CsvRow => {
-      const start = line
-      line = info.lines + 1
-      return { line: start, cells: record, starts: cellStarts(lines[start - 1] ?? '', record) }
-    })
-    return { delimiter, rows }
-  } catch (error) {
-    if (!(error instanceof Error && 'code' in error)) throw error
-    const line = 'lines' in error && typeof error.lines === 'number' ? error.lines : 1
-    return { problem: diagnostic('data/broken-row', `Cannot split line ${line} of \`${file}\` into cells`, {
-      place: { file, line, column: 1 }, actual: error.code === 'CSV_QUOTE_NOT_CLOSED' ? 'a quote that is not closed' : 'a quote inside a cell', expected: 'quotes around whole cells, doubled inside', mend: 'Export the file again, or mend the quote',
-    }) }
+  return {
+    read(file, bytes, headings) {
+      const decoded = remembered(texts, `${file.path}\u0000${file.encoding ?? ''}`, () => decode(bytes, file.path, file.encoding))
+      if ('problem' in decoded) return { table: undefined, diagnostics: once(decoded.problem) }
+      const guessed = decoded.guessed ? once(guessedEncoding(file.path, decoded.encoding)) : []
+      const delimiter = file.delimiter ?? sniffDelimiter(decoded.text, headings)
+      if (typeof delimiter !== 'string') return { table: undefined, diagnostics: [...guessed, ...once(undecided(file.path, delimiter.fitting))] }
+      const rows = remembered(tables, `${file.path}\u0000${file.encoding ?? ''}\u0000${delimiter}`, () => split(decoded.text, file.path, delimiter))
+      if ('problem' in rows) return { table: undefined, diagnostics: [...guessed, ...once(rows.problem)] }
+      return { table: { encoding: decoded.encoding, delimiter, rows }, diagnostics: guessed }
+    },
   }
 }
 
-/** A quoted cell is longer in its line than in itself: by its quotes, and by each quote doubled inside. */
-function cellStarts(line: string, cells: readonly string[]): readonly number[] {
-  let at = 0
-  return cells.map((cell) => {
-    const start = at + 1
-    at += (line[at] === '"' ? cell.length + 2 + (cell.split('"').length - 1) : cell.length) + 1
-    return start
+function remembered<T>(known: Map<string, T>, key: string, make: () => T): T {
+  const earlier = known.get(key)
+  if (earlier !== undefined) return earlier
+  const made = make()
+  known.set(key, made)
+  return made
+}
+
+function split(text: string, file: string, delimiter: Delimiter): readonly CsvRow[] | { readonly problem: Diagnostic } {
+  const rows = splitRows(text, delimiterSigns[delimiter])
+  if (!('kind' in rows)) return rows
+  const isOpen = rows.kind === 'not closed'
+  return { problem: diagnostic('data/broken-row', isOpen ? `A quote in line ${rows.line} of \`${file}\` is not closed` : `Cannot split line ${rows.line} of \`${file}\` into cells`, {
+    place: { file, line: rows.line, column: rows.column },
+    actual: isOpen ? 'a quote that is open to the end of the file' : rows.kind === 'inside a cell' ? 'a quote inside a cell' : 'text behind the closing quote of a cell',
+    expected: 'quotes around whole cells, doubled inside', mend: 'Export the file again, or mend the quote',
+  }) }
+}
+
+function undecided(file: string, fitting: readonly Delimiter[]): Diagnostic {
+  return diagnostic('data/ambiguous-delimiter', `Cannot tell what separates the columns of \`${file}\``, {
+    place: { file, line: 1, column: 1 }, actual: fitting.length === 0 ? 'no delimiter found' : fitting.join(' and '), expected: 'one of comma, semicolon, tab, pipe', mend: 'Declare `delimiter:` for the file',
   })
 }
 
-/**
- * A delimiter fits when most lines have one and the same number of cells under it, more than one. A comma that stands between digits only
- * is a decimal mark and no delimiter. Two that fit are undecided; a file without any has one column.
- */
-function sniffDelimiter(text: string): Delimiter | { readonly fitting: readonly Delimiter[] } {
-  const lines = text.split(/\r\n|\n|\r/, 400).map(unquoted).filter((line) => line.trim() !== '').slice(0, 200)
-  const commaIsMark = lines.every((line) => !/(?:^|[^\d]),|,(?:[^\d]|$)/.test(line))
-  const fitting = (Object.keys(signs) as Delimiter[]).filter((delimiter) => {
-    const counts = new Map<number, number>()
-    for (const line of lines) {
-      const cells = line.split(signs[delimiter]).length
-      if (cells > 1) counts.set(cells, (counts.get(cells) ?? 0) + 1)
-    }
-    return Math.max(0, ...counts.values()) > lines.length / 2
+function guessedEncoding(file: string, encoding: Encoding): Diagnostic {
+  return diagnostic('data/encoding', encoding === 'windows-1252' ? `\`${file}\` is no UTF-8 and was read as windows-1252` : `\`${file}\` has no byte order mark and was read as ${encoding}`, {
+    place: { file, line: 1, column: 1 }, actual: `bytes that read as ${encoding}`, expected: 'a declared `encoding:` when this is wrong', mend: 'Nothing, if the letters of the file are right; else declare `encoding:`',
   })
-  const separating = fitting.filter((delimiter) => delimiter !== 'comma' || !commaIsMark)
-  if (separating.length === 1 && separating[0] !== undefined) return separating[0]
-  if (separating.length > 1) return { fitting: separating }
-  // One column: any delimiter that does not occur leaves the lines whole.
-  const absent = (['semicolon', 'tab', 'pipe'] as const).find((delimiter) => lines.every((line) => !line.includes(signs[delimiter])))
-  return commaIsMark && absent !== undefined ? absent : { fitting }
-}
-
-function unquoted(line: string): string {
-  return line.replace(/"(?:[^"]|"")*"/g, '')
 }

@@ -3,17 +3,17 @@
 import type { DatasetSource, Exclusion } from '../definition/study.ts'
 import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
-import { tidied } from './cells.ts'
+import { headingOf, tidied } from './cells.ts'
 import type { Observation, SourceRow } from './dataset.ts'
-import type { HeadedRow } from './source-file.ts'
+import type { HeadedRows } from './source-file.ts'
 
 export interface ExcludeRequest {
   readonly source: DatasetSource
   readonly exclusions: readonly Exclusion[]
   readonly rows: readonly SourceRow[]
   readonly observations: readonly Observation[]
-  /** Rows by heading, in the order of `rows`. */
-  readonly headed: readonly HeadedRow[]
+  /** The same rows under their headings, file after file. */
+  readonly headed: readonly HeadedRows[]
 }
 
 export interface ExcludedRows {
@@ -23,28 +23,37 @@ export interface ExcludedRows {
 }
 
 export function excludeRows({ source, exclusions, rows, observations, headed }: ExcludeRequest): ExcludedRows {
+  if (exclusions.length === 0) return { rows, observations, diagnostics: [] }
   const diagnostics: Diagnostic[] = []
   const excludedRows = new Map<number, number>()
-  const excludedObservations = new Map<string, number>()
+  const excludedObservations = new Map<string, Exclusion>()
+  const byRow = new Map<number, Observation[]>()
+  for (const observation of observations) {
+    const own = byRow.get(observation.row)
+    if (own === undefined) byRow.set(observation.row, [observation])
+    else own.push(observation)
+  }
   for (const exclusion of exclusions) {
-    const matching = headed.flatMap((row, index) => (matches(row, exclusion) ? [index] : []))
+    const repeated = repeatedHeading(exclusion, headed)
+    if (repeated !== undefined) {
+      diagnostics.push(repeated)
+      continue
+    }
+    const matching = matchingRows(exclusion, headed)
     const unused = matching.filter((index) => rows[index]?.fate.kind === 'not used')
     if (matching.length !== exclusion.row.rows || unused.length > 0) {
-      const wanted = exclusion.row.matches.map((each) => `${each.column} = ${each.text}`).join(', ')
-      diagnostics.push(diagnostic('data/unmatched-exclusion', unused.length > 0
-        ? `Exclusion ${exclusion.number} (${wanted}) takes out a row that dataset \`${source.name}\` does not use`
-        : `Exclusion ${exclusion.number} (${wanted}) matches ${counted(matching.length, 'row')} of dataset \`${source.name}\` instead of ${exclusion.row.rows}`, {
-        place: exclusion.place, actual: matching.length === 0 ? unknownColumns(exclusion, headed) : counted(matching.length, 'row'), expected: counted(exclusion.row.rows, 'used row'),
-        mend: matching.length === 0 ? 'Correct the headings and texts of `row:`' : 'Add a column that tells the rows apart, or say `rows:` with the number meant',
-        related: matching.slice(0, 6).map((index) => ({ message: 'matches', place: { file: headed[index]?.file ?? '', line: headed[index]?.line } })),
-      }))
+      diagnostics.push(unmatched(exclusion, source, matching.map((index) => rows[index]).filter((row) => row !== undefined), unused.length > 0, headed))
       continue
     }
     for (const index of matching) {
-      excludedRows.set(index, exclusion.number)
-      for (const observation of observations) {
-        if (observation.row === index && (exclusion.measurands === undefined || exclusion.measurands.includes(observation.measurand))) excludedObservations.set(`${index}/${observation.measurand}`, exclusion.number)
+      for (const observation of byRow.get(index) ?? []) {
+        if (exclusion.measurands !== undefined && !exclusion.measurands.includes(observation.measurand)) continue
+        const key = `${index}/${observation.measurand}`
+        const earlier = excludedObservations.get(key)
+        if (earlier === undefined) excludedObservations.set(key, exclusion)
+        else diagnostics.push(takenTwice(exclusion, earlier, rows[index], observation.measurand))
       }
+      excludedRows.set(index, excludedRows.get(index) ?? exclusion.number)
     }
   }
   return {
@@ -54,19 +63,61 @@ export function excludeRows({ source, exclusions, rows, observations, headed }: 
       return number === undefined ? row : { ...row, fate: { kind: 'excluded', exclusion: number } }
     }),
     observations: observations.map((observation) => {
-      const number = excludedObservations.get(`${observation.row}/${observation.measurand}`)
-      return number === undefined ? observation : { ...observation, excluded: number }
+      const exclusion = excludedObservations.get(`${observation.row}/${observation.measurand}`)
+      return exclusion === undefined ? observation : { ...observation, excluded: exclusion.number }
     }),
   }
 }
 
-function matches(row: HeadedRow, exclusion: Exclusion): boolean {
-  if (exclusion.row.file !== undefined && exclusion.row.file !== row.file) return false
-  return exclusion.row.matches.every((each) => row.cells[tidied(each.column)] === tidied(each.text))
+function matchingRows(exclusion: Exclusion, headed: readonly HeadedRows[]): readonly number[] {
+  const wanted = exclusion.row.matches.map((each) => ({ heading: headingOf(each.column), text: tidied(each.text) }))
+  const matching: number[] = []
+  let first = 0
+  for (const { file, headings, rows } of headed) {
+    const tests = wanted.map((each) => ({ index: headings.indexOf(each.heading), text: each.text }))
+    if ((exclusion.row.file === undefined || exclusion.row.file === file) && tests.every((each) => each.index >= 0)) {
+      rows.forEach((row, index) => {
+        if (tests.every((each) => tidied(row.cells[each.index] ?? '') === each.text)) matching.push(first + index)
+      })
+    }
+    first += rows.length
+  }
+  return matching
 }
 
-function unknownColumns(exclusion: Exclusion, headed: readonly HeadedRow[]): string {
-  const headings = new Set(headed.flatMap((row) => Object.keys(row.cells)))
-  const unknown = exclusion.row.matches.filter((each) => !headings.has(tidied(each.column))).map((each) => each.column)
+function unmatched(exclusion: Exclusion, source: DatasetSource, matching: readonly SourceRow[], isUnused: boolean, headed: readonly HeadedRows[]): Diagnostic {
+  const wanted = exclusion.row.matches.map((each) => `${each.column} = ${each.text}`).join(', ')
+  return diagnostic('data/unmatched-exclusion', isUnused
+    ? `Exclusion ${exclusion.number} (${wanted}) takes out a row that dataset \`${source.name}\` does not use`
+    : `Exclusion ${exclusion.number} (${wanted}) matches ${counted(matching.length, 'row')} of dataset \`${source.name}\` instead of ${exclusion.row.rows}`, {
+    place: exclusion.place, actual: matching.length === 0 ? unknownColumns(exclusion, headed) : counted(matching.length, 'row'), expected: counted(exclusion.row.rows, 'used row'),
+    mend: matching.length === 0 ? 'Correct the headings and texts of `row:`' : 'Add a column that tells the rows apart, or say `rows:` with the number meant',
+    related: matching.slice(0, 6).map((row) => ({ message: 'matches', place: { file: row.file, line: row.line } })),
+  })
+}
+
+function unknownColumns({ row }: Exclusion, headed: readonly HeadedRows[]): string {
+  const headings = new Set(headed.flatMap((each) => (row.file === undefined || row.file === each.file ? each.headings : [])))
+  const unknown = row.matches.filter((each) => !headings.has(headingOf(each.column))).map((each) => each.column)
   return unknown.length > 0 ? `no column ${unknown.join(', ')}; there are ${[...headings].filter((heading) => heading !== '').slice(0, 12).join(', ')}` : 'no row with these texts'
+}
+
+/** A heading that stands over two columns cannot say which of them is meant. */
+function repeatedHeading(exclusion: Exclusion, headed: readonly HeadedRows[]): Diagnostic | undefined {
+  for (const { file, headings } of headed) {
+    if (exclusion.row.file !== undefined && exclusion.row.file !== file) continue
+    const twice = exclusion.row.matches.find((each) => headings.filter((heading) => heading === headingOf(each.column)).length > 1)
+    if (twice === undefined) continue
+    return diagnostic('data/unmatched-exclusion', `Exclusion ${exclusion.number} names \`${twice.column}\`, which stands over two columns of \`${file}\``, {
+      place: exclusion.place, actual: twice.column, expected: 'a heading that stands once', mend: 'Choose the row by another column, or rename one of the two in the export',
+    })
+  }
+  return undefined
+}
+
+function takenTwice(exclusion: Exclusion, earlier: Exclusion, row: SourceRow | undefined, measurand: string): Diagnostic {
+  return diagnostic('data/unmatched-exclusion', `Exclusion ${exclusion.number} takes out \`${measurand}\` of a row that exclusion ${earlier.number} takes out already`, {
+    place: exclusion.place, actual: `line ${row?.line ?? 0} of ${row?.file ?? ''}`, expected: 'one reason for each row', mend: 'Remove one of the two exclusions, or give each its own measurands',
+    related: [{ message: 'the first', place: earlier.place }],
+  })
 }
