@@ -44,7 +44,7 @@ export function assessPrecision(input: AssessInput<PrecisionOptions>): AssessOut
     }
     done.push(outcome)
     findings.push(...levelFindings(outcome, own, measurements, input))
-    notEvaluable.push(...absent(outcome))
+    notEvaluable.push(...absent(outcome, fields.length > 0))
     diagnostics.push(...outlierFlag(outcome, own, input))
   }
   const confounded = confoundedFields(measurements.values, fields)
@@ -97,10 +97,10 @@ function levelFindings(level: PrecisionLevel, own: readonly Measurement[], measu
   ]
 }
 
-function absent(level: PrecisionLevel): readonly NotEvaluable[] {
+function absent(level: PrecisionLevel, namesRuns: boolean): readonly NotEvaluable[] {
   const at = level.level === undefined ? {} : { level: level.level }
   return [
-    ...(level.intermediate === undefined ? ['between-run-sd', 'intermediate-precision-sd', 'intermediate-precision-rsd'].map((metric) => ({ metric, ...at, because: 'the data hold one run only, or the study names no runs' })) : []),
+    ...(level.intermediate === undefined ? ['between-run-sd', 'intermediate-precision-sd', 'intermediate-precision-rsd'].map((metric) => ({ metric, ...at, because: namesRuns ? 'the data hold one run only' : 'the study names no runs' })) : []),
     ...(level.repeatability.relative === undefined ? ['repeatability-rsd', 'intermediate-precision-rsd'].map((metric) => ({ metric, ...at, because: 'the mean is zero' })) : []),
     ...(level.horwitz === undefined ? [{ metric: 'horwitz-ratio', ...at, because: 'the study states no mass fraction for a level', notAsked: true as const }] : []),
   ]

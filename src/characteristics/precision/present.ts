@@ -17,6 +17,16 @@ function unit(text: string): string {
   return text === '' ? '' : `\u00a0${text}`
 }
 
+function squared(text: string): string {
+  return text.includes('/') ? `(${text})²` : text === '' ? '' : `${text}²`
+}
+
+/** Nested groups by the fields that make them: `between outer groups (day)`. */
+function componentName({ isNested, runFields }: PrecisionDetail, name: string): string {
+  const fields = { 'between outer groups': runFields.slice(0, -1), 'between inner groups': runFields.slice(-1) }[name]
+  return !isNested || fields === undefined ? name : `${name} (${fields.join(', ')})`
+}
+
 function at({ measurand }: Shown, level: PrecisionLevel): readonly Inline[] {
   return level.level === undefined ? [] : sentence`at ${asTyped(level.level)}${unit(measurand.unit)}`
 }
@@ -25,7 +35,7 @@ function summary(shown: Shown): ReportBlock {
   const { detail, measurand } = shown
   return paragraph(
     ...detail.levels.map((level) => joined([
-      sentence`${count(level.n)} results in ${count(level.runs.length)} ${level.runs.length === 1 ? 'run' : 'runs'}${level.level === undefined ? [] : [...textOf(' '), ...at(shown, level)]} have a repeatability standard deviation of ${printed(level.repeatability.value)}${unit(measurand.unit)}`,
+      sentence`${count(level.n)} results${detail.runFields.length === 0 ? [] : sentence` in ${count(level.runs.length)} ${level.runs.length === 1 ? 'run' : 'runs'}`}${level.level === undefined ? [] : [...textOf(' '), ...at(shown, level)]} have a repeatability standard deviation of ${printed(level.repeatability.value)}${unit(measurand.unit)}`,
       level.intermediate === undefined ? [] : sentence`and an intermediate-precision standard deviation of ${printed(level.intermediate.value)}${unit(measurand.unit)}`,
     ], ' ').concat(textOf('.'))),
     ...(detail.levels.some((level) => level.truncated) ? [textOf('A negative component of variance was estimated and is taken as zero; the estimate stands in the table.')] : []),
@@ -45,7 +55,10 @@ function overview({ detail, measurand, prefix }: Shown): ReportBlock {
       row(level.level === undefined ? 'all' : asTyped(level.level), count(level.n), printed(level.mean, { significant: 5 }), 'repeatability', printed(level.repeatability.value), sentence`${printed(level.repeatability.low)} to ${printed(level.repeatability.high)}`, degreesOfFreedom(level.repeatability.df), level.repeatability.relative === undefined ? '' : printed(level.repeatability.relative, { decimals: 2 })),
       ...(level.intermediate === undefined ? [] : [row('', '', '', 'intermediate', printed(level.intermediate.value), sentence`${printed(level.intermediate.low)} to ${printed(level.intermediate.high)}`, degreesOfFreedom(level.intermediate.satterthwaiteDf), level.intermediate.relative === undefined ? '' : printed(level.intermediate.relative, { decimals: 2 }))]),
     ]),
-    notes: [`Repeatability: chi-square interval.${methods.length === 0 ? '' : ` Intermediate precision: interval by ${methods.join(' or ')}; degrees of freedom by Satterthwaite.`}`],
+    notes: [
+      `Repeatability: chi-square interval.${methods.length === 0 ? '' : ` Intermediate precision: interval by ${methods.join(' or ')}; degrees of freedom by Satterthwaite.`}`,
+      ...(detail.levels.some((level) => level.intermediate !== undefined && new Set(level.runs.map((run) => run.values.length)).size > 1) ? ['Runs differ in size: the interval and the degrees of freedom of the intermediate precision are approximate.'] : []),
+    ],
   })
 }
 
@@ -90,8 +103,8 @@ function anova({ measurand, detail, prefix }: Shown): readonly ReportBlock[] {
   if (levels.length === 0) return []
   return [table({
     id: `${prefix}-anova`, caption: 'Analysis of variance',
-    columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Source', { align: 'text' }), column('df'), column('Sum of squares', { align: 'text' }), column('Mean square', { align: 'text' }), column('Effective number in a run')],
-    groups: levels.map((level) => level.anova.map((each, index) => row(levelCell(level, index === 0), each.source, count(each.df), printed(each.sumOfSquares, { significant: 6 }), printed(each.meanSquare, { significant: 6 }), index === 0 && level.n0 !== undefined ? printed(level.n0, { significant: 5 }) : ''))),
+    columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Source', { align: 'text' }), column('df'), column('Sum of squares', { align: 'text', unit: squared(measurand.unit) }), column('Mean square', { align: 'text', unit: squared(measurand.unit) }), column('Effective number in a run')],
+    groups: levels.map((level) => level.anova.map((each, index) => row(levelCell(level, index === 0), componentName(detail, each.source), count(each.df), printed(each.sumOfSquares, { significant: 6 }), printed(each.meanSquare, { significant: 6 }), index === 0 && level.n0 !== undefined ? printed(level.n0, { significant: 5 }) : ''))),
   })]
 }
 
@@ -102,18 +115,18 @@ function components(shown: Shown): readonly ReportBlock[] {
   return [
     table({
       id: `${prefix}-components`, caption: 'Components of variance',
-      columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Component', { align: 'text' }), column('Variance as estimated'), column('Standard deviation used', { unit: measurand.unit }), column('Share', { unit: '%' })],
-      groups: levels.map((level) => level.components.map((each, index) => row(index === 0 ? (level.level === undefined ? 'all' : asTyped(level.level)) : '', each.component, printed(each.raw), printed(each.standardDeviation), printed(each.share, { decimals: 1 })))),
-      ...(levels.some((level) => level.truncated) ? { notes: ['A negative estimate is taken as zero for the standard deviation; the mean square within runs then stands alone.'] } : {}),
+      columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Component', { align: 'text' }), column('Variance as estimated', { unit: squared(measurand.unit) }), column('Standard deviation used', { unit: measurand.unit }), column('Share', { unit: '%' })],
+      groups: levels.map((level) => level.components.map((each, index) => row(index === 0 ? (level.level === undefined ? 'all' : asTyped(level.level)) : '', componentName(detail, each.component), printed(each.raw), printed(each.standardDeviation), printed(each.share, { decimals: 1 })))),
+      ...(levels.some((level) => level.truncated) ? { notes: [`A negative estimate is taken as zero for the standard deviation${detail.isNested ? '' : '; the mean square within runs then stands alone'}.`] } : {}),
     }),
     ...levels.slice(-1).map((level) => figure({
       id: `${prefix}-components-chart`, caption: [...textOf(`Components of the spread of ${measurand.name}${level.level === undefined ? '' : ' '}`), ...at(shown, level), ...sentence`, n = ${count(level.n)}`],
-      alternative: `Standard deviations of the components ${level.components.map((each) => each.component).join(', ')} and of the whole.`,
+      alternative: `Standard deviations of the components ${level.components.map((each) => componentName(detail, each.component)).join(', ')} and of the whole.`,
       chart: componentBarsChart({
         xTitle: `standard deviation / ${measurand.unit}`,
         bars: [
           { component: 'within runs', value: level.repeatability.value, low: level.repeatability.low, high: level.repeatability.high },
-          ...level.components.filter((each) => each.component !== 'within runs').map((each) => ({ component: each.component, value: each.standardDeviation })),
+          ...level.components.filter((each) => each.component !== 'within runs').map((each) => ({ component: componentName(detail, each.component), value: each.standardDeviation })),
           ...(level.intermediate === undefined ? [] : [{ component: 'intermediate precision', value: level.intermediate.value, low: level.intermediate.low, high: level.intermediate.high }]),
         ],
       }),

@@ -5,7 +5,7 @@ import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
 import type { Inline, NumberNode, ReportBlock } from '../document.ts'
 import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed, probability } from '../numbers.ts'
-import { byCriterion, deciding, resultWords, unitWords } from '../verdict-rows.ts'
+import { byCriterion, deciding, resultWords, unitWords, whereWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, outcomeKey, type Section, slug } from './section.ts'
 
 export function assessmentSectionId(block: string, measurand: string): string {
@@ -45,7 +45,7 @@ function oneAssessment(section: Section, assessment: RecordedAssessment, everyth
     { type: 'sectionHeading', id: assessmentSectionId(assessment.block, assessment.measurand), depth: 2, children: textOf(measurand.name) },
     ...decisions(section, everything ? verdicts : byCriterion(verdicts).map(deciding), prefix, measurand.unit),
     ...(assessment.detail === null ? [paragraph(textOf('Nothing could be computed from the data given.'))] : []),
-    ...notEvaluable(section, assessment, verdicts),
+    ...notEvaluable(section, assessment, verdicts, measurand.unit),
     ...told,
     ...secondary({ everything }, () => findingsTable(section, findings, prefix, measurand.unit)),
   ]
@@ -63,11 +63,20 @@ function decisions(section: Section, verdicts: readonly Verdict[], prefix: strin
   })]
 }
 
-function notEvaluable(section: Section, assessment: RecordedAssessment, verdicts: readonly Verdict[]): readonly ReportBlock[] {
+/** What has one reason at one place is told in one line. */
+function notEvaluable(section: Section, assessment: RecordedAssessment, verdicts: readonly Verdict[], levelUnit: string): readonly ReportBlock[] {
   const told = assessment.notEvaluable.filter((each) => each.notAsked !== true || verdicts.some((verdict) => verdict.metric === each.metric))
   if (told.length === 0) return []
-  const items = told.map((each) => `${metricLabel(section, assessment.characteristic, each.metric)}${each.level === undefined ? '' : ` at ${each.level}`}${each.condition === undefined ? '' : ` (${each.condition})`}: ${each.because}`)
-  return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [{ type: 'text', value: item }] }] })) }]
+  const lines = new Map<string, { readonly labels: string[]; readonly rest: readonly Inline[] }>()
+  for (const each of told) {
+    const key = JSON.stringify([each.because, each.level, each.condition])
+    const label = metricLabel(section, assessment.characteristic, each.metric)
+    const line = lines.get(key)
+    if (line === undefined) lines.set(key, { labels: [label], rest: [...whereWords(each, levelUnit), ...textOf(`: ${each.because}`)] })
+    else line.labels.push(label)
+  }
+  const items = [...lines.values()].map(({ labels, rest }): readonly Inline[] => [...textOf(labels.join(', ')), ...rest])
+  return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [...item] }] })) }]
 }
 
 /** Every finding with interval, n, df and method: the register from which everything above is told. */
