@@ -69,6 +69,8 @@ export function check(studyFile: ReadFile, world: World): Checked {
     const earlier = readOne(study.report.supersedes.value, study.report.supersedes.place, world, noticed, true)
     if (earlier !== undefined) files.push({ ...earlier, role: 'earlier record' })
   }
+  const parts = template === undefined ? [] : parseTemplate({ file: template.path, text: decoded(template.bytes) })
+  if (template !== undefined) noticed.push(...templateProblems({ file: template.path, parts }, study))
   const data = readData(study, new Map(raw.map((each) => [each.path, each.bytes])))
   noticed.push(...data.diagnostics)
   if (data.value === undefined || hasErrors(noticed)) return { ...nothing, diagnostics: noticed }
@@ -79,9 +81,6 @@ export function check(studyFile: ReadFile, world: World): Checked {
   const record = assessed.value
   if (record === undefined || template === undefined) return { ...nothing, diagnostics: noticed }
 
-  const parts = parseTemplate({ file: template.path, text: decoded(template.bytes) })
-  noticed.push(...templateProblems(parts, record.study))
-  if (hasErrors(noticed)) return { study, record, diagnostics: noticed, files }
   return {
     study, record, diagnostics: noticed, files,
     tell() {

@@ -56,8 +56,13 @@ const otherwise: readonly (readonly [RegExp, string])[] = [
 function inOurWords(phrase: string): string {
   const match = otherwise.find(([sign]) => sign.test(phrase))
   if (match !== undefined) return `Write \`${phrase.replace(match[0], match[1])}\``
-  const bounds = /^([\d.]+ ?\S*) ?(?:-|–|to|\.\.) ?([\d.]+ ?\S*)$/.exec(phrase)
-  if (bounds !== null) return `Write \`between ${bounds[1]} and ${bounds[2]}\``
+  const bounds = /^(?:from )?([\d.]+) ?([^\d\s–-]*) ?(?:-|–|to|\.\.) ?([\d.]+) ?(\S*)$/.exec(phrase)
+  if (bounds !== null) {
+    const unit = bounds[4] === '' ? '' : ` ${bounds[4]}`
+    return `Write \`between ${bounds[1]}${unit} and ${bounds[3]}${unit}\``
+  }
+  const around = /^([\d.]+) ?± ?([\d.]+) ?(\S*)$/.exec(phrase)
+  if (around !== null) return 'Write both ends, such as `between 95 % and 105 %`'
   const words = /^[^\d+-]*/.exec(phrase)?.[0].trim() ?? ''
   const guess = words === '' ? undefined : nearest(words, ['at most', 'at least', 'between', 'above', 'below'])
   return guess === undefined || guess === words ? examples : `Write \`${guess}${phrase.slice(words.length)}\``

@@ -35,7 +35,8 @@ export function readUnit(typed: string): ReadUnit {
   if (unit === '' || isUnit(unit)) return { known: true, unit }
   const proposal = unit.split(/([/·()*]|\s+)/).filter((piece) => piece !== '').map(properPiece).join('').replace(/·?([/()·])·?/g, '$1')
   if (proposal !== unit && isUnit(proposal)) return { known: false, nearest: proposal }
-  return { known: false, nearest: nearest(unit, usual) }
+  // `mgL` is as near to `mg` as to `mg/L`; a forgotten sign is the likelier slip.
+  return { known: false, nearest: usual.find((each) => each.replace(/[/·]/g, '') === unit) ?? nearest(unit, usual) }
 }
 
 function properPiece(piece: string): string {

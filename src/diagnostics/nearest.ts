@@ -20,11 +20,13 @@ function distance(left: string, right: string): number {
 
 export function nearest(typed: string, known: readonly string[]): string | undefined {
   const word = typed.toLowerCase().slice(0, 80)
-  let best: { readonly candidate: string; readonly distance: number } | undefined
+  let best: { readonly candidate: string; readonly distance: number; readonly isTied: boolean } | undefined
   for (const candidate of known) {
     const found = distance(word, candidate.toLowerCase())
-    if (best === undefined || found < best.distance) best = { candidate, distance: found }
+    if (best === undefined || found < best.distance) best = { candidate, distance: found, isTied: false }
+    else if (found === best.distance && candidate !== best.candidate) best = { ...best, isTied: true }
   }
-  if (best === undefined) return undefined
+  // Two words equally near: either could be meant, and a wrong proposal is taken more readily than none.
+  if (best === undefined || best.isTied) return undefined
   return best.distance <= Math.max(1, Math.floor(Math.max(word.length, best.candidate.length) * 0.4)) ? best.candidate : undefined
 }

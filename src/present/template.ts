@@ -9,7 +9,8 @@ import type { Place } from '../diagnostics/place.ts'
 
 export type TemplatePart =
   | { readonly kind: 'heading'; readonly depth: 1 | 2 | 3; readonly text: string; readonly place: Place }
-  | { readonly kind: 'directive'; readonly name: string; readonly attributes: Readonly<Record<string, string>>; readonly place: Place }
+  /** `hasContent`: written as `:::name` with something inside, which no directive takes. */
+  | { readonly kind: 'directive'; readonly name: string; readonly attributes: Readonly<Record<string, string>>; readonly hasContent: boolean; readonly place: Place }
   | { readonly kind: 'paragraph'; readonly pieces: readonly TemplatePiece[]; readonly place: Place }
   | { readonly kind: 'block'; readonly node: RootContent; readonly place: Place }
 
@@ -30,7 +31,7 @@ export function parseTemplate(template: { readonly file: string; readonly text: 
       case 'heading': return { kind: 'heading', depth: node.depth > 3 ? 3 : (node.depth as 1 | 2 | 3), text: plainText(node, text), place }
       case 'paragraph': return { kind: 'paragraph', pieces: node.children.flatMap((child) => pieces(child, template.file, text)), place }
       case 'leafDirective': case 'containerDirective':
-        return { kind: 'directive', name: node.name, attributes: Object.fromEntries(Object.entries(node.attributes ?? {}).map(([key, value]) => [key, value ?? ''])), place }
+        return { kind: 'directive', name: node.name, attributes: Object.fromEntries(Object.entries(node.attributes ?? {}).map(([key, value]) => [key, value ?? ''])), hasContent: node.type === 'containerDirective', place }
       default: return { kind: 'block', node, place }
     }
   })
