@@ -1,25 +1,42 @@
 // The exhibits and sentences of the range, from its detail alone.
-import { column, paragraph, row, sentence, table, textOf } from '../../present/build.ts'
+import { column, paragraph, row, sentence, table, textOf, type Words } from '../../present/build.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asTyped } from '../../present/numbers.ts'
+import { asPercent, asTyped } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { RangeDetail } from './assess.ts'
+import type { LevelWord } from './levels.ts'
 
 export function presentRange({ detail, measurand, prefix }: Presented<RangeDetail>): readonly ReportBlock[] {
   const unit = measurand.unit === '' ? '' : `\u00a0${measurand.unit}`
-  const shown: readonly Inline[] = detail.low === undefined || detail.high === undefined
-    ? textOf('No tested level meets everything that is required, so no range is shown.')
-    : sentence`Accuracy, precision and linearity hold together from ${asTyped(detail.low)} to ${asTyped(detail.high)}${unit}. The range ends at tested levels; nothing is said beyond them.`
   return [
     paragraph(
-      shown, detail.claim === undefined ? [] : sentence`The range claimed is ${asTyped(detail.claim.low)} to ${asTyped(detail.claim.high)}${unit}.`,
+      shown(detail, unit), detail.claim === undefined ? [] : sentence`The range claimed is ${asTyped(detail.claim.low)} to ${asTyped(detail.claim.high)}${unit}.`,
       detail.fitLow === undefined || detail.fitHigh === undefined ? [] : sentence`The accepted range of the fit is ${asTyped(detail.fitLow)} to ${asTyped(detail.fitHigh)}${unit}.`,
     ),
     table({
       id: `${prefix}-levels`, caption: 'Levels tested for accuracy and precision, and what holds at each',
       columns: [column('Level', { unit: measurand.unit, rowHeader: true }), column('Accuracy', { align: 'text' }), column('Precision', { align: 'text' }), column('Linearity', { align: 'text' }), column('All hold', { align: 'text' })],
-      rows: detail.levels.map((level) => row(asTyped(level.level), { type: 'verdict', word: level.accuracy }, { type: 'verdict', word: level.precision }, { type: 'verdict', word: level.linearity }, level.holds ? 'yes' : 'no')),
-      notes: ['“Information only” stands where the study states no criterion at the level.'],
+      rows: detail.levels.map((level) => row(asTyped(level.level), cell(level.accuracy), cell(level.precision), cell(level.linearity), level.holds ? 'yes' : 'no')),
+      notes: notes(detail),
     }),
+  ]
+}
+
+function shown({ low, high }: RangeDetail, unit: string): readonly Inline[] {
+  if (low === undefined || high === undefined) return textOf('At no tested level is everything met that is required, so no range is shown.')
+  if (low === high) return sentence`Accuracy, precision and linearity hold together at ${asTyped(low)}${unit} alone; nothing is said of other levels.`
+  return sentence`Accuracy, precision and linearity hold together from ${asTyped(low)} to ${asTyped(high)}${unit}. The range ends at tested levels; nothing is said beyond them.`
+}
+
+function cell(word: LevelWord): Words {
+  return word === 'not tested' || word === 'outside the fit' ? word : { type: 'verdict', word }
+}
+
+function notes({ levels, tolerance }: RangeDetail): readonly (readonly Inline[])[] {
+  const has = (word: LevelWord): boolean => levels.some((level) => [level.accuracy, level.precision, level.linearity].includes(word))
+  return [
+    ...(levels.some((level) => level.accuracy === 'not tested' && level.precision === 'not tested') ? [textOf('A standard at which the fit does not hold stands here although nothing else was tested there: the range cannot pass it.')] : []),
+    ...(has('information only') ? [textOf('“Information only” stands where the study states no criterion at the level.')] : []),
+    ...(tolerance === 0 ? [] : [sentence`Levels that differ by up to ${asPercent(tolerance)}\u202f% count as one; the range then ends at the innermost of them.`]),
   ]
 }
