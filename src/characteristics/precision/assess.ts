@@ -38,7 +38,7 @@ export function assessPrecision(input: AssessInput<PrecisionOptions>): AssessOut
       confidence: input.confidence, isNested: options.nested !== undefined, horwitzFactor: options['horwitz-factor'],
     }))
     if (typeof outcome === 'string') {
-      notEvaluable.push(...perLevel.map((metric): NotEvaluable => ({ metric, ...(level === undefined ? {} : { level }), because: outcome })))
+      notEvaluable.push(...perLevel.map((metric): NotEvaluable => ({ metric, ...(level === undefined ? {} : { level }), because: outcome, ...(metric === 'horwitz-ratio' && options['horwitz-factor'] === undefined ? { notAsked: true } : {}) })))
       if (because === undefined) diagnostics.push(diagnostic('assess/too-few-values', `The precision of \`${input.measurand.id}\`${level === undefined ? '' : ` at ${level}`} cannot be computed: ${outcome}`, { place, actual: `${own.length} values`, expected: 'at least two scattering values, in each run at least one, in some run two', mend: 'Add replicates' }))
       continue
     }

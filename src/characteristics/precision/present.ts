@@ -18,7 +18,7 @@ function unit(text: string): string {
 }
 
 function squared(text: string): string {
-  return text.includes('/') ? `(${text})²` : text === '' ? '' : `${text}²`
+  return text.includes('/') ? `(${text})²` : text === '' || text === '1' ? text : `${text}²`
 }
 
 /** Nested groups by the fields that make them: `between outer groups (day)`. */

@@ -5,7 +5,7 @@ import type { Finding, Verdict } from '../../assess/finding.ts'
 import { column, joined, paragraph, row, secondary, sentence, table, textOf } from '../build.ts'
 import type { Inline, NumberNode, ReportBlock } from '../document.ts'
 import { asFound, asPercent, asTyped, count, degreesOfFreedom, printed, probability } from '../numbers.ts'
-import { byCriterion, deciding, resultWords, unitWords, whereWords } from '../verdict-rows.ts'
+import { byCriterion, deciding, resultWords, unitWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, outcomeKey, type Section, slug } from './section.ts'
 
 export function assessmentSectionId(block: string, measurand: string): string {
@@ -67,16 +67,17 @@ function decisions(section: Section, verdicts: readonly Verdict[], prefix: strin
 function notEvaluable(section: Section, assessment: RecordedAssessment, verdicts: readonly Verdict[], levelUnit: string): readonly ReportBlock[] {
   const told = assessment.notEvaluable.filter((each) => each.notAsked !== true || verdicts.some((verdict) => verdict.metric === each.metric))
   if (told.length === 0) return []
-  const lines = new Map<string, { readonly labels: string[]; readonly rest: readonly Inline[] }>()
+  const lines = new Map<string, string[]>()
   for (const each of told) {
-    const key = JSON.stringify([each.because, each.level, each.condition])
-    const label = metricLabel(section, assessment.characteristic, each.metric)
-    const line = lines.get(key)
-    if (line === undefined) lines.set(key, { labels: [label], rest: [...whereWords(each, levelUnit), ...textOf(`: ${each.because}`)] })
-    else line.labels.push(label)
+    const at = `${each.level === undefined ? '' : ` at ${each.level}${textUnit(levelUnit)}`}${each.condition === undefined ? '' : ` (${each.condition})`}: ${each.because}`
+    lines.set(at, [...(lines.get(at) ?? []), metricLabel(section, assessment.characteristic, each.metric)])
   }
-  const items = [...lines.values()].map(({ labels, rest }): readonly Inline[] => [...textOf(labels.join(', ')), ...rest])
-  return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [...item] }] })) }]
+  const items = [...lines].map(([rest, labels]) => `${labels.join(', ')}${rest}`)
+  return [paragraph(textOf('Not evaluable:')), { type: 'list', ordered: false, spread: false, children: items.map((item) => ({ type: 'listItem', spread: false, children: [{ type: 'paragraph', children: [{ type: 'text', value: item }] }] })) }]
+}
+
+function textUnit(unit: string): string {
+  return unit === '' ? '' : `${unit === '%' ? '\u202f' : '\u00a0'}${unit}`
 }
 
 /** Every finding with interval, n, df and method: the register from which everything above is told. */
