@@ -145,7 +145,7 @@ function flagged(own: readonly Preparation[], level: number | undefined, input: 
     const test = grubbs(own.map((each) => each.value))
     const value = own[test.index]
     if (test.G <= test.critical01 || value === undefined) return []
-    return [diagnostic('assess/outlier-flag', `${value.found} of \`${input.measurand.id}\`${level === undefined ? '' : ` at ${level}`} lies far from the others (Grubbs, ${outlierAlpha}); it stays in`, { place: input.block.place, actual: `row ${(value.measurement.rows[0] ?? 0) + 1} of dataset ${input.block.options.data}`, expected: 'a look into the raw data; statistics alone are no reason to remove a result' })]
+    return [diagnostic('assess/outlier-flag', `${value.found} of \`${input.measurand.id}\`${level === undefined ? '' : ` at ${level}`} lies far from the others (Grubbs, ${outlierAlpha}); it stays in`, { place: input.observations(input.block.options.data).find((each) => each.row === value.measurement.rows[0])?.fields[value.measurement.averaged.length > 1 ? 'response' : 'result']?.place ?? input.block.place, actual: String(value.found), expected: 'a look into the raw data; statistics alone are no reason to remove a result' })]
   } catch (error) {
     if (error instanceof RangeError) return []
     throw error

@@ -22,6 +22,13 @@ export function readingsOf(input: AssessInput<ComparisonOptions>): ReadingsOutco
   const { options, place } = input.block
   const measurements = input.results(options.data)
   if (measurements === undefined) return { readings: [], because: `dataset ${options.data} gives no results`, diagnostics: [] }
+  if (measurements.values.length > 0 && !measurements.values.some((each) => each.factors[options.conditions.column] !== undefined)) {
+    const mapped = Object.keys(measurements.values[0]?.factors ?? {})
+    return {
+      measurements, readings: [], because: `dataset ${options.data} maps no column for ${options.conditions.column}`,
+      diagnostics: [diagnostic('assess/missing-field', `Dataset \`${options.data}\` maps no column for \`${options.conditions.column}\`, which should hold the condition`, { place, actual: mapped.join(', '), expected: options.conditions.column, mend: mapped.length === 0 ? `Add \`${options.conditions.column}:\` under \`columns:\`` : `Write one of ${mapped.join(', ')} as \`column:\`, or map it` })],
+    }
+  }
   const wanted = [options.conditions.reference, ...otherConditions(options)]
   const conditionOf = (each: Pick<Measurement, 'factors'>): string => each.factors[options.conditions.column] ?? ''
   const censored = measurements.censored.find((each) => wanted.includes(conditionOf(each)))

@@ -45,7 +45,7 @@ export function assessPrecision(input: AssessInput<PrecisionOptions>): AssessOut
     done.push(outcome)
     findings.push(...levelFindings(outcome, own, measurements, input))
     notEvaluable.push(...absent(outcome, fields.length > 0))
-    diagnostics.push(...outlierFlag(outcome, own, input))
+    diagnostics.push(...outlierFlag(outcome, own, (each) => runOf(each), input))
   }
   const confounded = confoundedFields(measurements.values, fields)
   if (confounded.length > 0) diagnostics.push(diagnostic('assess/confounded-factors', `Run fields of \`${input.measurand.id}\` change together: ${confounded.join('; ')}`, { place, actual: confounded.join('; '), expected: 'each combination of the fields at least once', mend: 'Nothing, if only their sum is wanted; their contributions cannot be separated' }))
@@ -107,15 +107,16 @@ function absent(level: PrecisionLevel, namesRuns: boolean): readonly NotEvaluabl
 }
 
 /** Grubbs' test on the deviations from the run means: differences between runs are no outliers. */
-function outlierFlag(level: PrecisionLevel, own: readonly Measurement[], input: AssessInput<PrecisionOptions>): readonly Diagnostic[] {
-  const deviations = level.runs.flatMap((run) => run.values.map((value) => ({ value, deviation: value - run.mean })))
+function outlierFlag(level: PrecisionLevel, own: readonly Measurement[], runOf: (each: Measurement) => string, input: AssessInput<PrecisionOptions>): readonly Diagnostic[] {
+  const means = new Map(level.runs.map((run) => [run.run, run.mean]))
+  const deviations = own.map((each) => each.value - (means.get(runOf(each)) ?? level.mean))
   if (deviations.length < 6) return []
   try {
-    const test = grubbs(deviations.map((each) => each.deviation))
-    const flagged = deviations[test.index]
+    const test = grubbs(deviations)
+    const flagged = own[test.index]
     if (test.G <= test.critical01 || flagged === undefined) return []
-    const row = own.find((each) => each.value === flagged.value)?.rows[0]
-    return [diagnostic('assess/outlier-flag', `${flagged.value} of \`${input.measurand.id}\`${level.level === undefined ? '' : ` at ${level.level}`} lies far from its run (Grubbs, ${outlierAlpha}); it stays in`, { place: input.block.place, actual: `row ${row === undefined ? '' : row + 1} of dataset ${input.block.options.data}`, expected: 'a look into the raw data; statistics alone are no reason to remove a result' })]
+    const cells = input.observations(input.block.options.data).find((each) => each.row === flagged.rows[0])?.fields
+    return [diagnostic('assess/outlier-flag', `${flagged.value} of \`${input.measurand.id}\`${level.level === undefined ? '' : ` at ${level.level}`} lies far from its run (Grubbs, ${outlierAlpha}); it stays in`, { place: (cells?.['result'] ?? cells?.['response'])?.place ?? input.block.place, actual: String(flagged.value), expected: 'a look into the raw data; statistics alone are no reason to remove a result' })]
   } catch (error) {
     if (error instanceof RangeError) return []
     throw error

@@ -2,8 +2,8 @@
 import { column, paragraph, row, table, textOf } from '../build.ts'
 import type { Inline, ReportBlock } from '../document.ts'
 import { count, printed } from '../numbers.ts'
-import { unitWords } from '../verdict-rows.ts'
-import type { Section } from './section.ts'
+import { unitWords, whereWords } from '../verdict-rows.ts'
+import { blockTitle, measurandOf, metricLabel, type Section } from './section.ts'
 
 export function exclusions(section: Section): readonly ReportBlock[] {
   const { record } = section
@@ -15,12 +15,24 @@ export function exclusions(section: Section): readonly ReportBlock[] {
       columns: [column('No.'), column('Dataset', { align: 'text', rowHeader: true }), column('Row', { align: 'text' }), column('Class', { align: 'text' }), column('Reason', { align: 'text' }), column('Reference', { align: 'text' }), column('Requested by', { align: 'text' }), column('Approved by', { align: 'text' }), column('Date', { align: 'text' })],
       rows: record.study.exclusions.map((each) => row(
         count(each.number), each.dataset.value, [...each.row.matches.map((match) => `${match.column} = ${match.text}`), ...(each.measurands === undefined ? [] : [`only ${each.measurands.join(', ')}`])].join(', '),
-        each.class, each.reason, each.reference ?? 'none', each.requestedBy, each.approvedBy, each.date,
+        each.class, each.reason, each.reference ?? 'none', nameOf(section, each.requestedBy), nameOf(section, each.approvedBy), each.date,
       )),
     }),
     paragraph(textOf(flips === 0 ? 'No verdict changes when the excluded rows are put back.' : 'Some verdicts change when the excluded rows are put back; they are marked in the table that follows.')),
     ...effects(section),
   ]
+}
+
+function nameOf({ record }: Section, id: string): string {
+  return Object.values(record.study.people).flat().find((person) => person.id === id)?.name ?? id
+}
+
+/** Measurand, block and metric with level and condition; the id itself where a finding exists only with the rows put back. */
+function findingWords(section: Section, id: string): readonly Inline[] {
+  const finding = section.findings.get(id)
+  if (finding === undefined) return textOf(id)
+  const measurand = measurandOf(section, finding.measurand)
+  return [...textOf(`${measurand.name}, ${blockTitle(section, finding.block)}: ${metricLabel(section, finding.characteristic, finding.metric)}`), ...whereWords(finding, measurand.unit)]
 }
 
 function effects(section: Section): readonly ReportBlock[] {
@@ -31,7 +43,7 @@ function effects(section: Section): readonly ReportBlock[] {
     id: 'exclusion-effects', caption: 'Every result that an exclusion touches, without and with the excluded rows',
     columns: [column('Finding', { align: 'text', rowHeader: true }), column('Exclusions', { align: 'text' }), column('Without the rows', { align: 'text' }), column('With the rows', { align: 'text' }), column('Verdict without', { align: 'text' }), column('Verdict with', { align: 'text' })],
     rows: withExcluded.map((each) => row(
-      each.finding, each.exclusions.join(', '), value(each.without, each.unit), value(each.with, each.unit),
+      findingWords(section, each.finding), each.exclusions.join(', '), value(each.without, each.unit), value(each.with, each.unit),
       each.verdicts.map((verdict): Inline => ({ type: 'verdict', word: verdict.without })), each.verdicts.map((verdict): Inline => ({ type: 'verdict', word: verdict.with })),
     )),
     notes: ['“Without the rows” is what this report decides on.'],
