@@ -5,7 +5,7 @@ import { attach, type Attachment } from './attachments.ts'
 import { Content, type ContentResources } from './content.ts'
 import { fontResources } from './font-resources.ts'
 import type { Box, Frames, LinkBox } from './frames.ts'
-import { writeOutline } from './outline.ts'
+import { type Destination, writeOutline } from './outline.ts'
 import { openPdf, type PdfWriterInput } from './pdf-writer.ts'
 import type { PdfDictionary, PdfDocument, PdfReference } from './pdfkit-augmented.d.ts'
 import { type StructureTree, structureTree } from './structure-tree.ts'
@@ -15,12 +15,6 @@ import { page } from './style.ts'
 export interface DrawInput extends PdfWriterInput {
   readonly fonts: FontFaces
   readonly attachments: readonly Attachment[]
-}
-
-export interface Destination {
-  readonly page: PdfReference
-  /** From the foot of the page. */
-  readonly y: number
 }
 
 export function draw(frames: Frames, input: DrawInput): Uint8Array {

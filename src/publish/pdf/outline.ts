@@ -1,12 +1,18 @@
 // Headings → bookmarks, nested by their depth; sections are open to their first level.
 import type { OutlineEntry } from './frames.ts'
-import type { Destination } from './draw.ts'
 import type { PdfDocument, PdfReference } from './pdfkit-augmented.d.ts'
 
 interface Item {
   readonly entry: OutlineEntry
   readonly reference: PdfReference
   readonly children: Item[]
+}
+
+/** Where on which page something stands. */
+export interface Destination {
+  readonly page: PdfReference
+  /** From the foot of the page. */
+  readonly y: number
 }
 
 export function writeOutline(pdf: PdfDocument, entries: readonly OutlineEntry[], destinations: ReadonlyMap<string, Destination>): void {
