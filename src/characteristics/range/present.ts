@@ -11,7 +11,7 @@ export function presentRange({ detail, measurand, prefix }: Presented<RangeDetai
   return [
     paragraph(
       shown(detail, unit), detail.claim === undefined ? [] : sentence`The range claimed is ${asTyped(detail.claim.low)} to ${asTyped(detail.claim.high)}${unit}.`,
-      detail.fitLow === undefined || detail.fitHigh === undefined ? [] : sentence`The accepted range of the fit is ${asTyped(detail.fitLow)} to ${asTyped(detail.fitHigh)}${unit}.`,
+      detail.fitLow === undefined || detail.fitHigh === undefined ? [] : sentence`The outermost standards at which the fit is accepted stand at ${asTyped(detail.fitLow)} and ${asTyped(detail.fitHigh)}${unit}.`,
     ),
     table({
       id: `${prefix}-levels`, caption: 'Levels tested for accuracy and precision, and what holds at each',
@@ -32,10 +32,11 @@ function cell(word: LevelWord): Words {
   return word === 'not tested' || word === 'outside the fit' ? word : { type: 'verdict', word }
 }
 
-function notes({ levels, tolerance }: RangeDetail): readonly (readonly Inline[])[] {
+function notes({ levels, tolerance, low = -Infinity, high = Infinity }: RangeDetail): readonly (readonly Inline[])[] {
   const has = (word: LevelWord): boolean => levels.some((level) => [level.accuracy, level.precision, level.linearity].includes(word))
   return [
     ...(levels.some((level) => level.accuracy === 'not tested' && level.precision === 'not tested') ? [textOf('A standard at which the fit does not hold stands here although nothing else was tested there: the range cannot pass it.')] : []),
+    ...(levels.some((level) => level.holds && (level.low < low || level.high > high)) ? [textOf('Everything holds at other levels too, but a level at which it does not stands between; the widest interval counts.')] : []),
     ...(has('information only') ? [textOf('“Information only” stands where the study states no criterion at the level.')] : []),
     ...(tolerance === 0 ? [] : [sentence`Levels that differ by up to ${asPercent(tolerance)}\u202f% count as one; the range then ends at the innermost of them.`]),
   ]
