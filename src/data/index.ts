@@ -14,7 +14,18 @@ export function readData(study: StudyDefinition, files: ReadonlyMap<string, Uint
   const diagnostics: Diagnostic[] = []
   const tables = tableReader()
   const datasets = study.datasets.map((source) => readDataset(source, study, files, tables, diagnostics))
-  return { value: hasErrors(diagnostics) ? undefined : datasets, diagnostics }
+  return { value: hasErrors(diagnostics) ? undefined : datasets, diagnostics: notesOnce(diagnostics) }
+}
+
+/** What is noted of a file is noted once, however many datasets read it. */
+function notesOnce(diagnostics: readonly Diagnostic[]): readonly Diagnostic[] {
+  const seen = new Set<string>()
+  return diagnostics.filter((each) => {
+    const key = `${each.code}\u0000${each.message}\u0000${each.place?.line ?? 0}`
+    const isRepeat = each.severity === 'note' && seen.has(key)
+    seen.add(key)
+    return !isRepeat
+  })
 }
 
 function readDataset(source: DatasetSource, study: StudyDefinition, files: ReadonlyMap<string, Uint8Array>, tables: TableReader, diagnostics: Diagnostic[]): Dataset {
