@@ -74,7 +74,10 @@ function documentOf(text: string, placeOf: PlaceOf): { readonly document?: Docum
   tokens.push(...parser.end())
   const documents = [...new Composer({ version: '1.2', uniqueKeys: false, strict: true, merge: false, prettyErrors: false, logLevel: 'silent' }).compose(tokens)]
   const told = new Set<number | undefined>() // one line, one diagnostic: what follows from an error is no news
-  const diagnostics = documents.flatMap((document) => [...document.errors, ...document.warnings]).flatMap((error) => {
+  const errors = documents.flatMap((document) => [...document.errors, ...document.warnings])
+  // A tab shifts all that follows it, so the lines after it are complained of without being wrong.
+  const tabs = errors.filter((error) => error.code === 'TAB_AS_INDENT')
+  const diagnostics = (tabs.length > 0 ? tabs : errors).flatMap((error) => {
     const place = placeOf(...error.pos)
     if (told.has(place.line)) return []
     told.add(place.line)

@@ -52,8 +52,13 @@ function unfitData(measurements: Measurements, input: AssessInput<LinearityOptio
       place: censored.cell.place, actual: censored.cell.text, expected: 'a number', mend: 'Give the response of every standard, or exclude the row with a reason',
     })
   }
-  const unplaced = measurements.values.some((each) => each.level === undefined)
-  return unplaced ? diagnostic('assess/missing-field', `Dataset \`${measurements.dataset}\` gives a response without a level`, { place: input.block.place, expected: 'a column for `level`, filled in every row', mend: 'Map the column that holds the level of each standard' }) : undefined
+  const unplaced = measurements.values.find((each) => each.level === undefined)
+  if (unplaced === undefined) return undefined
+  const cell = input.observations(measurements.dataset).find((each) => each.row === unplaced.rows[0])?.fields['level']
+  return diagnostic('assess/missing-field', `Dataset \`${measurements.dataset}\` gives a response without a level`, {
+    place: cell?.place ?? input.block.place, actual: cell === undefined ? 'no column for `level`' : `\`${cell.text.trim()}\``, expected: 'a level in every row',
+    mend: cell === undefined ? 'Map the column that holds the level of each standard' : 'Fill in the level, or leave the row out with `rows:`',
+  })
 }
 
 function detailOf(input: AssessInput<LinearityOptions>, measurements: Measurements, fit: Fit, levels: readonly number[]): LinearityDetail {

@@ -43,6 +43,11 @@ export function assessRange(input: AssessInput<RangeOptions>): AssessOutput<Rang
   const start: RangeDetail = {
     levels, tolerance, ...(options.claim === undefined ? {} : { claim: { low: options.claim.low.value, high: options.claim.high.value } }), ...acceptedFit(priors.linearity, same),
   }
+  const empty = (['accuracy', 'precision'] as const).filter((name) => priors[name].every((prior) => prior.findings.length === 0))
+  if (empty.length > 0) {
+    const because = `${empty.join(' and ')} could not be evaluated at any level`
+    return nothing(because, told(because, 'accuracy and precision that can be evaluated', `See what is said of ${empty.join(' and ')} of this measurand`), start)
+  }
   if (!isShared) {
     const because = 'accuracy and precision share no tested level'
     return nothing(because, told(because, 'levels tested for both accuracy and precision', 'Test accuracy and precision at the same levels, or declare `level-tolerance`'), start)
