@@ -43,6 +43,11 @@ export function column(header: string, options: { readonly unit?: string | undef
   return { header, align: options.align ?? 'number', ...(options.unit === undefined || options.unit === '' ? {} : { unit: options.unit }), ...(options.rowHeader ? { rowHeader: true } : {}) }
 }
 
+/** Title of an axis: `result / mg/L`, or the name alone where there is no unit. */
+export function axisTitle(name: string, unit: string | undefined): string {
+  return unit === undefined || unit === '' ? name : `${name} / ${unit}`
+}
+
 export function row(...cells: readonly Words[]): ExhibitRow {
   return { cells: cells.map(textOf) }
 }

@@ -46,8 +46,9 @@ export function resultWords(verdict: Verdict, finding: Finding | undefined, leve
   return [...joined(values, ' to '), ...unitWords(finding.unit), ...whereWords(verdict, levelUnit)]
 }
 
+/** `1` is the unit of a plain number and is not printed. */
 export function unitWords(unit: string): readonly Inline[] {
-  return unit === '' ? [] : textOf(`${unit === '%' ? '\u202f' : '\u00a0'}${unit}`)
+  return unit === '' || unit === '1' ? [] : textOf(`${unit === '%' ? '\u202f' : '\u00a0'}${unit}`)
 }
 
 /** ` at 0.05 mg/L`, ` (north)`, or nothing. */

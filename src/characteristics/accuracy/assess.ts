@@ -76,24 +76,33 @@ function levelOf(level: number | undefined, own: readonly Preparation[], input: 
   }
 }
 
-/** mean ± t·√(s²/n + u²(native)); from the between-run mean square when the study names runs. */
+/** mean ± t·√(s²/n + u²(native)); in place of s²/n the between-run mean square over n when the study names runs. */
 function intervalOf(own: readonly Preparation[], spread: number, input: AssessInput<AccuracyOptions>): Pick<AccuracyLevel, 'low' | 'high' | 'df' | 'intervalMethod'> {
+  const { standardError, df, method } = nestedError(own, input) ?? { standardError: spread / Math.sqrt(own.length), df: own.length - 1, method: 'Student t' }
+  const centre = mean(own.map((each) => each.value))
+  const native = nativeVarianceOfMean(own)
+  const half = studentQuantile((1 + input.confidence) / 2, df) * Math.sqrt(standardError ** 2 + native)
+  return { low: centre - half, high: centre + half, df, intervalMethod: native > 0 ? `${method}, uncertainty of the native content included` : method }
+}
+
+function nestedError(own: readonly Preparation[], input: AssessInput<AccuracyOptions>): { readonly standardError: number; readonly df: number; readonly method: string } | undefined {
   const fields = input.block.options.runs ?? []
   const runOf = (each: Preparation): string => fields.map((field) => each.measurement.factors[field] ?? '').join(' · ')
   const runs = [...new Set(own.map(runOf))]
-  if (fields.length > 0 && runs.length > 1 && runs.length < own.length) {
-    try {
-      const { low, high, df } = nestedMeanInterval(oneWay(runs.map((run) => own.filter((each) => runOf(each) === run).map((each) => each.value))), input.confidence)
-      return { low, high, df, intervalMethod: 'Student t on the between-run mean square' }
-    } catch (error) {
-      if (!(error instanceof RangeError)) throw error
-    }
+  if (fields.length === 0 || runs.length < 2 || runs.length === own.length) return undefined
+  try {
+    const { standardError, df } = nestedMeanInterval(oneWay(runs.map((run) => own.filter((each) => runOf(each) === run).map((each) => each.value))), input.confidence)
+    return { standardError, df, method: 'Student t on the between-run mean square' }
+  } catch (error) {
+    if (error instanceof RangeError) return undefined
+    throw error
   }
-  const df = own.length - 1
-  const centre = mean(own.map((each) => each.value))
-  const nativeVariance = mean(own.map((each) => each.nativeVariance))
-  const half = studentQuantile((1 + input.confidence) / 2, df) * Math.sqrt(spread ** 2 / own.length + nativeVariance)
-  return { low: centre - half, high: centre + half, df, intervalMethod: nativeVariance > 0 ? 'Student t, uncertainty of the native content included' : 'Student t' }
+}
+
+/** Values of one unspiked sample carry one and the same error of its content; those of different samples carry independent ones. */
+function nativeVarianceOfMean(own: readonly Preparation[]): number {
+  const samples = [...new Set(own.map((each) => each.nativeSample))]
+  return samples.reduce((total, sample) => total + own.filter((each) => each.nativeSample === sample).reduce((sum, each) => sum + Math.sqrt(each.nativeVariance) / own.length, 0) ** 2, 0)
 }
 
 function evidence(own: readonly Preparation[], measurements: Measurements, natives: FindingDraft['evidence']): FindingDraft['evidence'] {

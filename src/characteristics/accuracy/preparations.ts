@@ -16,6 +16,8 @@ export interface Preparation {
   readonly value: number
   /** Variance that the mean native content adds to every value of its sample, in the unit of `value`. */
   readonly nativeVariance: number
+  /** The unspiked sample it belongs to: values that share one share its error. */
+  readonly nativeSample: string
 }
 
 export interface PreparationsOutcome {
@@ -57,7 +59,7 @@ function one(measurement: Measurement, options: AccuracyOptions, natives: Measur
   const { value: found, level, numbers, factors } = measurement
   if (options.mode === 'bias') {
     const target = numbers['reference'] ?? options.reference?.value
-    return target === undefined ? undefined : { measurement, level: level ?? target, found, target, value: found - target, nativeVariance: 0 }
+    return target === undefined ? undefined : { measurement, level: level ?? target, found, target, value: found - target, nativeVariance: 0, nativeSample: '' }
   }
   const target = numbers['added'] ?? level
   if (target === undefined || !(target > 0)) return undefined
@@ -67,6 +69,6 @@ function one(measurement: Measurement, options: AccuracyOptions, natives: Measur
   const spread = own === undefined || own.length < 2 ? 0 : standardDeviation(own) ** 2 / own.length
   return {
     measurement, level: level ?? target, found, target, ...(native === undefined ? {} : { native }),
-    value: (100 * (found - (native ?? 0))) / target, nativeVariance: spread * (100 / target) ** 2,
+    value: (100 * (found - (native ?? 0))) / target, nativeVariance: spread * (100 / target) ** 2, nativeSample: (options['native-by'] ?? []).map((field) => factors[field] ?? '').join(' · '),
   }
 }

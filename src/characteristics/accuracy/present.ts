@@ -1,8 +1,9 @@
 // The exhibits and sentences of accuracy, from its detail alone.
-import { column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf } from '../../present/build.ts'
+import { counted } from '../../diagnostics/counted.ts'
+import { axisTitle, column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
 import { levelIntervalChart } from '../../present/charts/level-interval-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asTyped, count, numberText, printed, probability } from '../../present/numbers.ts'
+import { asMeasured, asTyped, columnDecimals, count, type NumberFormat, numberText, printed, probability } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { AccuracyDetail, AccuracyLevel } from './detail.ts'
 
@@ -45,8 +46,8 @@ function levels(shown: Shown): ReportBlock {
   const { detail, measurand, prefix } = shown
   const unit = unitOf(shown)
   const line = (level: AccuracyLevel, name: readonly Inline[]): ReturnType<typeof row> => row(
-    name, count(level.n), printed(level.mean), level.standardDeviation === undefined ? '' : printed(level.standardDeviation), level.relative === undefined ? '' : printed(level.relative, { decimals: 2 }),
-    level.low === undefined || level.high === undefined ? '' : sentence`${printed(level.low)} to ${printed(level.high)}`, level.intervalMethod ?? '',
+    name, count(level.n), printed(level.mean, digits(level)), level.standardDeviation === undefined ? '' : printed(level.standardDeviation), level.relative === undefined ? '' : printed(level.relative, { decimals: 2 }),
+    level.low === undefined || level.high === undefined ? '' : sentence`${printed(level.low, digits(level))} to ${printed(level.high, digits(level))}`, level.intervalMethod ?? '',
   )
   return table({
     id: `${prefix}-levels`, caption: detail.mode === 'recovery' ? 'Recovery by level' : 'Bias by level',
@@ -58,6 +59,11 @@ function levels(shown: Shown): ReportBlock {
   })
 }
 
+/** Mean and interval of a level in one place of decimals, so that they can be held against a limit. */
+function digits(level: AccuracyLevel): NumberFormat {
+  return { decimals: columnDecimals([level.mean, level.low ?? 0, level.high ?? 0], 5) }
+}
+
 function chart(shown: Shown): ReportBlock {
   const { detail, measurand, prefix, verdicts } = shown
   const name = (level: number | undefined): string => (level === undefined ? 'all' : String(level))
@@ -66,27 +72,35 @@ function chart(shown: Shown): ReportBlock {
   const limits = limit === undefined ? [] : limit.kind === 'between' ? [{ value: limit.low.value, label: 'lower limit' }, { value: limit.high.value, label: 'upper limit' }] : [{ value: limit.bound.value, label: 'limit' }]
   return figure({
     id: `${prefix}-by-level`, caption: sentence`${detail.mode === 'recovery' ? 'Recovery' : 'Bias'} of ${measurand.name} by level: single preparations, mean and interval${limits.length === 0 ? '' : ', and the limits'}, n = ${count(detail.preparations.length)}`,
-    alternative: `${detail.mode === 'recovery' ? 'Recoveries' : 'Biases'} of ${detail.preparations.length} preparations of ${measurand.name} at ${detail.levels.length} levels; means from ${numberText(Math.min(...detail.levels.map((level) => level.mean)))} to ${numberText(Math.max(...detail.levels.map((level) => level.mean)))} ${unitOf(shown)}.`,
+    alternative: `${counted(detail.preparations.length, 'preparation')} of ${measurand.name} at ${counted(levelsOf(detail).length, 'level')}; ${metric} by level: ${detail.levels.map((level) => `${name(level.level)}${spaced(measurand.unit)}, ${numberText(level.mean)}${spaced(unitOf(shown))}`).join('; ')}.`,
     chart: levelIntervalChart({
-      xTitle: `level / ${measurand.unit}`, yTitle: `${metric} / ${unitOf(shown)}`, points: detail.preparations.map((each) => ({ level: name(each.level), value: each.value })),
+      xTitle: axisTitle('level', measurand.unit), yTitle: axisTitle(metric, unitOf(shown)), points: detail.preparations.map((each) => ({ level: name(each.level), value: each.value })),
       excluded: detail.excluded.map((each) => ({ level: name(each.level), value: each.value, label: `excluded (${each.exclusion})` })),
       means: detail.levels.map((level) => ({ level: name(level.level), mean: level.mean, ...(level.low === undefined || level.high === undefined ? {} : { low: level.low, high: level.high }) })), limits,
     }),
   })
 }
 
+/** Levels of every preparation, also of those at which nothing could be evaluated. */
+function levelsOf(detail: AccuracyDetail): readonly (number | undefined)[] {
+  return [...new Set([...detail.preparations, ...detail.excluded].map((each) => each.level))].sort((left, right) => (left ?? 0) - (right ?? 0))
+}
+
 function preparations(shown: Shown): ReportBlock {
   const { detail, measurand, prefix } = shown
   const level = (value: number | undefined): readonly Inline[] => (value === undefined ? [] : [asTyped(value)])
-  const groups = detail.levels.map((own) => [
-    ...detail.preparations.filter((each) => each.level === own.level).map((each) => row(level(each.level), each.sample, each.native === undefined ? '' : printed(each.native), asTyped(each.target), printed(each.found, { significant: 5 }), printed(each.value, { significant: 4 }))),
-    ...detail.excluded.filter((each) => each.level === own.level).map((each) => excludedRow(level(each.level), 'excluded', '', '', printed(each.found, { significant: 5 }), printed(each.value, { significant: 4 }))),
+  // A column in which nothing stands is left out.
+  const [named, native] = [detail.preparations.some((each) => each.sample !== ''), detail.nativeCorrected]
+  const cells = (sample: string, own: Words, rest: readonly Words[]): readonly Words[] => [...(named ? [sample] : []), ...(native ? [own] : []), ...rest]
+  const groups = levelsOf(detail).map((own) => [
+    ...detail.preparations.filter((each) => each.level === own).map((each) => row(level(each.level), ...cells(each.sample, each.native === undefined ? '' : printed(each.native), [asTyped(each.target), asMeasured(each.found), printed(each.value, { significant: 4 })]))),
+    ...detail.excluded.filter((each) => each.level === own).map((each) => excludedRow(named ? level(each.level) : [...level(each.level), ...textOf(' excluded')], ...cells('excluded', '', ['', asMeasured(each.found), printed(each.value, { significant: 4 })]))),
   ])
   return table({
     id: `${prefix}-preparations`, caption: 'Every preparation',
     columns: [
-      column('Level', { unit: measurand.unit, rowHeader: true }), column('Sample', { align: 'text' }), column('Native', { unit: measurand.unit }), column(detail.mode === 'recovery' ? 'Added' : 'Reference', { unit: measurand.unit }),
-      column('Found', { unit: measurand.unit }), column(detail.mode === 'recovery' ? 'Recovery' : 'Bias', { unit: unitOf(shown) }),
+      column('Level', { unit: measurand.unit, rowHeader: true }), ...(named ? [column('Sample', { align: 'text' })] : []), ...(native ? [column('Native', { unit: measurand.unit })] : []),
+      column(detail.mode === 'recovery' ? 'Added' : 'Reference', { unit: measurand.unit }), column('Found', { unit: measurand.unit }), column(detail.mode === 'recovery' ? 'Recovery' : 'Bias', { unit: unitOf(shown) }),
     ],
     groups,
   })

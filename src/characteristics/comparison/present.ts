@@ -1,5 +1,5 @@
 // The exhibits and sentences of a comparison. A difference that is not significant is never called equality.
-import { column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf } from '../../present/build.ts'
+import { axisTitle, column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf } from '../../present/build.ts'
 import { differenceChart } from '../../present/charts/difference-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import { sequenceChart } from '../../present/charts/sequence-chart.ts'
@@ -45,7 +45,7 @@ function conditions({ detail, measurand, prefix }: Shown): ReportBlock {
 }
 
 function figures({ detail, measurand, prefix, verdicts }: Shown): readonly ReportBlock[] {
-  const axis = `result / ${measurand.unit}`
+  const axis = axisTitle('result', measurand.unit)
   const limits = verdicts.some((verdict) => verdict.metric === 'difference') && detail.margin !== undefined ? { low: -detail.margin, high: detail.margin, label: 'margin' } : undefined
   return [
     figure({
@@ -61,7 +61,7 @@ function figures({ detail, measurand, prefix, verdicts }: Shown): readonly Repor
     figure({
       id: `${prefix}-difference`, caption: sentence`Difference from ${detail.reference} with its interval at ${asPercent(detail.effects[0]?.confidence ?? 0)}\u202f%${limits === undefined ? '' : ', and the margin'}`,
       alternative: `Difference of ${detail.effects.map((each) => each.condition).join(', ')} from ${detail.reference} with interval${limits === undefined ? '' : ' and margin'}.`,
-      chart: differenceChart({ xTitle: `difference / ${measurand.unit}`, items: detail.effects.map((each) => ({ label: each.condition, estimate: each.difference, low: each.low, high: each.high })), ...(limits === undefined ? {} : { margins: limits }), zero: true }),
+      chart: differenceChart({ xTitle: axisTitle('difference', measurand.unit), items: detail.effects.map((each) => ({ label: each.condition, estimate: each.difference, low: each.low, high: each.high })), ...(limits === undefined ? {} : { margins: limits }), zero: true }),
     }),
   ]
 }

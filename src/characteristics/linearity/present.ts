@@ -1,5 +1,5 @@
 // The exhibits and sentences of linearity, from its detail alone.
-import { column, excludedRow, figure, formula, joined, paragraph, row, secondary, sentence, subscript, table, textOf } from '../../present/build.ts'
+import { axisTitle, column, excludedRow, figure, formula, joined, paragraph, row, secondary, sentence, subscript, table, textOf } from '../../present/build.ts'
 import { deviationChart } from '../../present/charts/deviation-chart.ts'
 import { responseChart } from '../../present/charts/response-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
@@ -43,17 +43,13 @@ function model({ detail }: Shown): readonly ReportBlock[] {
   return [formula([y, ...textOf(' = '), ...terms], { 'straight line': 'response equals intercept plus slope times level', 'through zero': 'response equals slope times level', quadratic: 'response equals intercept plus slope times level plus curvature times level squared' }[detail.fit])]
 }
 
-function axis(name: string, unitText: string | undefined): string {
-  return unitText === undefined || unitText === '' ? name : `${name} / ${unitText}`
-}
-
 function responseFigure({ detail, measurand, prefix, confidence }: Shown): ReportBlock {
   return figure({
     id: `${prefix}-response`,
     caption: sentence`Response of ${measurand.name} against level, n = ${count(detail.n)}, with the fit and its confidence band at ${asPercent(confidence)}\u202f%`,
-    alternative: `Calibration of ${measurand.name}: ${detail.n} responses at ${detail.levels.length} levels from ${detail.range.low} to ${detail.range.high} ${measurand.unit}, fitted by ${modelNames[detail.fit]}${weighted(detail)}.`,
+    alternative: `Calibration of ${measurand.name}: ${detail.n} responses at ${detail.levels.length} levels from ${detail.range.low} to ${detail.range.high}${unit(measurand.unit)}, fitted by ${modelNames[detail.fit]}${weighted(detail)}.`,
     chart: responseChart({
-      xTitle: axis('level', measurand.unit), yTitle: axis('response', measurand.responseUnit),
+      xTitle: axisTitle('level', measurand.unit), yTitle: axisTitle('response', measurand.responseUnit),
       points: detail.points.map((point) => ({ x: point.level, y: point.response, ...(point.run === undefined ? {} : { series: point.run }) })),
       excluded: detail.excluded.map((each) => ({ x: each.level, y: each.response, label: `excluded (${each.exclusion})` })), line: detail.line, band: detail.band,
     }),
@@ -61,7 +57,7 @@ function responseFigure({ detail, measurand, prefix, confidence }: Shown): Repor
 }
 
 function perUnit({ unit: own }: Shown['measurand']): string {
-  return own.includes('/') ? `(${own})` : own
+  return own === '' ? '1' : own.includes('/') ? `(${own})` : own
 }
 
 function slopeUnit(measurand: Shown['measurand']): string {
@@ -70,7 +66,7 @@ function slopeUnit(measurand: Shown['measurand']): string {
 
 function coefficients({ detail, measurand, prefix, confidence }: Shown): ReportBlock {
   const per = perUnit(measurand)
-  const units = { intercept: measurand.responseUnit ?? '', slope: slopeUnit(measurand), curvature: `${measurand.responseUnit ?? '1'}/${per}²` }
+  const units = { intercept: measurand.responseUnit ?? '', slope: slopeUnit(measurand), curvature: `${measurand.responseUnit ?? '1'}/${per}${per === '1' ? '' : '²'}` }
   const symbols = { intercept: subscript('b', '0'), slope: subscript('b', '1'), curvature: subscript('b', '2') }
   return table({
     id: `${prefix}-coefficients`, caption: 'Coefficients of the fit',
@@ -92,7 +88,7 @@ function residualFigure({ detail, measurand, prefix }: Shown): ReportBlock {
   return figure({
     id: `${prefix}-residuals`, caption: sentence`Residuals of ${measurand.name} against level, n = ${count(detail.n)}`,
     alternative: `Residuals of the calibration of ${measurand.name} at ${detail.levels.length} levels about the zero line.`,
-    chart: deviationChart({ xTitle: axis('level', measurand.unit), yTitle: axis('residual', measurand.responseUnit), points: detail.points.map((point) => ({ x: point.level, y: point.residual, ...(point.run === undefined ? {} : { series: point.run }) })), excluded: [], limits: [] }),
+    chart: deviationChart({ xTitle: axisTitle('level', measurand.unit), yTitle: axisTitle('residual', measurand.responseUnit), points: detail.points.map((point) => ({ x: point.level, y: point.residual, ...(point.run === undefined ? {} : { series: point.run }) })), excluded: [], limits: [] }),
   })
 }
 
@@ -105,7 +101,7 @@ function errorFigure({ detail, measurand, prefix, verdicts }: Shown): readonly R
   return [figure({
     id: `${prefix}-back-calculated`, caption: sentence`Back-calculated error of every standard of ${measurand.name}, n = ${count(points.length)}`,
     alternative: `Back-calculated errors of ${points.length} standards of ${measurand.name} against level${limits.length === 0 ? '' : ', with the limit drawn'}.`,
-    chart: deviationChart({ xTitle: axis('level', measurand.unit), yTitle: 'error / %', points, excluded: [], limits }),
+    chart: deviationChart({ xTitle: axisTitle('level', measurand.unit), yTitle: 'error / %', points, excluded: [], limits }),
   })]
 }
 

@@ -1,5 +1,5 @@
 // The exhibits and sentences of precision, from its detail alone.
-import { column, excludedRow, figure, joined, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
+import { axisTitle, column, excludedRow, figure, joined, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
 import { componentBarsChart } from '../../present/charts/component-bars-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
@@ -74,7 +74,7 @@ function valuesFigure(shown: Shown): ReportBlock {
     id: `${prefix}-values`, caption: [...textOf(`Single results of ${measurand.name} by run, with run means; n = `), ...joined(detail.levels.map((level) => [count(level.n)]), ', ')],
     alternative: `Single results of ${measurand.name} by run at ${detail.levels.length} ${detail.levels.length === 1 ? 'level' : 'levels'}, with the mean of each run.`,
     chart: groupedValuesChart({
-      groupTitle: detail.runFields.length === 0 ? 'run' : detail.runFields.join(' · '), yTitle: `result / ${measurand.unit}`, limits: [], ...(single === undefined ? {} : { overall: single.mean }),
+      groupTitle: detail.runFields.length === 0 ? 'run' : detail.runFields.join(' · '), yTitle: axisTitle('result', measurand.unit), limits: [], ...(single === undefined ? {} : { overall: single.mean }),
       values: detail.levels.flatMap((level) => level.runs.flatMap((run) => run.values.map((value) => ({ group: named(run.run), value, ...panelOf(shown, level) })))),
       excluded: detail.levels.flatMap((level) => level.excluded.map((each) => ({ group: named(each.run), value: each.value, label: `E${each.exclusion}`, ...panelOf(shown, level) }))),
       means: detail.levels.flatMap((level) => level.runs.map((run) => ({ group: named(run.run), mean: run.mean, ...panelOf(shown, level) }))),
@@ -123,7 +123,7 @@ function components(shown: Shown): readonly ReportBlock[] {
       id: `${prefix}-components-chart`, caption: [...textOf(`Components of the spread of ${measurand.name}${level.level === undefined ? '' : ' '}`), ...at(shown, level), ...sentence`, n = ${count(level.n)}`],
       alternative: `Standard deviations of the components ${level.components.map((each) => componentName(detail, each.component)).join(', ')} and of the whole.`,
       chart: componentBarsChart({
-        xTitle: `standard deviation / ${measurand.unit}`,
+        xTitle: axisTitle('standard deviation', measurand.unit),
         bars: [
           { component: 'within runs', value: level.repeatability.value, low: level.repeatability.low, high: level.repeatability.high },
           ...level.components.filter((each) => each.component !== 'within runs').map((each) => ({ component: componentName(detail, each.component), value: each.standardDeviation })),

@@ -60,7 +60,18 @@ function decisions(section: Section, verdicts: readonly Verdict[], prefix: strin
       metricLabel(section, verdict.characteristic, verdict.metric), verdict.criterion, verdict.source ?? 'not stated', verdict.decideBy,
       verdict.unrounded === undefined ? (verdict.because ?? '') : resultWords(verdict, section.findings.get(verdict.finding), levelUnit), { type: 'verdict', word: verdict.verdict },
     )),
+    notes: borderlineNotes(verdicts),
   })]
+}
+
+/** Verdicts that would have been others, had the value been rounded or not been. */
+export function borderlineNotes(verdicts: readonly Verdict[]): readonly string[] {
+  return verdicts.filter((verdict) => verdict.otherwise !== undefined).map((verdict) =>
+    `Borderline: ${verdict.finding} is decided on ${verdict.decisionValue ?? ''} (${isRounded(verdict) ? 'rounded' : 'unrounded'}): ${verdict.verdict}. ${isRounded(verdict) ? `Unrounded, on ${(verdict.unrounded ?? []).map((value) => Number(value.toPrecision(12))).join(' to ')}` : `Rounded, on ${(verdict.rounded ?? []).join(' to ')}`}: ${verdict.otherwise ?? ''}.`)
+}
+
+function isRounded(verdict: Verdict): boolean {
+  return verdict.decisionValue === (verdict.rounded ?? []).join(' to ')
 }
 
 /** What has one reason at one place is told in one line. */

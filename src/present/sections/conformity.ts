@@ -4,7 +4,7 @@ import { column, row, sentence, table } from '../build.ts'
 import type { ExhibitRow, ReportBlock } from '../document.ts'
 import { byCriterion, deciding, resultWords } from '../verdict-rows.ts'
 import { blockTitle, measurandOf, metricLabel, type Section } from './section.ts'
-import { assessmentSectionId } from './assessments.ts'
+import { assessmentSectionId, borderlineNotes } from './assessments.ts'
 
 export function conformityTable(section: Section): readonly ReportBlock[] {
   const { record } = section
@@ -35,9 +35,4 @@ function conformityRow(section: Section, verdicts: readonly Verdict[]): ExhibitR
     verdict.unrounded === undefined ? (verdict.because ?? '') : resultWords(verdict, section.findings.get(verdict.finding), measurand.unit),
     { type: 'verdict', word: verdict.verdict }, { type: 'pageReference', target: assessmentSectionId(verdict.block, verdict.measurand) },
   )
-}
-
-function borderlineNotes(verdicts: readonly Verdict[]): readonly string[] {
-  return verdicts.filter((verdict) => verdict.otherwise !== undefined).map((verdict) =>
-    `Borderline: ${verdict.finding} is decided ${verdict.verdict} (on ${verdict.decisionValue ?? ''}); the other way of rounding (${(verdict.rounded ?? []).join(' to ')} against unrounded ${(verdict.unrounded ?? []).join(' to ')}) would have given ${verdict.otherwise ?? ''}.`)
 }

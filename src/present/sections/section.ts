@@ -28,7 +28,7 @@ export function sectionOf(record: StudyRecord, digest: string, catalogue: readon
   return {
     record, digest, catalogue, outcomes,
     findings: new Map(record.findings.map((finding) => [finding.id, finding])),
-    measurands: new Map(record.study.measurands.map((measurand) => [measurand.id, measurand])),
+    measurands: new Map(record.study.measurands.map((measurand) => [measurand.id, plainNumber(measurand)])),
   }
 }
 
@@ -38,6 +38,11 @@ export function titleOf(section: Section, characteristic: string): string {
 
 export function metricLabel(section: Section, characteristic: string, metric: string): string {
   return section.catalogue.find((part) => part.id === characteristic)?.metrics[metric]?.label ?? metric
+}
+
+/** `1` is the unit of a plain number and is not printed. */
+function plainNumber(measurand: Measurand): Measurand {
+  return measurand.unit === '1' ? { ...measurand, unit: '' } : measurand
 }
 
 export function measurandOf(section: Section, id: string): Measurand {

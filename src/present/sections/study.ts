@@ -10,7 +10,7 @@ export function purpose(section: Section): readonly ReportBlock[] {
   const { study } = section.record
   return [
     userText(study.intendedUse),
-    paragraph(textOf(`The study covers ${listed(study.measurands.map((each) => `${each.name} (${each.unit})`))}${study.method.scope === undefined ? '' : ` in ${study.method.scope}`}.`)),
+    paragraph(textOf(`The study covers ${listed(study.measurands.map((each) => each.unit === '' || each.unit === '1' ? each.name : `${each.name} (${each.unit})`))}${study.method.scope === undefined ? '' : ` in ${study.method.scope}`}.`)),
   ]
 }
 
