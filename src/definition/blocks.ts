@@ -76,12 +76,12 @@ function readBlock(node: MapNode, part: DefinitionPart, outer: Reading, measuran
   const reading: Reading = own === undefined ? outer : { ...outer, path: `${outer.path}.${own}` }
   const isKnown = reportUnknownKeys(node, [...part.options.keys, ...general.keys, 'require'], reading)
   const said = general.readPart(node, reading)
-  const options = part.options.readPart(node, reading)
   const chosen = said?.measurands
-  if (chosen === undefined && said !== undefined) reading.took(`${reading.path}.measurands`, 'every measurand')
-  const isChosen = checkChosen(chosen ?? [], measurands, below(reading, 'measurands'))
   const names = new Set(chosen?.map((each) => each.value) ?? measurands.names)
   const concerned = measurands.read.filter((each) => names.has(each.id))
+  const options = part.options.readPart(node, { ...reading, measurands: concerned })
+  if (chosen === undefined && said !== undefined) reading.took(`${reading.path}.measurands`, 'every measurand')
+  const isChosen = checkChosen(chosen ?? [], measurands, below(reading, 'measurands'))
   const required = node.entries.find((each) => each.key === 'require')?.value
   const criteria = required === undefined ? [] : criteriaReader(part, concerned, names).read(required, below(reading, 'require'))
   const implied = options === undefined ? [] : impliedCriteria(part, options, node, concerned, reading)

@@ -1,6 +1,7 @@
 // What all readers of a study share: where they report, how they name what they found, and that each knows its own JSON Schema.
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import type { Place } from '../diagnostics/place.ts'
+import type { Measurand } from './study.ts'
 import type { StudyNode } from './study-node.ts'
 
 export type JsonSchema = { readonly [key: string]: unknown }
@@ -13,6 +14,8 @@ export interface Reading {
   took(path: string, value: string): void
   /** A name is used that something else of the study must declare. */
   refersTo?(reference: Reference): void
+  /** Inside a block: the measurands it concerns. */
+  readonly measurands?: readonly Measurand[]
 }
 
 export interface Reference {

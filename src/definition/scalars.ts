@@ -143,8 +143,11 @@ function otherForm(node: ScalarNode): string | undefined {
   return String(value).replace(/^(-?\d+)e/, '$1.0e')
 }
 
-/** A number with its unit, such as `0.2 mg/L` or `5 %`. `unit` fixes the unit that must be typed ('' for none); without it any known unit is read. */
-export function quantity(about: Described & { readonly unit?: string }): Reader<Quantity> {
+/**
+ * A number with its unit, such as `0.2 mg/L` or `5 %`. `unit` fixes the unit that must be typed ('' for none); `of: 'measurand'` demands the
+ * unit of the results of every measurand of the block, since nothing is converted. With neither any known unit is read.
+ */
+export function quantity(about: Described & { readonly unit?: string; readonly of?: 'measurand' }): Reader<Quantity> {
   return {
     schema: described({ type: ['string', 'number'] }, about),
     read(node, reading) {
@@ -157,8 +160,22 @@ export function quantity(about: Described & { readonly unit?: string }): Reader<
           reading.report(diagnostic('definition/ambiguous-number', `Unexpected decimal comma in \`${node.text}\` for \`${reading.path}\``, { place: node.place, actual: node.text, expected, mend: `Write \`${parsed.meant}\`` }))
           return undefined
         case 'not a quantity': return unexpected(node, reading, expected)
-        case 'quantity': return about.unit !== undefined && parsed.quantity.unit !== about.unit ? unexpected(node, reading, expected) : parsed.quantity
+        case 'quantity':
+          if (about.unit !== undefined && parsed.quantity.unit !== about.unit) return unexpected(node, reading, expected)
+          return about.of === undefined || isOfMeasurands(node, parsed.quantity, reading) ? parsed.quantity : undefined
       }
     },
   }
+}
+
+function isOfMeasurands(node: ScalarNode, { unit, text: number }: Quantity, reading: Reading): boolean {
+  const other = reading.measurands?.find((each) => each.unit !== unit && !(each.unit === '1' && unit === ''))
+  if (other === undefined) return true
+  const [found, needed] = [unit === '' ? 'no unit' : `the unit \`${unit}\``, other.unit === '' ? 'no unit' : `\`${other.unit}\``]
+  const isCommon = reading.measurands?.every((each) => each.unit === other.unit) ?? true
+  reading.report(diagnostic('definition/unit-mismatch', `Unexpected unit of \`${node.text}\` for \`${reading.path}\`: it has ${found}, and the results of \`${other.id}\` have ${needed}`, {
+    place: node.place, actual: found, expected: `a number with the unit of the results, ${needed}`,
+    mend: !isCommon ? 'Give measurands of other units a block of their own, with `measurands:`' : unit === '' ? `Write \`${number} ${other.unit}\`` : `Convert it to ${other.unit}: nothing is converted here`,
+  }))
+  return false
 }

@@ -5,6 +5,7 @@ import { datasetName, defaulted, object, oneOf, optional, quantity, type ReadBy,
 const lineOptions = object({
   data: required(datasetName({ describe: 'Dataset of standards' })),
   fit: defaulted(oneOf(['straight line', 'through zero', 'quadratic'], { describe: 'The curve' }), 'straight line'),
+  'full-response': optional(quantity({ describe: 'Level that counts as 100 %', example: '20 mg/L', of: 'measurand' })),
 }, { describe: 'A line' })
 
 const linearity: DefinitionPart<ReadBy<typeof lineOptions>> = {

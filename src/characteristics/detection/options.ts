@@ -12,7 +12,7 @@ const window = object({
 
 const trace = object({
   data: required(datasetName({ describe: 'Dataset that holds the trace: fields `time` and `signal`' })),
-  level: required(quantity({ describe: 'Level of the standard whose trace it is', example: '0.5 mg/L' })),
+  level: required(quantity({ describe: 'Level of the standard whose trace it is', example: '0.5 mg/L', of: 'measurand' })),
   baseline: required(listOf(window, { describe: 'One or more windows without a peak, where the noise is read', single: true, minimum: 1 })),
   peak: required(window),
 }, { describe: 'One recorded signal trace of a standard' })
@@ -22,7 +22,7 @@ const fields = object({
   govern: optional(oneOf(definitionNames, { describe: 'The definition whose value is the reported one; needed when several are computed' })),
   'govern-quantitation': optional(oneOf(quantitationNames, { describe: 'The definition of the reported quantitation limit, when it is not the one under `govern`' })),
   calibration: optional(datasetName({ describe: 'Dataset of calibration responses: the slope comes from the straight line of a linearity block on it, else from a straight line fitted here' })),
-  'levels-up-to': optional(quantity({ describe: 'Use only calibration levels up to this one: a line over a wide range has too large a scatter for its low end', example: '0.5 mg/L' })),
+  'levels-up-to': optional(quantity({ describe: 'Use only calibration levels up to this one: a line over a wide range has too large a scatter for its low end', example: '0.5 mg/L', of: 'measurand' })),
   runs: optional(listOf(text({ describe: 'A field' }), { describe: 'Fields that tell independent calibration curves apart, for the intercept scatter', single: true, minimum: 1 })),
   blanks: optional(datasetName({ describe: 'Dataset of blank measurements' })),
   spikes: optional(datasetName({ describe: 'Dataset of measurements near the limit, with their `level`' })),

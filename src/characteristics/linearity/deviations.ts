@@ -57,10 +57,10 @@ function pointsOf(fit: Fit): readonly Point[] {
   return fit.x.map((x, index) => ({ x, y: fit.y[index] ?? 0 }))
 }
 
-/** Intercept in percent of the fitted response at the full-response level. */
+/** Intercept in percent of the fitted response at the full-response level; beyond the standards the fit says nothing. */
 export function interceptRelative(fit: Fit, level: number, confidence: number): Pick<LinearityDetail, 'interceptRelative'> {
   const full = predict(fit, level).value
-  if (fit.throughZero || full === 0) return {}
+  if (fit.throughZero || full === 0 || level < Math.min(...fit.x) || level > Math.max(...fit.x)) return {}
   const { low, high } = coefficientInterval(fit, 0, confidence)
   const [one, other] = [(100 * low) / full, (100 * high) / full]
   return { interceptRelative: { level, value: (100 * (fit.coefficients[0] ?? 0)) / full, low: Math.min(one, other), high: Math.max(one, other) } }

@@ -47,7 +47,7 @@ function absent(detail: LinearityDetail, rse: number | undefined): readonly NotE
     ...(detail.mandelAbsent === undefined ? [] : [{ metric: 'curvature-probability', because: detail.mandelAbsent }]),
     ...detail.levels.filter((level) => level.worstError === undefined).map((level): NotEvaluable => ({ metric: 'back-calculation-error', level: level.level, because: level.level === 0 ? 'a level of zero has no relative error' : 'a response cannot be read back' })),
     ...(rse === undefined ? [{ metric: 'relative-standard-error', because: 'too few standards above zero' }] : []),
-    ...(detail.interceptRelative === undefined ? [{ metric: 'intercept-relative', because: 'the model has no intercept, or no full response' }] : []),
+    ...(detail.interceptRelative === undefined ? [{ metric: 'intercept-relative', because: detail.fit === 'through zero' ? 'the model has no intercept' : 'the full response is zero, or its level lies outside the standards' }] : []),
     ...(detail.straightTo === undefined ? [{ metric: 'straight-to', because: detail.fit === 'straight line' ? 'at no choice of four or more levels does Mandel’s test see no curvature' : 'the model is no straight line with intercept' }] : []),
     ...(detail.topSensitivity === undefined ? [{ metric: 'top-sensitivity', because: 'the fitted line is flat at the top' }] : []),
     ...(detail.slopeRsdBetweenRuns === undefined ? [{ metric: 'slope-rsd-between-runs', because: 'the study names no runs, or fewer than two could be fitted', notAsked: true as const }] : []),

@@ -12,7 +12,7 @@ export const linearityOptions = object({
   fit: defaulted(oneOf(fitKinds, { describe: 'Model of the response' }), 'straight line'),
   weights: defaulted(oneOf(weightKinds, { describe: 'Weights of the fit; 1/s^2 takes the variance of the replicates of each level' }), 'none'),
   runs: optional(listOf(text({ describe: 'A field' }), { describe: 'Fields whose combinations are independent calibrations, compared with each other', single: true, example: ['day'] })),
-  'full-response': optional(quantity({ describe: 'Level whose response counts as 100 % for the relative intercept; the highest level when absent' })),
+  'full-response': optional(quantity({ describe: 'Level whose response counts as 100 % for the relative intercept; the highest level when absent', example: '20 mg/L', of: 'measurand' })),
 }, { describe: 'Response against level: model, weights, deviations' })
 
 export type LinearityOptions = ReadBy<typeof linearityOptions>
