@@ -39,11 +39,15 @@ export function pairs(request: AnalysisRequest): Outcome {
   const named = (condition: string): ReadonlyMap<string, number> => new Map(request.readings.filter((each) => each.condition === condition).map((each) => [each.measurement.factors[field] ?? String(each.measurement.numbers[field] ?? ''), each.value]))
   const base = named(reference)
   if (base.has('')) return { because: `the field \`${field}\` that names the pairs is empty or not mapped` }
+  for (const condition of [reference, ...others]) {
+    const under = request.readings.filter((each) => each.condition === condition).length
+    if (under > named(condition).size) return { because: `of ${under} readings under ${condition}, some share a pair; a pair needs one reading of each condition` }
+  }
   const effects: EffectLine[] = []
   for (const other of others) {
     const values = named(other)
     const common = [...base.keys()].filter((pair) => values.has(pair))
-    if (common.length < 2 || common.length < base.size || common.length < values.size) return { because: `${common.length} complete pairs of ${reference} and ${other}, of ${base.size} and ${values.size} readings` }
+    if (common.length < 2 || common.length < base.size || common.length < values.size) return { because: `${base.size} readings under ${reference} and ${values.size} under ${other} make ${common.length} complete pairs; a pair needs one reading of each condition` }
     const b = common.map((pair) => base.get(pair) ?? 0)
     effects.push(line(other, 'paired t', pairedT(common.map((pair) => values.get(pair) ?? 0), b, level), level, mean(b)))
   }

@@ -4,9 +4,10 @@ export interface ConditionLine {
   readonly condition: string
   readonly n: number
   readonly mean: number
-  readonly standardDeviation: number
-  readonly low: number
-  readonly high: number
+  /** Absent for a single reading. */
+  readonly standardDeviation?: number
+  readonly low?: number
+  readonly high?: number
 }
 
 export interface EffectLine {
@@ -51,6 +52,8 @@ export interface ComparisonDetail {
   /** Probability below which a one-sided test shows equivalence. */
   readonly alpha: number
   readonly conditions: readonly ConditionLine[]
+  /** Did the data say in which order the readings were made? Otherwise `order` is that of the file. */
+  readonly orderIsKnown: boolean
   readonly readings: readonly { readonly order: number; readonly value: number; readonly condition: string }[]
   readonly excluded: readonly { readonly value: number; readonly condition: string; readonly exclusion: number }[]
   /** First the deciding analysis for each condition, then what stands beside it. */

@@ -4,7 +4,7 @@ import { differenceChart } from '../../present/charts/difference-chart.ts'
 import { groupedValuesChart } from '../../present/charts/grouped-values-chart.ts'
 import { sequenceChart } from '../../present/charts/sequence-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
-import { asPercent, count, degreesOfFreedom, printed, probability } from '../../present/numbers.ts'
+import { asMeasured, asPercent, asTyped, count, degreesOfFreedom, printed, probability } from '../../present/numbers.ts'
 import type { Presented } from '../../present/presentation-part.ts'
 import type { ComparisonDetail, EffectLine } from './detail.ts'
 
@@ -28,19 +28,19 @@ function summary({ detail, measurand }: Shown): ReportBlock {
       return [start, textOf(zeroOutside ? 'The interval does not contain zero: the conditions differ by more than chance.' : 'The interval contains zero: these data do not show a difference, which does not mean that there is none.')]
     }
     const test = detail.equivalence.find((each) => each.condition === effect.condition)
-    return test === undefined || detail.margin === undefined ? [start] : [start, sentence`Against the margin of ±${printed(detail.margin)}${unit(measurand.unit)}, the larger probability of the two one-sided tests is ${probability(test.probability)}; equivalence within the margin is shown when it lies below ${{ type: 'number', value: detail.alpha, text: String(Number(detail.alpha.toPrecision(6))) }}.`]
+    return test === undefined || detail.margin === undefined ? [start] : [start, sentence`Against the margin of ±${asTyped(detail.margin)}${unit(measurand.unit)}, the larger probability of the two one-sided tests is ${probability(test.probability)}; equivalence within the margin is shown when it lies below ${{ type: 'number', value: detail.alpha, text: String(Number(detail.alpha.toPrecision(6))) }}.`]
   }))
 }
 
-function conditions({ detail, measurand, prefix }: Shown): ReportBlock {
+function conditions({ detail, measurand, prefix, confidence }: Shown): ReportBlock {
   return table({
     id: `${prefix}-conditions`, caption: 'Readings under each condition',
     columns: [column('Condition', { align: 'text', rowHeader: true }), column('n'), column('Mean', { unit: measurand.unit }), column('Standard deviation', { unit: measurand.unit }), column('Interval of the mean', { align: 'text', unit: measurand.unit })],
     rows: [
-      ...detail.conditions.map((each) => row(each.condition, count(each.n), printed(each.mean, { significant: 5 }), printed(each.standardDeviation), sentence`${printed(each.low, { significant: 5 })} to ${printed(each.high, { significant: 5 })}`)),
-      ...detail.excluded.map((each) => excludedRow(`${each.condition}, excluded`, '', printed(each.value, { significant: 5 }), '', '')),
+      ...detail.conditions.map((each) => row(each.condition, count(each.n), printed(each.mean, { significant: 5 }), each.standardDeviation === undefined ? '' : printed(each.standardDeviation), each.low === undefined || each.high === undefined ? '' : sentence`${printed(each.low, { significant: 5 })} to ${printed(each.high, { significant: 5 })}`)),
+      ...detail.excluded.map((each) => excludedRow(`${each.condition}, excluded`, '', asMeasured(each.value), '', '')),
     ],
-    ...(detail.design === 'replicates' ? {} : { notes: ['Intervals of means take each reading as independent and are for orientation; the comparison follows the design.'] }),
+    notes: [sentence`Intervals of means at ${asPercent(confidence)}\u202f%.${detail.design === 'replicates' ? '' : ' They take each reading as independent and are for orientation; the comparison follows the design.'}`],
   })
 }
 
@@ -49,13 +49,13 @@ function figures({ detail, measurand, prefix, verdicts }: Shown): readonly Repor
   const limits = verdicts.some((verdict) => verdict.metric === 'difference') && detail.margin !== undefined ? { low: -detail.margin, high: detail.margin, label: 'margin' } : undefined
   return [
     figure({
-      id: `${prefix}-sequence`, caption: sentence`Readings of ${measurand.name} in the order in which they were made, n = ${count(detail.readings.length)}`,
-      alternative: `${detail.readings.length} readings of ${measurand.name} in order, under ${detail.conditions.map((each) => each.condition).join(' and ')}.`,
-      chart: sequenceChart({ orderTitle: 'order of measuring', yTitle: axis, points: detail.readings }),
+      id: `${prefix}-sequence`, caption: sentence`Readings of ${measurand.name} in the order ${detail.orderIsKnown ? 'in which they were made' : 'of the file'}, n = ${count(detail.readings.length)}`,
+      alternative: `${detail.readings.length} readings of ${measurand.name} in ${detail.orderIsKnown ? 'the order of measuring' : 'the order of the file'}, under ${detail.conditions.map((each) => each.condition).join(', ')}.`,
+      chart: sequenceChart({ orderTitle: detail.orderIsKnown ? 'order of measuring' : 'order in the file', yTitle: axis, points: detail.readings }),
     }),
     figure({
       id: `${prefix}-side-by-side`, caption: sentence`Readings of ${measurand.name} under each condition, with their means, n = ${count(detail.readings.length)}`,
-      alternative: `Readings of ${measurand.name} side by side under ${detail.conditions.map((each) => each.condition).join(' and ')}.`,
+      alternative: `Readings of ${measurand.name} side by side under ${detail.conditions.map((each) => each.condition).join(', ')}.`,
       chart: groupedValuesChart({ groupTitle: 'condition', yTitle: axis, values: detail.readings.map((each) => ({ group: each.condition, value: each.value })), excluded: detail.excluded.map((each) => ({ group: each.condition, value: each.value, label: `excluded (${each.exclusion})` })), means: detail.conditions.map((each) => ({ group: each.condition, mean: each.mean })), limits: [] }),
     }),
     figure({
@@ -76,6 +76,7 @@ function effects({ detail, measurand, prefix }: Shown): ReportBlock {
     groups: [detail.effects.map(line), detail.besides.map(line)].filter((group) => group.length > 0),
     notes: [
       sentence`Two-sided probabilities; intervals at ${asPercent(detail.effects[0]?.confidence ?? 0)}\u202f%.${detail.besides.length > 0 ? ' The decision rests on the method named first; the other stands beside it.' : ''}`,
+      ...(detail.effects.length < 2 ? [] : ['Each difference stands by itself; probabilities and intervals are not adjusted for the number of conditions.']),
       ...(detail.drift === undefined ? [] : [sentence`Drift of a block mean from block to block: ${printed(detail.drift.value)}${unit(measurand.unit)}, standard error ${printed(detail.drift.standardError)}.`]),
     ],
   })
@@ -84,7 +85,7 @@ function effects({ detail, measurand, prefix }: Shown): ReportBlock {
 function equivalenceTable({ detail, measurand, prefix }: Shown): readonly ReportBlock[] {
   if (detail.equivalence.length === 0 || detail.margin === undefined) return []
   return [table({
-    id: `${prefix}-equivalence`, caption: sentence`Two one-sided tests against ±${printed(detail.margin)}${unit(measurand.unit)}`,
+    id: `${prefix}-equivalence`, caption: sentence`Two one-sided tests against ±${asTyped(detail.margin)}${unit(measurand.unit)}`,
     columns: [column('Condition', { align: 'text', rowHeader: true }), column('t, lower margin'), column('Probability'), column('t, upper margin'), column('Probability'), column('Larger probability')],
     rows: detail.equivalence.map((each) => row(each.condition, printed(each.lowerT), probability(each.lowerProbability), printed(each.upperT), probability(each.upperProbability), probability(each.probability))),
   })]
@@ -103,7 +104,7 @@ function spreads({ detail, prefix }: Shown): readonly ReportBlock[] {
 function blocks({ detail, measurand, prefix }: Shown): readonly ReportBlock[] {
   if (detail.blocks.length === 0) return []
   return [table({
-    id: `${prefix}-blocks`, caption: 'Blocks in the order of measuring',
+    id: `${prefix}-blocks`, caption: detail.orderIsKnown ? 'Blocks in the order of measuring' : 'Blocks in the order of the file',
     columns: [column('Block', { align: 'text', rowHeader: true }), column('Order'), column('Condition', { align: 'text' }), column('n'), column('Mean', { unit: measurand.unit })],
     rows: detail.blocks.map((each) => row(each.block, count(each.order), each.condition, count(each.n), printed(each.mean, { significant: 5 }))),
     notes: ['One block is one independent value; readings within a block are averaged.'],

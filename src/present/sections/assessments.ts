@@ -94,6 +94,7 @@ function textUnit(unit: string): string {
 /** Every finding with interval, n, df and method: the register from which everything above is told. */
 function findingsTable(section: Section, findings: readonly Finding[], prefix: string, levelUnit: string): readonly ReportBlock[] {
   if (findings.length === 0) return []
+  const isMixed = confidencesOf(findings).length > 1
   return [table({
     id: `${prefix}-findings`, caption: 'Findings with interval, number of values and degrees of freedom',
     columns: [
@@ -103,7 +104,7 @@ function findingsTable(section: Section, findings: readonly Finding[], prefix: s
     rows: findings.map((finding) => row(
       [...textOf(metricLabel(section, finding.characteristic, finding.metric)), ...where(finding, levelUnit)],
       [found(finding), ...unitWords(finding.unit)],
-      finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}`,
+      finding.interval === undefined ? '' : sentence`${printed(finding.interval.low)} to ${printed(finding.interval.high)}${isMixed ? sentence` (${asPercent(finding.interval.confidence)}\u202f%)` : ''}`,
       finding.n === undefined ? '' : count(finding.n), finding.df === undefined ? '' : degreesOfFreedom(finding.df),
     )),
     notes: [...intervalNotes(findings), [...textOf('Methods and sources: '), { type: 'reference', target: 'methods' }, ...textOf('.')]],
@@ -126,7 +127,12 @@ function where(finding: Finding, levelUnit: string): readonly Inline[] {
   ], '')
 }
 
+function confidencesOf(findings: readonly Finding[]): readonly number[] {
+  return [...new Set(findings.flatMap((finding) => finding.interval?.confidence ?? []))]
+}
+
 function intervalNotes(findings: readonly Finding[]): readonly (readonly Inline[])[] {
-  const confidences = [...new Set(findings.flatMap((finding) => finding.interval?.confidence ?? []))].sort((left, right) => left - right)
-  return confidences.length === 0 ? [] : [[...textOf('Intervals are two-sided at a confidence of '), ...joined(confidences.map((each): readonly Inline[] => [asPercent(each), ...unitWords('%')]), ' or '), ...textOf('.')]]
+  const [confidence, ...others] = confidencesOf(findings)
+  if (confidence === undefined) return []
+  return others.length > 0 ? [textOf('Intervals are two-sided, at the confidence beside them.')] : [[...textOf('Intervals are two-sided at a confidence of '), asPercent(confidence), ...unitWords('%'), ...textOf('.')]]
 }
