@@ -10,7 +10,7 @@ import type { Coefficient, LevelLine, LinearityDetail, StandardPoint } from './d
 import { interceptRelative, lackOfFitOf, mandelOf, straightTo, topSensitivity } from './deviations.ts'
 import { findingsOf } from './findings.ts'
 import type { LinearityOptions } from './options.ts'
-import { runsOf } from './runs.ts'
+import { runName, runsOf } from './runs.ts'
 import { backCalculated, type Point, weightedFit } from './weighted-fit.ts'
 
 const linePoints = 41 // enough that a parabola and its band look smooth at the width of a page
@@ -26,7 +26,11 @@ export function assessLinearity(input: AssessInput<LinearityOptions>): AssessOut
   if (unfit !== undefined) return nothing('the calibration data are not usable', [unfit])
   const points = measurements.values.map((each): Point => ({ x: each.level ?? 0, y: each.value }))
   const levels = [...new Set(points.map((point) => point.x))].sort((left, right) => left - right)
-  const design = { levels: levels.length, replicates: Math.min(...levels.map((level) => points.filter((point) => point.x === level).length)) }
+  const runFields = options.runs ?? []
+  const design = {
+    levels: levels.length, replicates: levels.length === 0 ? 0 : Math.min(...levels.map((level) => points.filter((point) => point.x === level).length)),
+    ...(runFields.length === 0 ? {} : { runs: new Set(measurements.values.map((each) => runName(each.factors, runFields))).size }),
+  }
   const outcome = levels.length < 3 ? { impossible: `${levels.length} levels are too few for a calibration` } : weightedFit(points, options.fit, options.weights)
   if ('impossible' in outcome) {
     const isChoice = options.weights !== 'none' && levels.length >= 3
@@ -52,6 +56,13 @@ function unfitData(measurements: Measurements, input: AssessInput<LinearityOptio
       place: censored.cell.place, actual: censored.cell.text, expected: 'a number', mend: 'Give the response of every standard, or exclude the row with a reason',
     })
   }
+  const unmapped = input.block.options.runs?.find((field) => measurements.values.some((each) => each.factors[field] === undefined))
+  if (unmapped !== undefined) {
+    const mapped = Object.keys(measurements.values[0]?.factors ?? {})
+    return diagnostic('assess/missing-field', `\`${input.block.id}\` names the run field \`${unmapped}\`, which dataset \`${measurements.dataset}\` does not map`, {
+      place: input.block.place, actual: unmapped, expected: mapped.length === 0 ? 'a column for it' : mapped.join(', '), mend: `Add \`${unmapped}:\` under \`columns:\``,
+    })
+  }
   const unplaced = measurements.values.find((each) => each.level === undefined)
   if (unplaced === undefined) return undefined
   const cell = input.observations(measurements.dataset).find((each) => each.row === unplaced.rows[0])?.fields['level']
@@ -71,7 +82,7 @@ function detailOf(input: AssessInput<LinearityOptions>, measurements: Measuremen
     return {
       level, response: each.value, fitted: fit.fitted[index] ?? 0, residual: fit.residuals[index] ?? 0,
       ...(found === undefined ? {} : { found, ...(level === 0 ? {} : { error: (100 * (found - level)) / level }) }),
-      ...(runFields.length === 0 ? {} : { run: runFields.map((field) => each.factors[field] ?? '').join(' ') }),
+      ...(runFields.length === 0 ? {} : { run: runName(each.factors, runFields) }),
     }
   })
   const grid = Array.from({ length: linePoints }, (_, index) => range.low + ((range.high - range.low) * index) / (linePoints - 1))

@@ -72,5 +72,7 @@ export interface LinearityDetail {
   readonly straightTo?: { readonly level: number; readonly highest: number; readonly probability: number }
   readonly topSensitivity?: number
   readonly runs: readonly { readonly run: string; readonly n: number; readonly slope: number; readonly intercept: number; readonly residualStandardDeviation: number }[]
+  /** Runs that cannot be fitted on their own; their standards stay in the common fit. */
+  readonly runsLeftOut: readonly { readonly run: string; readonly n: number; readonly because: string }[]
   readonly slopeRsdBetweenRuns?: number
 }

@@ -145,10 +145,12 @@ function tests({ detail, prefix }: Shown): readonly ReportBlock[] {
 }
 
 function runs({ detail, prefix, measurand }: Shown): readonly ReportBlock[] {
-  if (detail.runs.length === 0) return []
+  const leftOut = detail.runsLeftOut.map((each) => sentence`Run ${each.run}, n = ${count(each.n)}, is not fitted alone: ${each.because}. Its standards are in the common fit.`)
+  if (detail.runs.length === 0) return leftOut.length === 0 ? [] : [paragraph(...leftOut)]
   return [table({
     id: `${prefix}-runs`, caption: 'Independent calibrations beside each other',
     columns: [column('Run', { align: 'text', rowHeader: true }), column('n'), column('Slope', { unit: slopeUnit(measurand) }), column('Intercept', { unit: measurand.responseUnit }), column('Residual standard deviation', detail.weights === 'none' ? { unit: measurand.responseUnit } : {})],
     rows: detail.runs.map((each) => row(each.run, count(each.n), printed(each.slope, { significant: 5 }), printed(each.intercept), printed(each.residualStandardDeviation))),
+    notes: [...(detail.slopeRsdBetweenRuns === undefined ? [] : [sentence`Relative standard deviation of the slopes ${printed(detail.slopeRsdBetweenRuns)}\u202f%.`]), ...leftOut],
   })]
 }
