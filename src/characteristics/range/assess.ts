@@ -23,7 +23,7 @@ export function assessRange(input: AssessInput<RangeOptions>): AssessOutput<Rang
   const tolerance = options['level-tolerance']
   const priors: Priors = { accuracy: input.prior('accuracy'), precision: input.prior('precision'), linearity: input.prior('linearity') }
   const nothing = (because: string, diagnostics: readonly Diagnostic[], detail?: RangeDetail): AssessOutput<RangeDetail> => ({
-    detail, findings: [], notEvaluable: metrics.map((metric): NotEvaluable => ({ metric, because })), design: { levels: detail?.levels.length ?? 0 }, diagnostics,
+    detail, findings: [], notEvaluable: metrics.map((metric): NotEvaluable => ({ metric, because })), design: { levels: (detail?.levels ?? []).filter(isShared).length }, diagnostics,
   })
   const told = (because: string, expected: string, mend: string): readonly Diagnostic[] => [diagnostic('assess/too-few-values', `The range of \`${input.measurand.id}\` cannot be shown: ${because}`, { place, actual: because, expected, mend })]
   const absent = Object.entries(priors).filter(([, prior]) => prior.length === 0).map(([name]) => name)
@@ -39,7 +39,6 @@ export function assessRange(input: AssessInput<RangeOptions>): AssessOutput<Rang
   }
   const same = (left: number, right: number): boolean => left === right || Math.abs(left - right) <= tolerance * Math.max(Math.abs(left), Math.abs(right))
   const levels = rangeLevels(priors, same)
-  const isShared = levels.some((level) => level.accuracy !== 'not tested' && level.precision !== 'not tested')
   const start: RangeDetail = {
     levels, tolerance, ...(options.claim === undefined ? {} : { claim: { low: options.claim.low.value, high: options.claim.high.value } }), ...acceptedFit(priors.linearity, same),
   }
@@ -48,7 +47,7 @@ export function assessRange(input: AssessInput<RangeOptions>): AssessOutput<Rang
     const because = `${empty.join(' and ')} could not be evaluated at any level`
     return nothing(because, told(because, 'accuracy and precision that can be evaluated', `See what is said of ${empty.join(' and ')} of this measurand`), start)
   }
-  if (!isShared) {
+  if (!levels.some(isShared)) {
     const because = 'accuracy and precision share no tested level'
     return nothing(because, told(because, 'levels tested for both accuracy and precision', 'Test accuracy and precision at the same levels, or declare `level-tolerance`'), start)
   }
@@ -58,9 +57,13 @@ export function assessRange(input: AssessInput<RangeOptions>): AssessOutput<Rang
   const evidence = merged(Object.values(priors).flat().flatMap((prior) => prior.findings))
   const draft = { n: longest.levels, method: 'longest interval of tested levels at which accuracy, precision and linearity hold', source: 'ICH Q2(R2), 2023, section 3.2', evidence }
   return {
-    detail: { ...start, low: longest.low, high: longest.high }, design: { levels: levels.length }, diagnostics: [], notEvaluable: [],
+    detail: { ...start, low: longest.low, high: longest.high }, design: { levels: levels.filter(isShared).length }, diagnostics: [], notEvaluable: [],
     findings: [{ ...draft, metric: 'range-low', value: longest.low }, { ...draft, metric: 'range-high', value: longest.high }],
   }
+}
+
+function isShared({ accuracy, precision }: RangeLevel): boolean {
+  return accuracy !== 'not tested' && precision !== 'not tested'
 }
 
 function merged(findings: readonly Finding[]): readonly Evidence[] {
