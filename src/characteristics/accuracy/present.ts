@@ -1,5 +1,4 @@
 // The exhibits and sentences of accuracy, from its detail alone.
-import { counted } from '../../diagnostics/counted.ts'
 import { axisTitle, column, excludedRow, figure, paragraph, row, secondary, sentence, table, textOf, type Words } from '../../present/build.ts'
 import { levelIntervalChart } from '../../present/charts/level-interval-chart.ts'
 import type { Inline, ReportBlock } from '../../present/document.ts'
@@ -72,7 +71,7 @@ function chart(shown: Shown): ReportBlock {
   const limits = limit === undefined ? [] : limit.kind === 'between' ? [{ value: limit.low.value, label: 'lower limit' }, { value: limit.high.value, label: 'upper limit' }] : [{ value: limit.bound.value, label: 'limit' }]
   return figure({
     id: `${prefix}-by-level`, caption: sentence`${detail.mode === 'recovery' ? 'Recovery' : 'Bias'} of ${measurand.name} by level: single preparations, mean and interval${limits.length === 0 ? '' : ', and the limits'}, n = ${count(detail.preparations.length)}`,
-    alternative: `${counted(detail.preparations.length, 'preparation')} of ${measurand.name} at ${counted(levelsOf(detail).length, 'level')}; ${metric} by level: ${detail.levels.map((level) => `${name(level.level)}${spaced(measurand.unit)}, ${numberText(level.mean)}${spaced(unitOf(shown))}`).join('; ')}.`,
+    alternative: `${detail.preparations.length} ${detail.preparations.length === 1 ? 'preparation' : 'preparations'} of ${measurand.name} at ${levelsOf(detail).length} ${levelsOf(detail).length === 1 ? 'level' : 'levels'}; ${metric} by level: ${detail.levels.map((level) => `${name(level.level)}${spaced(measurand.unit)}, ${numberText(level.mean)}${spaced(unitOf(shown))}`).join('; ')}.`,
     chart: levelIntervalChart({
       xTitle: axisTitle('level', measurand.unit), yTitle: axisTitle(metric, unitOf(shown)), points: detail.preparations.map((each) => ({ level: name(each.level), value: each.value })),
       excluded: detail.excluded.map((each) => ({ level: name(each.level), value: each.value, label: `excluded (${each.exclusion})` })),
