@@ -40,7 +40,7 @@ const rules: readonly { readonly from: RegExp; readonly may: readonly RegExp[]; 
   { from: /^data\//, may: [/^data\//, /^diagnostics\//], types: [/^definition\//] },
   { from: /^assess\//, may: [/^assess\//, /^data\//, /^statistics\//, /^diagnostics\//, /^definition\/metric-unit\.ts$/], types: [/^definition\//] },
   { from: /^characteristics\/[^/]+\/index\.ts$/, may: [/^characteristics\/[^/]+\//, /^definition\//, /^diagnostics\//], types: [/^characteristics\/characteristic\.ts$/, /^assess\//] },
-  { from: /^characteristics\/[^/]+\/present\.ts$/, may: [/^present\//], types: [/^assess\//, /^definition\//, /^characteristics\//] },
+  { from: /^characteristics\/[^/]+\/present\.ts$/, may: [/^present\//, /^diagnostics\/counted\.ts$/], types: [/^assess\//, /^definition\//, /^characteristics\//] },
   { from: /^characteristics\/[^/]+\/[^/]+\.ts$/, may: [/^statistics\//, /^diagnostics\//, /^assess\/(measurements|assessment-part)\.ts$/, /^characteristics\/[^/]+\//, /^present\//, /^definition\//], types: [/^assess\//, /^data\//, /^definition\//] },
   { from: /^characteristics\/index\.ts$/, may: [/^characteristics\//] },
   { from: /^characteristics\/characteristic\.ts$/, may: [], types: [/^assess\//, /^definition\//, /^present\//] },

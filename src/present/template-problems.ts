@@ -54,7 +54,7 @@ function directiveProblems(part: TemplatePart & { readonly kind: 'directive' }):
 /** `:: conformity` is no directive but a paragraph, and would be printed as it stands. */
 function looseDirective(part: TemplatePart & { readonly kind: 'paragraph' }): readonly Diagnostic[] {
   const first = part.pieces[0]
-  if (first?.kind !== 'text' || !/^::/.test(first.text)) return []
+  if (first?.kind !== 'text' || !first.text.startsWith('::')) return []
   return [diagnostic('present/unknown-directive', `Unexpected text \`${first.text.slice(0, 40)}\` that begins like a directive`, { place: part.place, actual: first.text.slice(0, 40), expected: '`::name` on a line of its own', mend: 'Write the name right after the two colons, with an empty line before and after' })]
 }
 
