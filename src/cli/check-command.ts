@@ -1,7 +1,8 @@
 // `assaywrit check`: one study, everything that is wrong with it, nothing written.
 import { resolve } from 'node:path'
+import { decode } from '../data/text.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
-import { check, type Checked, type ReadFile } from '../pipeline.ts'
+import { check, type Checked } from '../pipeline.ts'
 import { readStudyFile, studyFolder } from './study-folder.ts'
 
 export interface CheckedStudy {
@@ -20,11 +21,16 @@ export function checkStudy(studyPath: string): CheckedStudy {
     }
   }
   const checked = check(study, studyFolder(resolve(studyPath)))
-  return { checked, diagnostics: checked.diagnostics, sources: frameSources(checked.files) }
+  return { checked, diagnostics: checked.diagnostics, sources: frameSources(checked) }
 }
 
 const largestFrameSource = 4 * 1024 * 1024 // characters; above this a frame costs more than it helps
 
-function frameSources(files: readonly ReadFile[]): ReadonlyMap<string, string> {
-  return new Map(files.filter((file) => file.bytes.length <= largestFrameSource).map((file) => [file.path, new TextDecoder('utf-8').decode(file.bytes)]))
+/** In the encoding they are read in; what is no text there is shown as UTF-8, with replacement characters. */
+function frameSources({ files, study }: Checked): ReadonlyMap<string, string> {
+  const declared = new Map(study?.datasets.flatMap((dataset) => dataset.files.map((file) => [file.path, file.encoding] as const)))
+  return new Map(files.filter((file) => file.bytes.length <= largestFrameSource).map((file) => {
+    const text = file.role === 'raw data' ? decode(file.bytes, file.path, declared.get(file.path)) : undefined
+    return [file.path, text === undefined || 'problem' in text ? new TextDecoder('utf-8').decode(file.bytes) : text.text]
+  }))
 }

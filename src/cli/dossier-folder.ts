@@ -11,8 +11,19 @@ export interface DossierPlace {
   readonly name: string
 }
 
-/** The dossier is being written by another run, or the disk refuses. The earlier dossier is as it was. */
-export class DossierRefused extends Error {}
+export type RefusalKind = 'locked' | 'disk' | 'not replaceable'
+
+/** The dossier is being written by another run, the disk refuses, or what stands there is not the program's to replace. All is as it was. */
+export class DossierRefused extends Error {
+  readonly kind: RefusalKind
+  readonly mend: string
+
+  constructor(kind: RefusalKind, message: string, mend = 'Name another folder with --out, or mend this one') {
+    super(message)
+    this.kind = kind
+    this.mend = mend
+  }
+}
 
 export function dossierPath(place: DossierPlace): string {
   return join(place.parent, place.name)
@@ -21,17 +32,32 @@ export function dossierPath(place: DossierPlace): string {
 /** Runs `write` while no other run can touch the dossier; an interrupted earlier run is settled first. */
 export function underLock<T>(place: DossierPlace, work: () => T): T {
   try {
-    mkdirSync(place.parent, { recursive: true })
+    makeFolders(place.parent)
   } catch (error) {
-    throw new DossierRefused(`cannot make the folder ${place.parent}: ${codeOf(error)}`)
+    if (codeOf(error) === '') throw error
+    throw new DossierRefused('disk', `cannot make the folder ${place.parent}: ${codeOf(error)}`)
   }
   const lock = join(place.parent, `.${place.name}.lock`)
   takeLock(lock)
   try {
     settle(place)
     return work()
+  } catch (error) {
+    if (error instanceof DossierRefused || codeOf(error) === '') throw error
+    throw new DossierRefused('disk', `cannot read or write ${dossierPath(place)}: ${codeOf(error)}`)
   } finally {
-    rmSync(lock, { force: true })
+    dropLock(lock)
+  }
+}
+
+/** Level by level: where a file system answers "no such file" to a folder that cannot be made, the recursive call never ends. */
+function makeFolders(path: string): void {
+  if (existsSync(path)) return
+  makeFolders(dirname(path))
+  try {
+    mkdirSync(path)
+  } catch (error) {
+    if (codeOf(error) !== 'EEXIST') throw error
   }
 }
 
@@ -42,7 +68,7 @@ export function replaceDossier(place: DossierPlace, files: ReadonlyMap<string, U
     rmSync(fresh, { recursive: true, force: true })
     for (const [name, bytes] of files) writeDurably(join(fresh, name), bytes)
     for (const [name, bytes] of files) {
-      if (sha256(readFileSync(join(fresh, name))) !== sha256(bytes)) throw new DossierRefused(`${name} was not written as it was given: the disk may be full or failing`)
+      if (sha256(readFileSync(join(fresh, name))) !== sha256(bytes)) throw new DossierRefused('disk', `${name} was not written as it was given: the disk may be full or failing`)
     }
     if (existsSync(current)) renameSync(current, aside)
     renameSync(fresh, current)
@@ -52,7 +78,7 @@ export function replaceDossier(place: DossierPlace, files: ReadonlyMap<string, U
     if (codeOf(error) === '') throw error
     settle(place)
     rmSync(fresh, { recursive: true, force: true })
-    throw new DossierRefused(`cannot write ${current}: ${codeOf(error)}; the earlier dossier is as it was`)
+    throw new DossierRefused('disk', `cannot write ${current}: ${codeOf(error)}; the earlier dossier is as it was`)
   }
 }
 
@@ -89,18 +115,27 @@ function takeLock(lock: string): void {
       writeFileSync(lock, String(process.pid), { flag: 'wx' })
       return
     } catch (error) {
-      if (codeOf(error) !== 'EEXIST') throw new DossierRefused(`cannot write beside the dossier: ${codeOf(error)}`)
-      if (isHeld(lock)) throw new DossierRefused(`another run is writing to it (remove ${lock} if none is)`)
-      rmSync(lock, { force: true })
+      if (codeOf(error) !== 'EEXIST') throw new DossierRefused('disk', `cannot write beside the dossier: ${codeOf(error)}`)
+      if (isHeld(lock)) break
+      dropLock(lock)
     }
   }
-  throw new DossierRefused('another run is writing to it')
+  throw new DossierRefused('locked', 'another run is writing to it', `Wait for the other run; when there is none, remove ${lock}`)
+}
+
+/** A lock that cannot be removed is left to be told by the next run. */
+function dropLock(lock: string): void {
+  try {
+    rmSync(lock, { force: true })
+  } catch (error) {
+    if (codeOf(error) === '') throw error
+  }
 }
 
 function isHeld(lock: string): boolean {
-  const holder = Number(existsSync(lock) ? readFileSync(lock, 'utf8') : '')
-  if (!Number.isInteger(holder) || holder <= 0) return false
   try {
+    const holder = Number(readFileSync(lock, 'utf8'))
+    if (!Number.isInteger(holder) || holder <= 0) return false
     process.kill(holder, 0)
     return true
   } catch (error) {
@@ -108,6 +143,8 @@ function isHeld(lock: string): boolean {
   }
 }
 
+/** The name of what the system refused with; empty for an error of another kind. */
 function codeOf(error: unknown): string {
-  return error instanceof Error && 'code' in error ? String(error.code) : ''
+  const code = error instanceof Error && 'code' in error ? String(error.code) : ''
+  return /^(?:E[A-Z0-9]+|ERR_FS_\w+)$/.test(code) ? code : ''
 }

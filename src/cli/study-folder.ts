@@ -1,20 +1,24 @@
 // The folder of a study as the stages see it: files by relative path, read once, never followed out of the folder.
 // Every refusal is a sentence, since the user's disk is the user's input too.
 import { existsSync, readdirSync, readFileSync, realpathSync, statSync } from 'node:fs'
-import { dirname, isAbsolute, relative, resolve, sep } from 'node:path'
+import { dirname, isAbsolute, join, relative, resolve, sep } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import type { ReadFile, World } from '../pipeline.ts'
 
 declare const programVersion: string
 
-const largestFile = 512 * 1024 * 1024 // bytes; a raw file above this is a mistake or an attack, and would not fit a dossier
+const largestFile = 256 * 1024 * 1024 // bytes; a raw file above this is a mistake or an attack, and would not fit a dossier
 
 type Refusal = { readonly problem: string; readonly mend: string }
 
 /** The study file itself, named as the user typed it. */
 export function readStudyFile(path: string): ReadFile | Refusal {
-  const read = readBytes(resolve(path))
-  return 'problem' in read ? read : { path: path.split(/[\\/]/).at(-1) ?? path, bytes: read.bytes }
+  const absolute = resolve(path)
+  const read = readBytes(absolute)
+  if ('problem' in read) return existsSync(join(absolute, 'study.yaml')) ? { ...read, mend: `Write ${join(path, 'study.yaml')}` } : read
+  // YAML may be in UTF-16 too; a study is not, so that what people compare and search is one kind of text.
+  if (read.bytes.subarray(0, 2).some((byte) => byte === 0 || byte === 0xfe || byte === 0xff)) return { problem: 'it is not in UTF-8', mend: 'Save it as UTF-8' }
+  return { path: path.split(/[\\/]/).at(-1) ?? path, bytes: read.bytes }
 }
 
 /** `templatesFolder` is beside the bundle unless said (tests run the sources). */
