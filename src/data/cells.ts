@@ -22,7 +22,7 @@ export interface Tokens {
 
 export interface Unreadable {
   readonly kind: 'unreadable'
-  readonly why: 'text' | 'unit' | 'thousands' | 'other mark' | 'spreadsheet error' | 'formula' | 'not finite' | 'too small'
+  readonly why: 'text' | 'unit' | 'thousands' | 'other mark' | 'spreadsheet error' | 'formula' | 'too large' | 'too small'
   readonly rest?: string
 }
 
@@ -61,6 +61,10 @@ export function readNumber(text: string, decimal: DecimalMark, tokens: Tokens): 
   return { kind: 'unreadable', why: value }
 }
 
+// No result in any unit of measurement lies beyond; the product of four such numbers (a fit of second degree) is still a finite number.
+const farthest = 1e60
+const nearest = 1e-60
+
 const patterns: Readonly<Record<DecimalMark, RegExp>> = {
   comma: /^[+-]?(?:\d+(?:,\d*)?|,\d+)(?:[eE][+-]?\d+)?$/,
   point: /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?$/,
@@ -69,8 +73,9 @@ const patterns: Readonly<Record<DecimalMark, RegExp>> = {
 function plainNumber(text: string, decimal: DecimalMark): number | Unreadable['why'] {
   if (patterns[decimal].test(text)) {
     const value = Number(decimal === 'comma' ? text.replace(',', '.') : text)
-    if (value === 0) return /^[^eE]*[1-9]/.test(text) ? 'too small' : 0 // never minus zero, which is no other value
-    return Number.isFinite(value) ? value : 'not finite'
+    if (Math.abs(value) > farthest) return 'too large'
+    if (Math.abs(value) < nearest) return /^[^eE]*[1-9]/.test(text) ? 'too small' : 0 // never minus zero, which is no other value
+    return value
   }
   if (/^[+-]?\d{1,3}(?:[ '’]\d{3})+(?:[.,]\d+)?$/.test(text)) return 'thousands'
   if (/^[+-]?\d{1,3}(?:[.,]\d{3})+[.,]\d+$/.test(text)) return 'thousands'

@@ -75,8 +75,8 @@ function unreadable(text: string, read: Unreadable, column: MappedColumn, place:
     'other mark': { message: `a number with another decimal mark than the ${mark} of the file`, mend: 'Declare the right `decimal:` for the file' },
     'spreadsheet error': { message: 'an error of a spreadsheet', mend: 'Mend the formula and export the file again' },
     formula: { message: 'a formula of a spreadsheet', mend: 'Export values, not formulas' },
-    'too small': { message: 'a number too small to hold', mend: 'Correct the file' },
-    'not finite': { message: 'a number too large to hold', mend: 'Correct the file' },
+    'too small': { message: 'a number too small to compute with', mend: 'Correct the file' },
+    'too large': { message: 'a number too large to compute with', mend: 'Correct the file' },
   }[read.why]
   const code = read.why === 'unit' ? 'data/unit-in-cell' : read.why === 'spreadsheet error' ? 'data/spreadsheet-error' : 'data/not-a-number'
   return diagnostic(code, `Unexpected \`${shown(text)}\` in column \`${column.heading}\`: ${told.message}`, {

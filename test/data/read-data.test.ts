@@ -225,3 +225,20 @@ test('every faulty folder is told with place, found, expected and how to mend', 
   })
   expect(poor).toEqual([])
 })
+
+describe('one reading told twice', () => {
+  const columns = { level: 'Level', injection: 'Inj', response: 'Area' }
+  const twice = 'Level,Inj,Area\n1,1,10.4\n1,2,10.5\n1,1,10.6\n'
+
+  test('is an error that names both lines', () => {
+    expect(read({ files: { 'a.csv': twice }, columns }).diagnostics).toMatchObject([{ code: 'data/repeated-key', place: { line: 4 }, related: [{ place: { line: 2 } }] }])
+  })
+
+  test.each<readonly [string, Partial<Given>]>([
+    ['injections are averaged', { average: ['injection'] }],
+    ['a stated value tells the two apart', { files: { 'a.csv': 'Level,Inj,Area\n1,1,10.4\n', 'b.csv': 'Level,Inj,Area\n1,1,10.6\n' }, written: { 'a.csv': { fixed: { day: '1' } }, 'b.csv': { fixed: { day: '2' } } } }],
+    ['one of the two is excluded', { files: { 'a.csv': 'Note,Level,Inj,Area\n,1,1,10.4\nbubble,1,1,10.6\n' }, exclusions: [{ row: { matches: [{ column: 'Note', text: 'bubble' }], rows: 1 } }] }],
+    ['one of the two holds nothing', { files: { 'a.csv': 'Level,Inj,Area\n1,1,10.4\n1,1,\n' } }],
+    ['a sequence starts anew in another file', { files: { 'a.csv': 'Seq,Area\n1,10.4\n2,10.5\n', 'b.csv': 'Seq,Area\n1,10.6\n' }, columns: { order: 'Seq', response: 'Area' } }],
+  ])('is none when %s', (_, more) => expect(read({ files: { 'a.csv': twice }, columns, ...more }).diagnostics).toEqual([]))
+})
