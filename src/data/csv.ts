@@ -3,7 +3,7 @@
 import type { Delimiter, Encoding, FileSource } from '../definition/study.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import { delimiterSigns, sniffDelimiter } from './delimiter.ts'
-import { type CsvRow, splitRows } from './split-rows.ts'
+import { type CsvRow, mostRows, splitRows } from './split-rows.ts'
 import { decode, type DecodedText } from './text.ts'
 
 export interface CsvTable {
@@ -52,6 +52,9 @@ function remembered<T>(known: Map<string, T>, key: string, make: () => T): T {
 function split(text: string, file: string, delimiter: Delimiter): readonly CsvRow[] | { readonly problem: Diagnostic } {
   const rows = splitRows(text, delimiterSigns[delimiter])
   if (!('kind' in rows)) return rows
+  if (rows.kind === 'too many rows') {
+    return { problem: diagnostic('data/too-long', `The file \`${file}\` has more than ${mostRows} lines`, { place: { file, line: rows.line, column: 1 }, actual: `a line ${rows.line}`, expected: 'the rows of one study', mend: 'Export only the rows of this study' }) }
+  }
   const isOpen = rows.kind === 'not closed'
   return { problem: diagnostic('data/broken-row', isOpen ? `A quote in line ${rows.line} of \`${file}\` is not closed` : `Cannot split line ${rows.line} of \`${file}\` into cells`, {
     place: { file, line: rows.line, column: rows.column },

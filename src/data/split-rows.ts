@@ -17,11 +17,19 @@ export interface BrokenQuote {
   readonly column: number
 }
 
+/** The table goes on behind the last row that is read. */
+export interface TooManyRows {
+  readonly kind: 'too many rows'
+  readonly line: number
+}
+
+export const mostRows = 1_000_000 // a table of more would not fit the memory of every machine, nor any dossier
+
 const quote = 34
 const lineFeed = 10
 const carriageReturn = 13
 
-export function splitRows(text: string, delimiter: string): readonly CsvRow[] | BrokenQuote {
+export function splitRows(text: string, delimiter: string): readonly CsvRow[] | BrokenQuote | TooManyRows {
   const rows: CsvRow[] = []
   const sign = delimiter.charCodeAt(0)
   let at = 0
@@ -29,6 +37,7 @@ export function splitRows(text: string, delimiter: string): readonly CsvRow[] | 
   let lineStart = 0
   const broken = (kind: BrokenQuote['kind'], where: number): BrokenQuote => ({ kind, line, column: where - lineStart + 1 })
   while (at < text.length) {
+    if (rows.length === mostRows) return { kind: 'too many rows', line }
     const first = line
     const cells: string[] = []
     const starts: number[] = []

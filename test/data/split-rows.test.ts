@@ -3,11 +3,11 @@
 import { parse } from 'csv-parse/sync'
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
-import { type BrokenQuote, type CsvRow, splitRows } from '../../src/data/split-rows.ts'
+import { type BrokenQuote, type CsvRow, mostRows, splitRows } from '../../src/data/split-rows.ts'
 
 function cellsOf(text: string, sign = ','): readonly (readonly (number | string)[])[] {
   const rows = splitRows(text, sign)
-  if ('kind' in rows) throw new Error(`${rows.kind} ${rows.line}:${rows.column}`)
+  if ('kind' in rows) throw new Error(`${rows.kind} ${rows.line}`)
   return rows.map((row) => [row.line, ...row.cells])
 }
 
@@ -67,4 +67,9 @@ test('takes time in step with the length of the text', () => {
   const started = process.cpuUsage().user
   for (const text of ['"'.repeat(200_001), `${'""'.repeat(100_000)}`, `"${'\n'.repeat(200_000)}"`, `${'\r'.repeat(200_000)}`, ','.repeat(200_000), `${'"a",'.repeat(200_000)}"`]) splitRows(text, ',')
   expect(process.cpuUsage().user - started).toBeLessThan(1_000_000)
+})
+
+test('a table ends at its most rows', () => {
+  expect((splitRows('1\n'.repeat(mostRows), ',') as readonly CsvRow[]).length).toBe(mostRows)
+  expect(splitRows('1\n'.repeat(mostRows + 1), ',')).toEqual({ kind: 'too many rows', line: mostRows + 1 })
 })

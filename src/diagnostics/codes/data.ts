@@ -4,7 +4,7 @@ import type { CodeEntry } from './entry.ts'
 export const dataCodes = {
   'data/empty-file': { severity: 'error', help: 'A raw file holds nothing' },
   'data/not-text': { severity: 'error', help: 'A raw file is no text, or in another encoding than declared' },
-  'data/too-long': { severity: 'error', help: 'A line of a raw file is longer than any table row' },
+  'data/too-long': { severity: 'error', help: 'A raw file or a line of it is longer than any table of a study' },
   'data/ambiguous-delimiter': { severity: 'error', help: 'More than one delimiter would fit the file' },
   'data/ambiguous-decimal': { severity: 'error', help: 'A number could be read in two ways that differ a thousandfold' },
   'data/mixed-decimal': { severity: 'error', help: 'One file holds decimal points and decimal commas' },
