@@ -32,10 +32,12 @@ export function judge(finding: Finding, { criterion, decideBy, rules, metric }: 
   const rounded = unrounded.map((value) => roundedText(value, limit, rules))
   const onUnrounded = word(unrounded.map(withoutFloatNoise), limit)
   const onRounded = word(rounded.map(Number), limit)
-  const [verdict, other] = rules.decideOn === 'rounded values' ? [onRounded, onUnrounded] : [onUnrounded, onRounded]
+  // A question that says itself what is decided on (equivalence: the whole interval within the margin) is a test; rounding is no part of it.
+  const isRounded = rules.decideOn === 'rounded values' && criterion.decideBy === undefined
+  const [verdict, other] = isRounded ? [onRounded, onUnrounded] : [onUnrounded, onRounded]
   return {
     ...start, unrounded, rounded,
-    decisionValue: (rules.decideOn === 'rounded values' ? rounded : unrounded.map((value) => String(withoutFloatNoise(value)))).join(' to '),
+    decisionValue: (isRounded ? rounded : unrounded.map((value) => String(withoutFloatNoise(value)))).join(' to '),
     verdict, ...(other === verdict ? {} : { otherwise: other }),
   }
 }
