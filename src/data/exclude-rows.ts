@@ -3,6 +3,7 @@
 import type { DatasetSource, Exclusion } from '../definition/study.ts'
 import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
+import { nearest } from '../diagnostics/nearest.ts'
 import { headingOf, tidied } from './cells.ts'
 import type { Observation, SourceRow } from './dataset.ts'
 import type { HeadedRows } from './source-file.ts'
@@ -46,7 +47,11 @@ export function excludeRows({ source, exclusions, rows, observations, headed }: 
       continue
     }
     for (const index of matching) {
-      for (const observation of byRow.get(index) ?? []) {
+      const held = byRow.get(index) ?? []
+      for (const measurand of exclusion.measurands ?? []) {
+        if (!held.some((each) => each.measurand === measurand)) diagnostics.push(notHeld(exclusion, measurand, rows[index], held))
+      }
+      for (const observation of held) {
         if (exclusion.measurands !== undefined && !exclusion.measurands.includes(observation.measurand)) continue
         const key = `${index}/${observation.measurand}`
         const earlier = excludedObservations.get(key)
@@ -90,16 +95,31 @@ function unmatched(exclusion: Exclusion, source: DatasetSource, matching: readon
   return diagnostic('data/unmatched-exclusion', isUnused
     ? `Exclusion ${exclusion.number} (${wanted}) takes out a row that dataset \`${source.name}\` does not use`
     : `Exclusion ${exclusion.number} (${wanted}) matches ${counted(matching.length, 'row')} of dataset \`${source.name}\` instead of ${exclusion.row.rows}`, {
-    place: exclusion.place, actual: matching.length === 0 ? unknownColumns(exclusion, headed) : counted(matching.length, 'row'), expected: counted(exclusion.row.rows, 'used row'),
+    place: exclusion.place, actual: matching.length === 0 ? nothingFound(exclusion, headed) : counted(matching.length, 'row'), expected: counted(exclusion.row.rows, 'used row'),
     mend: matching.length === 0 ? 'Correct the headings and texts of `row:`' : 'Add a column that tells the rows apart, or say `rows:` with the number meant',
     related: matching.slice(0, 6).map((row) => ({ message: 'matches', place: { file: row.file, line: row.line } })),
   })
 }
 
-function unknownColumns({ row }: Exclusion, headed: readonly HeadedRows[]): string {
-  const headings = new Set(headed.flatMap((each) => (row.file === undefined || row.file === each.file ? each.headings : [])))
+const mostCompared = 5000 // texts of a column that a mistyped one is compared with
+
+/** Why nothing matches: a heading that is not there, a text that is not there (and the nearest), or texts that never stand in one row. */
+function nothingFound({ row }: Exclusion, headed: readonly HeadedRows[]): string {
+  const looked = headed.filter((each) => row.file === undefined || row.file === each.file)
+  if (looked.length === 0) return `no file ${row.file ?? ''} in the dataset; there are ${headed.map((each) => each.file).join(', ')}`
+  const headings = new Set(looked.flatMap((each) => each.headings))
   const unknown = row.matches.filter((each) => !headings.has(headingOf(each.column))).map((each) => each.column)
-  return unknown.length > 0 ? `no column ${unknown.join(', ')}; there are ${[...headings].filter((heading) => heading !== '').slice(0, 12).join(', ')}` : 'no row with these texts'
+  if (unknown.length > 0) return `no column ${unknown.join(', ')}; there are ${[...headings].filter((heading) => heading !== '').slice(0, 12).join(', ')}`
+  for (const { column, text } of row.matches) {
+    const texts = new Set(looked.flatMap((each) => {
+      const index = each.headings.indexOf(headingOf(column))
+      return index < 0 ? [] : each.rows.map((own) => tidied(own.cells[index] ?? ''))
+    }))
+    if (texts.has(tidied(text))) continue
+    const guess = nearest(tidied(text), [...texts].filter((each) => each !== '').slice(0, mostCompared))
+    return `no row with ${column} = ${text}${guess === undefined ? '' : `; the nearest is ${guess}`}`
+  }
+  return 'each of these texts, but never in one row'
 }
 
 /** A heading that stands over two columns cannot say which of them is meant. */
@@ -113,6 +133,14 @@ function repeatedHeading(exclusion: Exclusion, headed: readonly HeadedRows[]): D
     })
   }
   return undefined
+}
+
+/** It would take out nothing, and the report would name it as if it had. */
+function notHeld(exclusion: Exclusion, measurand: string, row: SourceRow | undefined, held: readonly Observation[]): Diagnostic {
+  return diagnostic('data/unmatched-exclusion', `Exclusion ${exclusion.number} names \`${measurand}\`, of which its row says nothing`, {
+    place: exclusion.place, actual: `a row about ${held.map((each) => each.measurand).join(', ')}`, expected: `a row about ${measurand}`, mend: 'Correct `measurands:` or `row:`',
+    related: [{ message: 'the row', place: { file: row?.file ?? exclusion.place.file, line: row?.line } }],
+  })
 }
 
 function takenTwice(exclusion: Exclusion, earlier: Exclusion, row: SourceRow | undefined, measurand: string): Diagnostic {

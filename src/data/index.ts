@@ -9,6 +9,7 @@ import type { Dataset, Fate, FileReading, Observation, SourceRow } from './datas
 import { excludeRows } from './exclude-rows.ts'
 import { repeatedKeys } from './repeated-rows.ts'
 import { type HeadedRows, readSourceFile } from './source-file.ts'
+import { unplacedValues } from './unplaced-values.ts'
 
 export function readData(study: StudyDefinition, files: ReadonlyMap<string, Uint8Array>): StageResult<readonly Dataset[]> {
   const diagnostics: Diagnostic[] = []
@@ -34,6 +35,7 @@ function readDataset(source: DatasetSource, study: StudyDefinition, files: Reado
   const readings: Omit<FileReading, 'used' | 'notUsed' | 'excluded'>[] = []
   const headed: HeadedRows[] = []
   const seen = new Map<string, Place>()
+  const before = diagnostics.length
   let isWhole = true
   source.files.forEach((file, index) => {
     const bytes = files.get(file.path)
@@ -61,6 +63,8 @@ function readDataset(source: DatasetSource, study: StudyDefinition, files: Reado
   const excluded = excludeRows({ source, exclusions, rows, observations, headed })
   for (const each of excluded.diagnostics) diagnostics.push(each)
   for (const each of repeatedKeys(excluded.observations, rows, source)) diagnostics.push(each)
+  // A cell that could not be read is empty here, and has been told.
+  if (!hasErrors(diagnostics.slice(before))) for (const each of unplacedValues(excluded.observations, rows)) diagnostics.push(each)
   const counts = fatesByFile(excluded.rows)
   return {
     name: source.name, rows: excluded.rows, observations: excluded.observations,

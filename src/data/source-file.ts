@@ -3,9 +3,10 @@
 import type { DatasetSource, FileSource, Measurand } from '../definition/study.ts'
 import { counted } from '../diagnostics/counted.ts'
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
+import { nearest } from '../diagnostics/nearest.ts'
 import type { Place } from '../diagnostics/place.ts'
 import { headingOf, tidied } from './cells.ts'
-import { findHeader, type Header, neededHeadings } from './columns.ts'
+import { findHeader, type Header, type MappedColumn, neededHeadings, placeIn } from './columns.ts'
 import type { TableReader } from './csv.ts'
 import type { Cell, FileReading, Observation, SourceRow } from './dataset.ts'
 import { decimalMark } from './decimal-mark.ts'
@@ -89,7 +90,7 @@ export function readSourceFile(request: SourceFileRequest): SourceFileRead {
     rows.push({ file: file.path, line: row.line, cells, fate: own.length === 0 ? { kind: 'not used', rule: 'its measurand is not in the study' } : { kind: 'used' } })
     for (const each of own) observations.push(each)
   }
-  diagnostics.push(...noticedStrangers(strangers, file.path))
+  diagnostics.push(...noticedStrangers(strangers, usable.length, request), ...oddCharacters(usable, columns, file.path))
   return {
     rows, observations, diagnostics, headed: { file: file.path, headings, rows: body },
     reading: { file: file.path, encoding: table.encoding, delimiter: table.delimiter, decimal: mark.decimal, headerRow: header.row.line, rowsRead: body.length },
@@ -119,9 +120,36 @@ function ragged(row: CsvRow, width: number, file: string): Diagnostic {
   })
 }
 
-function noticedStrangers(strangers: readonly { readonly line: number; readonly name: string }[], file: string): readonly Diagnostic[] {
+/** Rows of other measurands are common in an export; a file that holds no others is a mistake. */
+function noticedStrangers(strangers: readonly { readonly line: number; readonly name: string }[], usable: number, { file, source, measurands }: SourceFileRequest): readonly Diagnostic[] {
   const first = strangers[0]
   if (first === undefined) return []
-  const names = [...new Set(strangers.map((each) => each.name))]
-  return [diagnostic('data/unknown-measurand', `${counted(strangers.length, 'row')} of \`${file}\` with a measurand that the study does not hold`, { place: { file, line: first.line, column: 1 }, actual: names.slice(0, 8).join(', '), expected: 'ids or names of measurands', mend: 'Nothing, if these are meant to be left out; they are listed as not used' })]
+  const known = [...new Set(measurands.flatMap((each) => [each.id, each.name]))]
+  const names = [...new Set(strangers.map((each) => each.name))].slice(0, 8)
+  const guesses = names.flatMap((name) => {
+    const guess = nearest(name, known)
+    return guess === undefined ? [] : [`\`${name}\` is near to \`${guess}\``]
+  })
+  const details = { place: { file: file.path, line: first.line, column: 1 }, actual: names.map((name) => (name === '' ? 'an empty cell' : name)).join(', ') }
+  if (strangers.length === usable) {
+    return [diagnostic('data/no-rows', `No row of \`${file.path}\` for dataset \`${source.name}\` is about a measurand of the study`, { ...details, expected: known.slice(0, 12).join(', '), mend: `Write ids or names under \`measurands:\` as the file does${guesses.length === 0 ? '' : `: ${guesses.join(', ')}`}` })]
+  }
+  return [diagnostic('data/unknown-measurand', `${counted(strangers.length, 'row')} of \`${file.path}\` with a measurand that the study does not hold`, { ...details, expected: 'ids or names of measurands', mend: `Nothing, if these are meant to be left out; they are listed as not used${guesses.length === 0 ? '' : `. But ${guesses.join(', ')}`}` })]
+}
+
+/** What is read as something else than it looks is said, once for each column: the cell keeps its text. */
+function oddCharacters(rows: readonly CsvRow[], columns: readonly MappedColumn[], file: string): readonly Diagnostic[] {
+  return columns.flatMap((column) => {
+    const odd = rows.filter((row) => isOdd(row.cells[column.index] ?? ''))
+    const first = odd[0]
+    if (first === undefined) return []
+    const text = first.cells[column.index] ?? ''
+    return [diagnostic('data/odd-character', `${counted(odd.length, 'cell')} in column \`${column.heading}\` of \`${file}\` with characters that look like others`, {
+      place: placeIn(file, first, column), actual: [...text.trim()].map((character) => (/[^\u0000-\u007f]/.test(character) ? `(U+${(character.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')})` : character)).join(''), expected: `read as ${tidied(text)}`, mend: 'Nothing, if this is what is meant',
+    })]
+  })
+}
+
+function isOdd(text: string): boolean {
+  return /[^\u0000-\u007f]/.test(text) && tidied(text) !== text.trim()
 }

@@ -162,6 +162,12 @@ describe('measurands', () => {
     expect(datasets?.[0]?.files[0]).toMatchObject({ rowsRead: 3, used: 1, notUsed: 2, excluded: 0 })
     expect(diagnostics.map((each) => [each.code, each.severity, each.actual])).toEqual([['data/unknown-measurand', 'note', 'Total']])
   })
+
+  test('a file of strangers only is refused', () => {
+    const { datasets, diagnostics } = read({ files: { 'a.csv': 'Name,Level,Area\nDYE,1,10.4\n,2,40\n' }, columns: { measurand: 'Name', level: 'Level', response: 'Area' } })
+    expect(datasets).toBeUndefined()
+    expect(diagnostics).toMatchObject([{ code: 'data/no-rows', place: { line: 2 }, actual: 'DYE, an empty cell', expected: 'dye' }])
+  })
 })
 
 describe('exclusions', () => {
@@ -175,7 +181,9 @@ describe('exclusions', () => {
   })
 
   test.each<readonly [string, Partial<Exclusion>, string, number]>([
-    ['two rows instead of one', row('A'), '2 rows', 2], ['no row', row('C'), 'no row with these texts', 0], ['no row of that file', row('B', { file: 'b.csv' }), 'no row with these texts', 0],
+    ['two rows instead of one', row('A'), '2 rows', 2], ['no row', row('C'), 'no row with Vial = C', 0], ['no row of that file', row('B', { file: 'b.csv' }), 'no row with Vial = B', 0],
+    ['a text with a slip', { row: { matches: [{ column: 'Area', text: '20.8' }], rows: 1 } }, 'no row with Area = 20.8; the nearest is 20.9', 0],
+    ['no such file', row('B', { file: 'c.csv' }), 'no file c.csv in the dataset; there are a.csv, b.csv', 0], ['texts of two rows', { row: { matches: [{ column: 'Vial', text: 'A' }, { column: 'Level', text: '2' }], rows: 1 } }, 'each of these texts, but never in one row', 0],
     ['an unknown heading', { row: { matches: [{ column: 'Tube', text: 'A' }], rows: 1 } }, 'no column Tube; there are Vial, Level, Area', 0], ['a heading that every object has', { row: { matches: [{ column: 'constructor', text: 'A' }], rows: 1 } }, 'no column constructor; there are Vial, Level, Area', 0],
   ])('%s is an error that lists what matches', (_, exclusion, actual, related) => {
     const { datasets, diagnostics } = read({ files, exclusions: [exclusion] })
@@ -192,6 +200,34 @@ describe('exclusions', () => {
     const wide: Given = { files: { 'a.csv': 'Vial,Salt,Dye\nA,1,2\n' }, columns: { response: { salt: 'Salt', dye: 'Dye' } }, measurands: ['salt', 'dye'], exclusions: [{ ...row('A'), measurands: ['dye'] }, { ...row('A'), measurands: ['salt'] }] }
     expect(told(read(wide).datasets?.[0])).toEqual(['2 salt: response=1 excluded 2', '2 dye: response=2 excluded 1'])
   })
+})
+
+describe('a value without a level', () => {
+  const lines = (given: Given): readonly (number | undefined)[] => read(given).diagnostics.filter((each) => each.code === 'data/empty-level').map((each) => each.place?.line)
+
+  test('is refused where others have one, each line once', () => {
+    expect(lines({ files: { 'a.csv': 'Level,Area\n1,10.4\n,10.4\n,0.1\n' } })).toEqual([3, 4])
+    expect(lines({ files: { 'a.csv': 'Level,Salt,Dye\n1,10.4,3\n,10.4,3\n' }, columns: { level: 'Level', response: { salt: 'Salt', dye: 'Dye' } }, measurands: ['salt', 'dye'] })).toEqual([3])
+  })
+
+  test.each<readonly [string, Given]>([
+    ['when no value has one', { files: { 'a.csv': 'Level,Area\n,10.4\n,10.5\n' } }],
+    ['when the row holds no value', { files: { 'a.csv': 'Day,Level,Area\n1,1,10.4\n2,,\n' }, columns: { day: 'Day', level: 'Level', response: 'Area' } }],
+    ['when the row is not selected', { files: { 'a.csv': 'Kind,Level,Area\nSTD,1,10.4\nMean,,10.5\n' }, rows: { Kind: ['STD'] } }],
+    ['when the row is excluded', { files: { 'a.csv': 'Vial,Level,Area\nA,1,10.4\nB,,10.5\n' }, exclusions: [{ row: { matches: [{ column: 'Vial', text: 'B' }], rows: 1 } }] }],
+  ])('is none %s', (_, given) => expect(read(given).diagnostics).toEqual([]))
+})
+
+test('what is read as another character is noted once for each column', () => {
+  const { datasets, diagnostics } = read({ files: { 'a.csv': 'Vial,Level,Area\nS\u20131,1,10.4\nS\u00a02,2,\u221220.9\nS3,4,41\n\u00b5\u00e9,5,50\n' }, columns: { vial: 'Vial', level: 'Level', response: 'Area' } })
+  expect(told(datasets?.[0]).slice(0, 2)).toEqual(['2 dye: vial=S-1 level=1 response=10.4', '3 dye: vial=S 2 level=2 response=-20.9'])
+  expect(datasets?.[0]?.observations[0]?.fields['vial']?.text).toBe('S\u20131')
+  expect(diagnostics.map((each) => [each.code, each.severity, each.place?.line, each.actual])).toEqual([['data/odd-character', 'note', 2, 'S(U+2013)1'], ['data/odd-character', 'note', 3, '(U+2212)20.9']])
+})
+
+test('an exclusion that names a measurand its row does not hold is refused', () => {
+  const given: Given = { files: { 'a.csv': 'Vial,Name,Area\nA,dye,1\nB,salt,2\n' }, columns: { measurand: 'Name', response: 'Area' }, measurands: ['dye', 'salt'], exclusions: [{ row: { matches: [{ column: 'Vial', text: 'A' }], rows: 1 }, measurands: ['salt'] }] }
+  expect(read(given).diagnostics).toMatchObject([{ code: 'data/unmatched-exclusion', actual: 'a row about dye', related: [{ place: { file: 'a.csv', line: 2 } }] }])
 })
 
 test('200 000 rows are read in less than 3 s of processor time', () => {

@@ -19,8 +19,10 @@ export const dataCodes = {
   'data/repeated-key': { severity: 'error', help: 'Two rows hold a value for one and the same reading' },
   'data/fixed-column': { severity: 'error', help: 'A field is stated for a whole file and stands in one of its columns too' },
   'data/spreadsheet-error': { severity: 'error', help: 'A cell holds an error of a spreadsheet instead of a value' },
+  'data/empty-level': { severity: 'error', help: 'A value has no level, where others of its dataset have one' },
   'data/unknown-measurand': { severity: 'note', help: 'Rows name a measurand that the study does not hold; they are listed as not used' },
   'data/unmatched-exclusion': { severity: 'error', help: 'An exclusion does not match the rows it says' },
+  'data/odd-character': { severity: 'note', help: 'Cells hold no-break spaces, typographic dashes or invisible characters, which were read as plain ones' },
   'data/preamble': { severity: 'note', help: 'Lines before the headings were skipped' },
   'data/encoding': { severity: 'note', help: 'The encoding was found out from the bytes' },
 } as const satisfies Record<string, CodeEntry>
