@@ -8,6 +8,10 @@ import type { Cell, Observation } from './dataset.ts'
 /** Fields that hold what was measured. */
 export const valueFields = ['response', 'result', 'signal'] as const
 
+export function holdsValue(observation: Observation): boolean {
+  return valueFields.some((field) => (observation.fields[field]?.kind ?? 'missing') !== 'missing')
+}
+
 export type ObservationReader = (row: number, cells: Readonly<Record<string, Cell>>) => readonly Observation[]
 
 export function observationReader(columns: readonly MappedColumn[], measurands: readonly Measurand[]): ObservationReader {

@@ -6,7 +6,7 @@ import type { Place } from '../diagnostics/place.ts'
 import { numberFields, tidied } from './cells.ts'
 import type { CsvRow } from './split-rows.ts'
 import type { Observation, SourceRow } from './dataset.ts'
-import { valueFields } from './observations.ts'
+import { holdsValue, valueFields } from './observations.ts'
 
 const telling = 5 // filled cells from which a row equal in all of them is a copy; fewer can be a chance. Common practice, no source
 
@@ -40,7 +40,7 @@ export function repeatedKeys(observations: readonly Observation[], rows: readonl
   const seen = new Map<string, Observation>()
   const diagnostics: Diagnostic[] = []
   for (const observation of observations) {
-    if (observation.excluded !== undefined || valueFields.every((field) => (observation.fields[field]?.kind ?? 'missing') === 'missing')) continue
+    if (observation.excluded !== undefined || !holdsValue(observation)) continue
     const own = observation.fields[identity]
     if (own === undefined || own.kind === 'missing') continue
     const file = identity === 'order' ? (rows[observation.row]?.file ?? '') : '' // a sequence starts anew in each file

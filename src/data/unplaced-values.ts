@@ -2,10 +2,10 @@
 // be computed with.
 import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
 import type { Observation, SourceRow } from './dataset.ts'
-import { valueFields } from './observations.ts'
+import { holdsValue } from './observations.ts'
 
 export function unplacedValues(observations: readonly Observation[], rows: readonly SourceRow[]): readonly Diagnostic[] {
-  const values = observations.filter((each) => each.excluded === undefined && each.fields['level'] !== undefined && valueFields.some((field) => (each.fields[field]?.kind ?? 'missing') !== 'missing'))
+  const values = observations.filter((each) => each.excluded === undefined && each.fields['level'] !== undefined && holdsValue(each))
   const unplaced = new Map(values.filter((each) => each.fields['level']?.kind === 'missing').map((each) => [each.row, each]))
   // A column that is empty throughout says nothing of any value: blanks share the columns of standards.
   if (values.every((each) => each.fields['level']?.kind === 'missing')) return []

@@ -181,7 +181,7 @@ describe('exclusions', () => {
   })
 
   test.each<readonly [string, Partial<Exclusion>, string, number]>([
-    ['two rows instead of one', row('A'), '2 rows', 2], ['no row', row('C'), 'no row with Vial = C', 0], ['no row of that file', row('B', { file: 'b.csv' }), 'no row with Vial = B', 0],
+    ['two rows instead of one', row('A'), '2 rows', 2], ['no row', row('C'), 'no row with Vial = C', 0], ['no row of that file', row('B', { file: 'b.csv' }), 'no row with Vial = B; the nearest is A', 0],
     ['a text with a slip', { row: { matches: [{ column: 'Area', text: '20.8' }], rows: 1 } }, 'no row with Area = 20.8; the nearest is 20.9', 0],
     ['no such file', row('B', { file: 'c.csv' }), 'no file c.csv in the dataset; there are a.csv, b.csv', 0], ['texts of two rows', { row: { matches: [{ column: 'Vial', text: 'A' }, { column: 'Level', text: '2' }], rows: 1 } }, 'each of these texts, but never in one row', 0],
     ['an unknown heading', { row: { matches: [{ column: 'Tube', text: 'A' }], rows: 1 } }, 'no column Tube; there are Vial, Level, Area', 0], ['a heading that every object has', { row: { matches: [{ column: 'constructor', text: 'A' }], rows: 1 } }, 'no column constructor; there are Vial, Level, Area', 0],
