@@ -53,7 +53,7 @@ export function independentUnits(
     })
     const first = filled[0]
     const stranger = filled.map((each) => each.fields[field]).find((cell) => cell !== undefined && cell.kind !== 'number')
-    if (first !== undefined && stranger !== undefined) censored.push({ ...identity(first, ignored), cell: stranger, rows: filled.map((each) => each.row) })
+    if (first !== undefined && stranger !== undefined) censored.push({ ...identity(first, ignored), numbers: numbersOf(filled, field), cell: stranger, rows: filled.map((each) => each.row) })
     else if (first !== undefined) values.push(measurement(filled, field, ignored))
     const out = group.filter((each) => each.excluded !== undefined && each.fields[field]?.kind === 'number')
     if (kept.length === 0 && out[0] !== undefined) excluded.push({ ...measurement(out, field, ignored), exclusion: out[0].excluded })
@@ -102,14 +102,18 @@ function measurement(group: readonly Observation[], field: string, ignored: Read
   const first = group[0]
   if (first === undefined) throw new Error('a measurement needs at least one observation')
   const averaged = group.map((each) => numberIn(each.fields[field]))
+  return { value: averaged.length === 1 ? (averaged[0] ?? 0) : mean(averaged), ...identity(first, ignored), numbers: numbersOf(group, field), rows: group.map((each) => each.row), averaged }
+}
+
+function numbersOf(group: readonly Observation[], field: string): Readonly<Record<string, number>> {
   const numbers: Record<string, number> = {}
-  for (const [name, cell] of Object.entries(first.fields)) {
+  for (const [name, cell] of Object.entries(group[0]?.fields ?? {})) {
     if (name === field || name === 'level' || cell.kind !== 'number') continue
     // Only the moments differ within a unit (they are no part of its key); their mean is the unit's own.
     const members = group.map((each) => each.fields[name]).filter((each) => each?.kind === 'number').map(numberIn)
     numbers[name] = members.length === 1 ? numberIn(cell) : mean(members)
   }
-  return { value: averaged.length === 1 ? (averaged[0] ?? 0) : mean(averaged), ...identity(first, ignored), numbers, rows: group.map((each) => each.row), averaged }
+  return numbers
 }
 
 function numberIn(cell: Cell | undefined): number {

@@ -1,6 +1,8 @@
 // The independent values a characteristic computes with: injections already averaged as the study says, responses already
 // turned into results where asked, censored values apart. What is called one measurement here is one degree of freedom.
 import type { Cell } from '../data/dataset.ts'
+import { diagnostic, type Diagnostic } from '../diagnostics/diagnostic.ts'
+import type { AssessInput } from './assessment-part.ts'
 import type { Evidence } from './finding.ts'
 
 export interface Measurement {
@@ -21,6 +23,8 @@ export interface Measurement {
 export interface CensoredMeasurement {
   readonly level?: number | undefined
   readonly factors: Readonly<Record<string, string>>
+  /** As in a measurement: an amount added to a sample is known, whatever was found in it. */
+  readonly numbers: Readonly<Record<string, number>>
   readonly cell: Cell
   readonly rows: readonly number[]
 }
@@ -42,4 +46,22 @@ export interface Measurements {
 export function evidenceOf(measurements: Measurements, values: readonly { readonly rows: readonly number[] }[] = measurements.values): readonly Evidence[] {
   const rows = [...new Set(values.flatMap((each) => each.rows))].sort((left, right) => left - right)
   return [{ dataset: measurements.dataset, field: measurements.field, rows }]
+}
+
+/** Tells the first of `fields` that a value lacks; values without a name would otherwise make a group of their own. `role` is what the fields name. */
+export function fieldGap(input: Pick<AssessInput<unknown>, 'block' | 'observations'>, measurements: Measurements, fields: readonly string[], role = 'run'): Diagnostic | undefined {
+  for (const field of fields) {
+    const bare = measurements.values.find((each) => each.factors[field] === undefined)
+    if (bare === undefined) continue
+    const cell = input.observations(measurements.dataset).find((each) => each.row === bare.rows[0])?.fields[field]
+    const mapped = Object.keys(bare.factors).filter((name) => name !== field)
+    return cell === undefined
+      ? diagnostic('assess/missing-field', `\`${input.block.id}\` names the ${role} field \`${field}\`, which dataset \`${measurements.dataset}\` does not map`, {
+        place: input.block.place, actual: field, expected: mapped.length === 0 ? 'a column for it' : mapped.join(', '), mend: `Add \`${field}:\` under \`columns:\``,
+      })
+      : diagnostic('assess/missing-field', `A result of dataset \`${measurements.dataset}\` has no \`${field}\`, which \`${input.block.id}\` names as a ${role} field`, {
+        place: cell.place, actual: cell.text.trim() === '' ? 'an empty cell' : cell.text.trim(), expected: `the ${role} it belongs to`, mend: 'Fill the cell, or exclude the row with a reason',
+      })
+  }
+  return undefined
 }

@@ -67,7 +67,7 @@ function recompute(request: ResultsRequest): StageResult<Measurements> {
     const inverted = calibration.invert(response)
     if ('outside' in inverted) {
       const cell = dataset.observations.find((each) => each.row === unit.rows[0] && each.measurand === measurand.id)?.fields['response']
-      if (cell !== undefined) outside.push({ level: unit.level, factors: unit.factors, cell, rows: unit.rows })
+      if (cell !== undefined) outside.push({ level: unit.level, factors: unit.factors, numbers: unit.numbers, cell, rows: unit.rows })
       return undefined
     }
     return { ...unit, value: (inverted.result * (unit.numbers['dilution'] ?? 1)) / (unit.numbers['sample-amount'] ?? 1) }

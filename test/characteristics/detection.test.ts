@@ -44,7 +44,7 @@ function measurementsOf(dataset: string, data: Data): Measurements {
   return {
     dataset, field, chain: [], excluded: [],
     values: rows.flatMap((each, index): readonly Measurement[] => (typeof each.value === 'number' ? [{ ...shared(each, index), value: each.value, numbers: {}, averaged: [each.value] }] : [])),
-    censored: rows.flatMap((each, index): readonly CensoredMeasurement[] => (typeof each.value === 'number' ? [] : [{ ...shared(each, index), cell: { ...cellOf(each.value), text: each.value, column: 'Found', place } }])),
+    censored: rows.flatMap((each, index): readonly CensoredMeasurement[] => (typeof each.value === 'number' ? [] : [{ ...shared(each, index), numbers: {}, cell: { ...cellOf(each.value), text: each.value, column: 'Found', place } }])),
   }
 }
 

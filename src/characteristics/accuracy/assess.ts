@@ -7,10 +7,10 @@ import { diagnostic, type Diagnostic } from '../../diagnostics/diagnostic.ts'
 import { mean, standardDeviation } from '../../statistics/describe.ts'
 import { studentQuantile } from '../../statistics/distributions.ts'
 import { grubbs } from '../../statistics/outliers.ts'
-import { nestedMeanInterval, oneWay } from '../../statistics/variance-components.ts'
+import { type MeanSquareTerm, nestedMeanInterval, oneWay, satterthwaite } from '../../statistics/variance-components.ts'
 import type { AccuracyDetail, AccuracyLevel } from './detail.ts'
 import type { AccuracyOptions } from './options.ts'
-import { type Preparation, preparationsOf } from './preparations.ts'
+import { levelOf, type Preparation, preparationsOf } from './preparations.ts'
 
 const outlierAlpha = 0.01 // a flag only
 
@@ -26,7 +26,7 @@ export function assessAccuracy(input: AssessInput<AccuracyOptions>): AssessOutpu
   const { measurements, preparations } = found
   const diagnostics: Diagnostic[] = [...found.diagnostics]
   const blocked = new Map(measurements.censored.map((each) => {
-    const target = each.level
+    const target = levelOf(each, options)
     diagnostics.push(diagnostic('assess/censored-value', `A censored value of \`${input.measurand.id}\` stands among the accuracy results`, { place: each.cell.place, actual: each.cell.text.trim(), expected: 'a number', mend: 'Nothing is put in its place; the level is not evaluable' }))
     return [target, `a censored value (${each.cell.text.trim()} in ${each.cell.place.file}:${each.cell.place.line ?? ''}) stands at this level`] as const
   }))
@@ -41,7 +41,7 @@ export function assessAccuracy(input: AssessInput<AccuracyOptions>): AssessOutpu
       notEvaluable.push(...metrics.slice(0, -1).map((metric): NotEvaluable => ({ metric, ...(level === undefined ? {} : { level }), because })))
       continue
     }
-    const line = levelOf(level, own, input)
+    const line = levelLine(level, own, input)
     levels.push(line)
     findings.push(...levelFindings(line, own, measurements, found.nativeEvidence, input))
     if (line.standardDeviation === undefined && options.mode === 'recovery') notEvaluable.push(...['recovery-sd', 'recovery-rsd'].map((metric): NotEvaluable => ({ metric, ...(level === undefined ? {} : { level }), because: 'one value has no scatter' })))
@@ -64,7 +64,7 @@ export function assessAccuracy(input: AssessInput<AccuracyOptions>): AssessOutpu
   }
 }
 
-function levelOf(level: number | undefined, own: readonly Preparation[], input: AssessInput<AccuracyOptions>): AccuracyLevel {
+function levelLine(level: number | undefined, own: readonly Preparation[], input: AssessInput<AccuracyOptions>): AccuracyLevel {
   const values = own.map((each) => each.value)
   const start = { ...(level === undefined ? {} : { level }), n: values.length, mean: mean(values) }
   const relativeBias = input.block.options.mode === 'bias' && own.every((each) => each.target !== 0) ? { relative: mean(own.map((each) => (100 * each.value) / each.target)) } : {}
@@ -76,33 +76,46 @@ function levelOf(level: number | undefined, own: readonly Preparation[], input: 
   }
 }
 
-/** mean ± t·√(s²/n + u²(native)); in place of s²/n the between-run mean square over n when the study names runs. */
+/**
+ * mean ± t·√(s²/n + u²(native)); in place of s²/n the between-run mean square over n when the study names runs. A native content known from
+ * few results has few degrees of freedom, which the interval takes over by its share (GUM, JCGM 100:2008, G.4).
+ */
 function intervalOf(own: readonly Preparation[], spread: number, input: AssessInput<AccuracyOptions>): Pick<AccuracyLevel, 'low' | 'high' | 'df' | 'intervalMethod'> {
   const { standardError, df, method } = nestedError(own, input) ?? { standardError: spread / Math.sqrt(own.length), df: own.length - 1, method: 'Student t' }
   const centre = mean(own.map((each) => each.value))
-  const native = nativeVarianceOfMean(own)
-  const half = studentQuantile((1 + input.confidence) / 2, df) * Math.sqrt(standardError ** 2 + native)
-  return { low: centre - half, high: centre + half, df, intervalMethod: native > 0 ? `${method}, uncertainty of the native content included` : method }
+  const natives = nativeTerms(own)
+  const whole = natives.length === 0 ? { variance: standardError ** 2, df } : satterthwaite([{ coefficient: 1, meanSquare: standardError ** 2, df }, ...natives])
+  const half = studentQuantile((1 + input.confidence) / 2, whole.df) * Math.sqrt(whole.variance)
+  return { low: centre - half, high: centre + half, df: whole.df, intervalMethod: natives.length > 0 ? `${method}, uncertainty of the native content included` : method }
 }
 
 function nestedError(own: readonly Preparation[], input: AssessInput<AccuracyOptions>): { readonly standardError: number; readonly df: number; readonly method: string } | undefined {
   const fields = input.block.options.runs ?? []
   const runOf = (each: Preparation): string => fields.map((field) => each.measurement.factors[field] ?? '').join(' · ')
   const runs = [...new Set(own.map(runOf))]
-  if (fields.length === 0 || runs.length < 2 || runs.length === own.length) return undefined
+  if (fields.length === 0 || runs.length === own.length) return undefined
+  if (runs.length < 2) return { standardError: standardDeviation(own.map((each) => each.value)) / Math.sqrt(own.length), df: own.length - 1, method: 'Student t within the only run' }
+  const groups = runs.map((run) => own.filter((each) => runOf(each) === run).map((each) => each.value))
+  const method = 'Student t on the between-run mean square'
   try {
-    const { standardError, df } = nestedMeanInterval(oneWay(runs.map((run) => own.filter((each) => runOf(each) === run).map((each) => each.value))), input.confidence)
-    return { standardError, df, method: 'Student t on the between-run mean square' }
+    const { standardError, df } = nestedMeanInterval(oneWay(groups), input.confidence)
+    return { standardError, df, method }
   } catch (error) {
-    if (error instanceof RangeError) return undefined
-    throw error
+    if (!(error instanceof RangeError)) throw error
+    // Results that do not scatter within their runs: the run is the independent unit all the more.
+    const centre = mean(groups.flat())
+    const meanSquareBetween = groups.reduce((sum, group) => sum + group.length * (mean(group) - centre) ** 2, 0) / (groups.length - 1)
+    return { standardError: Math.sqrt(meanSquareBetween / own.length), df: groups.length - 1, method }
   }
 }
 
 /** Values of one unspiked sample carry one and the same error of its content; those of different samples carry independent ones. */
-function nativeVarianceOfMean(own: readonly Preparation[]): number {
-  const samples = [...new Set(own.map((each) => each.nativeSample))]
-  return samples.reduce((total, sample) => total + own.filter((each) => each.nativeSample === sample).reduce((sum, each) => sum + Math.sqrt(each.nativeVariance) / own.length, 0) ** 2, 0)
+function nativeTerms(own: readonly Preparation[]): readonly MeanSquareTerm[] {
+  return [...new Set(own.map((each) => each.nativeSample))].flatMap((sample): readonly MeanSquareTerm[] => {
+    const sharing = own.filter((each) => each.nativeSample === sample)
+    const meanSquare = sharing.reduce((sum, each) => sum + Math.sqrt(each.nativeVariance) / own.length, 0) ** 2
+    return meanSquare > 0 ? [{ coefficient: 1, meanSquare, df: sharing[0]?.nativeDf ?? 0 }] : []
+  })
 }
 
 function evidence(own: readonly Preparation[], measurements: Measurements, natives: FindingDraft['evidence']): FindingDraft['evidence'] {
@@ -137,11 +150,11 @@ type Overall = { readonly agreement?: AccuracyDetail['agreement'] } & ({ readonl
 /** One value over all levels only where the levels agree; else it would average a dependence on the level away. */
 function overallOf(preparations: readonly Preparation[], levels: readonly AccuracyLevel[], input: AssessInput<AccuracyOptions>): Overall {
   if (preparations.length < 2) return { because: 'there are fewer than two results' }
-  if (levels.length < 2) return { overall: levelOf(undefined, preparations, input) }
+  if (levels.length < 2) return { overall: levelLine(undefined, preparations, input) }
   try {
     const { F, dfBetween, dfWithin, probability } = oneWay(levels.map((level) => preparations.filter((each) => each.level === level.level).map((each) => each.value)))
     const agreement = { F, df1: dfBetween, df2: dfWithin, probability, agree: probability >= 1 - input.confidence }
-    return agreement.agree ? { overall: levelOf(undefined, preparations, input), agreement } : { because: 'the levels differ by more than chance', agreement }
+    return agreement.agree ? { overall: levelLine(undefined, preparations, input), agreement } : { because: 'the levels differ by more than chance', agreement }
   } catch (error) {
     if (error instanceof RangeError) return { because: `the levels cannot be compared: ${error.message}` }
     throw error

@@ -2,7 +2,7 @@
 // occurring combination of the run fields; factors that always change together are named and never split.
 import type { AssessInput, AssessOutput } from '../../assess/assessment-part.ts'
 import type { FindingDraft, NotEvaluable } from '../../assess/finding.ts'
-import { type CensoredMeasurement, evidenceOf, type Measurement, type Measurements } from '../../assess/measurements.ts'
+import { type CensoredMeasurement, evidenceOf, fieldGap, type Measurement, type Measurements } from '../../assess/measurements.ts'
 import { diagnostic, type Diagnostic } from '../../diagnostics/diagnostic.ts'
 import { grubbs } from '../../statistics/outliers.ts'
 import { confoundedFields, designGaps } from './design.ts'
@@ -20,9 +20,9 @@ export function assessPrecision(input: AssessInput<PrecisionOptions>): AssessOut
   const fields = options.nested ?? options.runs ?? []
   const runOf = (each: Pick<Measurement, 'factors'>, among: readonly string[] = fields): string => among.map((field) => each.factors[field] ?? '').join(' · ')
   const diagnostics: Diagnostic[] = []
-  const absentField = fields.find((field) => !measurements.values.some((each) => each.factors[field] !== undefined))
-  if (absentField !== undefined && measurements.values.length > 0) {
-    return { detail: undefined, findings: [], notEvaluable: [], design: {}, diagnostics: [diagnostic('assess/missing-field', `\`${input.block.id}\` names the run field \`${absentField}\`, which dataset \`${options.data}\` does not map`, { place, actual: absentField, expected: Object.keys(measurements.values[0]?.factors ?? {}).join(', '), mend: `Add \`${absentField}:\` under \`columns:\`` })] }
+  const gap = fieldGap(input, measurements, fields)
+  if (gap !== undefined) {
+    return { detail: undefined, findings: [], notEvaluable: perLevel.map((metric) => ({ metric, because: 'a result does not tell its run' })), design: {}, diagnostics: [gap] }
   }
   const levels = [...new Set([...measurements.values, ...measurements.censored].map((each) => each.level))].sort((left, right) => (left ?? 0) - (right ?? 0))
   const done: PrecisionLevel[] = []
