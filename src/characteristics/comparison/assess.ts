@@ -36,7 +36,7 @@ export function assessComparison(input: AssessInput<ComparisonOptions>): AssessO
     conditions: [options.conditions.reference, ...others].map((condition) => conditionLine(found.readings, condition, input.confidence)),
     orderIsKnown: found.readings.every((each) => each.measurement.numbers['order'] !== undefined),
     readings: found.readings.map(({ order, value, condition }) => ({ order, value, condition })),
-    excluded: found.measurements.excluded.map((each) => ({ value: each.value, condition: each.factors[options.conditions.column] ?? '', exclusion: each.exclusion ?? 0 })),
+    excluded: found.excluded.map((each) => ({ value: each.value, condition: each.factors[options.conditions.column] ?? '', exclusion: each.exclusion ?? 0 })),
     effects: outcome.effects, besides: outcome.besides, blocks: outcome.blocks, ...(outcome.drift === undefined ? {} : { drift: outcome.drift }),
     equivalence: options.margin === undefined ? [] : equivalenceLines(outcome.effects, options.margin.value, alpha), spreads: options.design === 'pairs' ? [] : spreadLines(request),
   }
